@@ -144,5 +144,10 @@ export interface PassOffers {
   /** Sorted, disjoint. */
   readonly lost: readonly LostStretch[];
   /** Why it cannot be sold as a whole, with the part that can; `null` where it can. */
-  readonly refusal: { readonly word: string; readonly code: LostCode; readonly sentence: string; readonly remedy: string } | null;
+  readonly refusal: {
+    readonly word: string;
+    readonly code: LostCode;
+    readonly sentence: string;
+    readonly remedy: string;
+  } | null;
 }
