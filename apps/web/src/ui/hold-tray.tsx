@@ -1,0 +1,64 @@
+import { type ReactNode, useEffect, useState } from 'react';
+import { HoldOutline } from '../drawing/curves/hold-outline.js';
+import { formatCountdown } from './format.js';
+import classes from './hold-tray.module.css';
+
+/** Props of `HoldTray`. */
+export interface HoldTrayProps {
+  /** `Whimbrel 1 over Pico Verdal` */
+  readonly title: string;
+  /** `14:36:20 to 14:45:40, 9 min 20 s` */
+  readonly detail: string;
+  readonly endsMs: number;
+  readonly clock: () => number;
+  /** `€87.92` */
+  readonly price: string;
+  /** `price frozen, not yet charged` */
+  readonly priceNote: string;
+  /** Buttons; give them `classNames` of this tray by `TrayButton`. */
+  readonly children: ReactNode;
+}
+
+const SAY_AT_MS = 60_000;
+
+/** The dark tray at the foot of the page while something is held. The last minute is said aloud once. */
+export function HoldTray({ title, detail, endsMs, clock, price, priceNote, children }: HoldTrayProps) {
+  const [nowMs, setNowMs] = useState(clock);
+  useEffect(() => {
+    const timer = window.setInterval(() => setNowMs(clock()), 1000);
+    return () => window.clearInterval(timer);
+  }, [clock]);
+  const leftMs = endsMs - nowMs;
+  const isLastMinute = leftMs <= SAY_AT_MS && leftMs > 0;
+  return (
+    <section className={classes.tray} aria-label="Held by you">
+      <HoldOutline widthPx={38} colour="var(--sk-tray-brass)" />
+      <div className={classes.words}>
+        <strong>{title}</strong>
+        <div className={classes.second}>{detail}</div>
+      </div>
+      <div
+        className={classes.left}
+        role="timer"
+        aria-live="off"
+        aria-label={`${formatCountdown(leftMs)} left on your hold`}
+      >
+        {formatCountdown(leftMs)}
+      </div>
+      <div className={classes.note}>left on your hold, then it goes back on sale</div>
+      <div className="sk-hidden" role="status">
+        {isLastMinute ? `One minute left on your hold of ${title}` : ''}
+      </div>
+      <div className={classes.price}>
+        <strong>{price}</strong>
+        <div className={classes.second}>{priceNote}</div>
+      </div>
+      <div className={classes.acts}>{children}</div>
+    </section>
+  );
+}
+
+/** A button on the tray: `main` is brass, the other outlined. */
+export function TrayButton({ main, ...rest }: React.ComponentProps<'button'> & { readonly main?: boolean }) {
+  return <button type="button" {...rest} className={classes.button} data-main={main || undefined} />;
+}
