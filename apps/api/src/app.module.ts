@@ -1,0 +1,16 @@
+/** The application: the platform and one module for each feature. */
+import { type DynamicModule, Module } from '@nestjs/common';
+import type { ClockPort } from './platform/clock.js';
+import type { Config } from './platform/config.js';
+import { PlatformModule } from './platform/platform.module.js';
+import { SystemModule } from './system/system.module.js';
+
+@Module({})
+export class AppModule {
+  static forRoot(config: Config, clock: ClockPort): DynamicModule {
+    return {
+      module: AppModule,
+      imports: [PlatformModule.forRoot(config, clock), SystemModule],
+    };
+  }
+}

@@ -1,0 +1,4 @@
+/** What tests and the demo loader use of the server. */
+export { createApp } from './app.js';
+export { AdjustableClock, type ClockPort, systemClock } from './platform/clock.js';
+export { type Config, readConfig } from './platform/config.js';

@@ -1,0 +1,68 @@
+/** Nobody gets in unless the route's contract says so: deny by default. */
+import { type CanActivate, type ExecutionContext, Inject, Injectable } from '@nestjs/common';
+import { Reflector } from '@nestjs/core';
+import { can, type RouteContract } from '@skyberth/shared';
+import passport from 'passport';
+import { CONFIG, type Config } from './config.js';
+import { CONTRACT, type SkyberthRequest } from './contract.js';
+import { DomainError } from './domain-error.js';
+
+const SAFE_METHODS = new Set(['GET', 'HEAD', 'OPTIONS']);
+
+@Injectable()
+export class AccessGuard implements CanActivate {
+  constructor(
+    private readonly reflector: Reflector,
+    @Inject(CONFIG) private readonly config: Config,
+  ) {}
+
+  async canActivate(context: ExecutionContext): Promise<boolean> {
+    const contract = this.reflector.get<RouteContract | undefined>(CONTRACT, context.getHandler());
+    if (!contract) throw new DomainError('not-found', 'There is nothing at this address.');
+    const request = context.switchToHttp().getRequest<SkyberthRequest>();
+    this.refuseOtherSites(request);
+    const principal = await authenticate(request);
+    if (principal) request.principal = principal;
+    if (contract.access === 'public') return true;
+    if (!principal) throw new DomainError('not-signed-in', 'Sign in to go on.');
+    if (contract.access === 'signed-in') return true;
+    if (!can(principal, contract.access)) {
+      throw new DomainError(
+        'not-allowed',
+        `As ${principal.role} of this organisation you cannot do this. Ask a manager of your organisation.`,
+      );
+    }
+    return true;
+  }
+
+  /**
+   * Cookies travel with requests that another site makes a browser send; browsers name that site in Origin.
+   * Programs send none and carry no cookies of a person, so an absent Origin is let through.
+   */
+  private refuseOtherSites(request: SkyberthRequest): void {
+    if (SAFE_METHODS.has(request.method)) return;
+    const origin = request.headers.origin;
+    if (origin === undefined) return;
+    const host = request.headers.host;
+    const own =
+      origin === this.config.publicUrl ||
+      (host !== undefined && (origin === `http://${host}` || origin === `https://${host}`));
+    if (!own) throw new DomainError('cross-site', 'This action can only be started from Skyberth itself.');
+  }
+}
+
+type SignedIn = NonNullable<SkyberthRequest['principal']>;
+
+/** Runs the passport strategy; resolves to null where there is no valid access token. */
+function authenticate(request: SkyberthRequest): Promise<SignedIn | null> {
+  return new Promise((resolve, reject) => {
+    const done = (error: unknown, user: SignedIn | false | null | undefined) =>
+      error ? reject(error) : resolve(user || null);
+    const handler = passport.authenticate('jwt', { session: false }, done) as (
+      req: unknown,
+      res: unknown,
+      next: (error?: unknown) => void,
+    ) => void;
+    handler(request, undefined, (error) => (error ? reject(error) : resolve(null)));
+  });
+}

@@ -1,0 +1,54 @@
+/** Turns a route contract of `shared/` into a Nest handler: path, status, access and validated input. */
+import {
+  applyDecorators,
+  createParamDecorator,
+  type ExecutionContext,
+  Header,
+  HttpCode,
+  RequestMapping,
+  RequestMethod,
+  SetMetadata,
+} from '@nestjs/common';
+import { type BodyOf, type ParamsOf, type Principal, type QueryOf, type RouteContract } from '@skyberth/shared';
+import type { Request } from 'express';
+
+export const CONTRACT = 'skyberth:contract';
+
+const METHODS: Record<RouteContract['method'], RequestMethod> = {
+  GET: RequestMethod.GET,
+  POST: RequestMethod.POST,
+  PUT: RequestMethod.PUT,
+  PATCH: RequestMethod.PATCH,
+  DELETE: RequestMethod.DELETE,
+};
+
+/** Binds a controller method to its contract. A method without one is refused by the guard. */
+export const Handles = (contract: RouteContract): MethodDecorator =>
+  applyDecorators(
+    RequestMapping({ method: METHODS[contract.method], path: contract.path }),
+    HttpCode(contract.status ?? 200),
+    SetMetadata(CONTRACT, contract),
+    ...(contract.produces ? [Header('Content-Type', contract.produces)] : []),
+  );
+
+/** What a handler is given: parsed by the contract, with the caller beside it. */
+export interface HandlerInput<C extends RouteContract> {
+  readonly params: ParamsOf<C>;
+  readonly query: QueryOf<C>;
+  readonly body: BodyOf<C>;
+  /** The caller; on public routes null. */
+  readonly caller: C['access'] extends 'public' ? Principal | null : Principal;
+}
+
+/** The request with what guard and interceptor have put on it. */
+export interface SkyberthRequest extends Request {
+  principal?: Principal & { readonly familyId: string };
+  handlerInput?: { params: unknown; query: unknown; body: unknown };
+  rawBody?: Buffer;
+}
+
+/** The validated input of the route, as `HandlerInput<typeof routes.x>`. */
+export const Input = createParamDecorator((_data: unknown, context: ExecutionContext) => {
+  const request = context.switchToHttp().getRequest<SkyberthRequest>();
+  return { ...request.handlerInput, caller: request.principal ?? null };
+});

@@ -1,0 +1,16 @@
+/** What crosses the wire between the API and the page, and the tables both sides read. */
+
+export * from './booking-states.js';
+export * from './contracts/accounts.js';
+export * from './contracts/bookings.js';
+export * from './contracts/invoices.js';
+export * from './contracts/market.js';
+export * from './contracts/spacecraft.js';
+export * from './contracts/stations.js';
+export * from './contracts/system.js';
+export * from './errors.js';
+export * from './openapi.js';
+export * from './permissions.js';
+export * from './primitives.js';
+export * from './route.js';
+export * from './routes.js';

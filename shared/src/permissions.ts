@@ -1,0 +1,64 @@
+/**
+ * Who may do what: the one table that the API's guard, the pages and the tests read.
+ * A permission that names nobody for a kind of organisation is denied to it; there is no default.
+ */
+import { z } from 'zod';
+
+export const ORGANISATION_KINDS = ['operator', 'owner', 'staff'] as const;
+export const OrganisationKind = z.enum(ORGANISATION_KINDS);
+export type OrganisationKind = z.infer<typeof OrganisationKind>;
+
+export const ROLES = ['manager', 'member', 'viewer', 'finance', 'admin'] as const;
+export const Role = z.enum(ROLES);
+export type Role = z.infer<typeof Role>;
+
+/** Roles that exist in each kind of organisation; the database checks the same pairs. */
+export const ROLES_OF_KIND: Record<OrganisationKind, readonly Role[]> = {
+  operator: ['manager', 'member', 'viewer'],
+  owner: ['manager', 'member', 'viewer'],
+  staff: ['finance', 'admin'],
+};
+
+type Grant = Partial<Record<OrganisationKind, readonly Role[]>>;
+
+const ALL: readonly Role[] = ['manager', 'member', 'viewer'];
+const WORKERS: readonly Role[] = ['manager', 'member'];
+const MANAGERS: readonly Role[] = ['manager'];
+
+export const PERMISSIONS = {
+  'organisation.read': { operator: ALL, owner: ALL, staff: ['finance', 'admin'] },
+  'organisation.manage': { operator: MANAGERS, owner: MANAGERS },
+  'spacecraft.read': { operator: ALL },
+  'spacecraft.write': { operator: WORKERS },
+  'stations.read': { owner: ALL, staff: ['admin'] },
+  'stations.write': { owner: WORKERS },
+  'stations.approve': { staff: ['admin'] },
+  'clearances.read': { operator: ALL, owner: ALL, staff: ['admin'] },
+  'clearances.request': { operator: WORKERS },
+  'clearances.grant': { owner: WORKERS },
+  'clearances.check': { staff: ['admin'] },
+  'market.search': { operator: ALL },
+  'bookings.read': { operator: ALL, owner: ALL, staff: ['finance', 'admin'] },
+  'bookings.buy': { operator: WORKERS },
+  'bookings.decide': { owner: WORKERS },
+  'bookings.report': { owner: WORKERS },
+  'invoices.read': { operator: ALL, owner: ALL, staff: ['finance'] },
+  'ledger.read': { staff: ['finance'] },
+  'system.read': { staff: ['admin'] },
+} as const satisfies Record<string, Grant>;
+
+export type Permission = keyof typeof PERMISSIONS;
+
+/** The person who calls, in the organisation they act for. */
+export interface Principal {
+  readonly personId: string;
+  readonly organisationId: string;
+  readonly organisationKind: OrganisationKind;
+  readonly role: Role;
+}
+
+/** Whether the table lets this person, in this organisation, do that. */
+export function can(principal: Pick<Principal, 'organisationKind' | 'role'>, permission: Permission): boolean {
+  const grant: Grant = PERMISSIONS[permission];
+  return grant[principal.organisationKind]?.includes(principal.role) ?? false;
+}

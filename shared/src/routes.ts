@@ -1,0 +1,19 @@
+/** Every route of the API, by name. */
+import { accountRoutes } from './contracts/accounts.js';
+import { bookingRoutes } from './contracts/bookings.js';
+import { invoiceRoutes } from './contracts/invoices.js';
+import { marketRoutes } from './contracts/market.js';
+import { spacecraftRoutes } from './contracts/spacecraft.js';
+import { stationRoutes } from './contracts/stations.js';
+import { systemRoutes } from './contracts/system.js';
+
+export const routes = {
+  ...accountRoutes,
+  ...spacecraftRoutes,
+  ...stationRoutes,
+  ...marketRoutes,
+  ...bookingRoutes,
+  ...invoiceRoutes,
+  ...systemRoutes,
+} as const;
+export type RouteName = keyof typeof routes;
