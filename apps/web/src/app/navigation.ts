@@ -1,0 +1,42 @@
+/** Which pages stand in the head line, by the kind of organisation and the role. */
+import type { Membership } from '@skyberth/shared';
+import { paths } from '../lib/paths.js';
+
+export interface Page {
+  readonly label: string;
+  readonly to: string;
+  /** Name of the number in the home view that stands beside it. */
+  readonly count?: string;
+  readonly countNoun?: string;
+}
+
+const OPERATOR: readonly Page[] = [
+  { label: 'Find time', to: paths.findTime },
+  { label: 'Bookings', to: paths.bookings },
+  { label: 'Spacecraft', to: paths.spacecraft },
+  { label: 'Invoices', to: paths.invoices },
+];
+const OWNER: readonly Page[] = [
+  { label: 'Stations', to: paths.stations },
+  { label: 'Availability', to: paths.availability },
+  { label: 'Requests', to: paths.requests, count: 'requests', countNoun: 'requests wait for an answer' },
+  { label: 'Bookings', to: paths.bookings },
+  { label: 'Earnings', to: paths.invoices },
+];
+const FINANCE: readonly Page[] = [
+  { label: 'Ledger', to: paths.ledger },
+  { label: 'Invoices', to: paths.invoices },
+  { label: 'Bookings', to: paths.bookings },
+];
+const ADMIN: readonly Page[] = [
+  { label: 'Approvals', to: paths.approvals, count: 'approvals', countNoun: 'stations wait for approval' },
+  { label: 'Bookings', to: paths.bookings },
+  { label: 'System', to: paths.system },
+];
+
+/** The pages of this membership, the main one first. */
+export function pagesFor(active: Pick<Membership, 'organisationKind' | 'role'>): readonly Page[] {
+  if (active.organisationKind === 'operator') return OPERATOR;
+  if (active.organisationKind === 'owner') return OWNER;
+  return active.role === 'finance' ? FINANCE : ADMIN;
+}
