@@ -19,7 +19,11 @@ export function money(amountMinor: number, currency: string): Money {
 /** Throws `different currencies` unless both are the same; nothing is ever converted in silence. */
 export function requireSameCurrency(a: Money, b: Money): void {
   if (a.currency !== b.currency) {
-    throw new MoneyError('different currencies', `${a.currency} and ${b.currency} cannot be put together without a rate.`, { a: a.currency, b: b.currency });
+    throw new MoneyError(
+      'different currencies',
+      `${a.currency} and ${b.currency} cannot be put together without a rate.`,
+      { a: a.currency, b: b.currency },
+    );
   }
 }
 
@@ -36,7 +40,8 @@ export function subtractMoney(a: Money, b: Money): Money {
 export const negateMoney = (a: Money): Money => money(-a.amountMinor, a.currency);
 
 /** Sum in the named currency; zero of it for an empty list. */
-export const sumMoney = (amounts: readonly Money[], currency: string): Money => amounts.reduce(addMoney, money(0, currency));
+export const sumMoney = (amounts: readonly Money[], currency: string): Money =>
+  amounts.reduce(addMoney, money(0, currency));
 
 /** Negative, zero or positive as `a` is less than, equal to or more than `b`. */
 export function compareMoney(a: Money, b: Money): number {
@@ -45,10 +50,12 @@ export function compareMoney(a: Money, b: Money): number {
 }
 
 /** A share by basis points (2000 is 20 %), halves away from zero. */
-export const shareOfMoney = (a: Money, basisPoints: number): Money => money(percentOf(a.amountMinor, basisPoints), a.currency);
+export const shareOfMoney = (a: Money, basisPoints: number): Money =>
+  money(percentOf(a.amountMinor, basisPoints), a.currency);
 
 /** Sums whole minor units and refuses to pass what is kept exactly, even on the way. */
-export const sumMinor = (amounts: readonly number[]): number => amounts.reduce((sum, each) => checkedWhole(sum + checkedWhole(each, 'An amount'), 'A sum'), 0);
+export const sumMinor = (amounts: readonly number[]): number =>
+  amounts.reduce((sum, each) => checkedWhole(sum + checkedWhole(each, 'An amount'), 'A sum'), 0);
 
 /**
  * Splits an amount in proportion to `weights` (whole, none negative, not all zero) without losing or making a minor unit.
@@ -58,7 +65,11 @@ export const sumMinor = (amounts: readonly number[]): number => amounts.reduce((
 export function allocateMinor(amountMinor: number, weights: readonly number[]): number[] {
   const total = sumMinor(weights);
   if (total <= 0 || weights.some((weight) => weight < 0)) {
-    throw new MoneyError('bad allocation', `Weights must be whole, none below zero and not all zero, but are ${weights.join(', ') || 'none'}.`, { weights });
+    throw new MoneyError(
+      'bad allocation',
+      `Weights must be whole, none below zero and not all zero, but are ${weights.join(', ') || 'none'}.`,
+      { weights },
+    );
   }
   const size = BigInt(Math.abs(checkedWhole(amountMinor, 'The amount')));
   const shares = weights.map((weight, index) => {

@@ -22,7 +22,9 @@ const WITHOUT_MINOR_UNIT = 'XAG XAU XBA XBB XBC XBD XDR XPD XPT XSU XTS XUA XXX'
 export type CurrencyExponent = 0 | 2 | 3 | 4;
 
 const exponents = new Map<string, CurrencyExponent>(
-  ([0, 2, 3, 4] as const).flatMap((exponent) => CODES_BY_EXPONENT[exponent].split(' ').map((code) => [code, exponent] as const)),
+  ([0, 2, 3, 4] as const).flatMap((exponent) =>
+    CODES_BY_EXPONENT[exponent].split(' ').map((code) => [code, exponent] as const),
+  ),
 );
 
 /** Every code that amounts can be kept in, in alphabetical order. */
@@ -39,7 +41,11 @@ export function currencyExponent(code: string): CurrencyExponent {
   const exponent = exponents.get(code);
   if (exponent !== undefined) return exponent;
   if (WITHOUT_MINOR_UNIT.includes(code)) {
-    throw new MoneyError('currency without minor units', `${code} has no minor unit in ISO 4217, so no amount can be kept in it.`, { code });
+    throw new MoneyError(
+      'currency without minor units',
+      `${code} has no minor unit in ISO 4217, so no amount can be kept in it.`,
+      { code },
+    );
   }
   throw new MoneyError('unknown currency', `“${code}” is not a currency code of ISO 4217.`, { code });
 }

@@ -34,7 +34,9 @@ export function toDecimalText(amount: Money): string {
 }
 
 const CODE_OR_SIGN = '[A-Z]{3}|€|£';
-const AMOUNT_TEXT = new RegExp(`^([-\u2212]?)(?:(${CODE_OR_SIGN}) ?)?([-\u2212]?)(\\d(?:[\\d ]*\\d)?)(?:\\.(\\d+))?(?: ?(${CODE_OR_SIGN}))?$`);
+const AMOUNT_TEXT = new RegExp(
+  `^([-\u2212]?)(?:(${CODE_OR_SIGN}) ?)?([-\u2212]?)(\\d(?:[\\d ]*\\d)?)(?:\\.(\\d+))?(?: ?(${CODE_OR_SIGN}))?$`,
+);
 
 /**
  * Reads what `formatMoney` writes and what people type: `€12.50`, `EUR 1 234.5`, `500 JPY`, `-3 GBP`; with
@@ -56,8 +58,10 @@ export function parseMoney(text: string, assumedCurrency?: string): Money {
   if (named === undefined) return refuse('its currency is missing.');
   const currency = Object.keys(SIGNS).find((code) => SIGNS[code] === named) ?? named;
   const exponent = currencyExponent(currency);
-  if (wholePart.includes(' ') && !/^\d{1,3}( \d{3})+$/.test(wholePart)) return refuse('thousands stand in groups of three.');
-  if (fraction.length > exponent) return refuse(`${currency} has ${exponent === 0 ? 'no decimals' : `${exponent} decimals`}.`);
+  if (wholePart.includes(' ') && !/^\d{1,3}( \d{3})+$/.test(wholePart))
+    return refuse('thousands stand in groups of three.');
+  if (fraction.length > exponent)
+    return refuse(`${currency} has ${exponent === 0 ? 'no decimals' : `${exponent} decimals`}.`);
   const size = Number(wholePart.replaceAll(' ', '') + fraction.padEnd(exponent, '0'));
   return money(signBefore + signInside === '' ? size : -size, currency);
 }
@@ -65,6 +69,8 @@ export function parseMoney(text: string, assumedCurrency?: string): Money {
 /** A rate in basis points as people write it: `25.5 %`, `8 %`. */
 export function formatRate(basisPoints: number): string {
   const size = Math.abs(basisPoints);
-  const decimals = String(size % 100).padStart(2, '0').replace(/0+$/, '');
+  const decimals = String(size % 100)
+    .padStart(2, '0')
+    .replace(/0+$/, '');
   return `${basisPoints < 0 ? MINUS : ''}${Math.trunc(size / 100)}${decimals === '' ? '' : `.${decimals}`}\u00a0%`;
 }

@@ -6,9 +6,12 @@ import { MoneyError } from './money-error.js';
 
 /** Refuses anything that is not a whole number that arithmetic keeps exact. `what` stands in the sentence. */
 export function checkedWhole(value: number, what: string): number {
-  if (!Number.isInteger(value)) throw new MoneyError('not whole', `${what} must be a whole number, but is ${value}.`, { value });
+  if (!Number.isInteger(value))
+    throw new MoneyError('not whole', `${what} must be a whole number, but is ${value}.`, { value });
   if (!Number.isSafeInteger(value)) {
-    throw new MoneyError('too large', `${what} is ${value}; at most ${Number.MAX_SAFE_INTEGER} is kept exactly.`, { value });
+    throw new MoneyError('too large', `${what} is ${value}; at most ${Number.MAX_SAFE_INTEGER} is kept exactly.`, {
+      value,
+    });
   }
   return value === 0 ? 0 : value;
 }
@@ -29,16 +32,19 @@ function divide(numerator: number | bigint, denominator: number | bigint, tieGoe
 }
 
 /** Nearest whole number; halves away from zero (2.5 to 3, -2.5 to -3). The rule for prices, VAT, fees and refunds. */
-export const divideHalfUp = (numerator: number | bigint, denominator: number | bigint): number => divide(numerator, denominator, () => true);
+export const divideHalfUp = (numerator: number | bigint, denominator: number | bigint): number =>
+  divide(numerator, denominator, () => true);
 
 /** Nearest whole number; halves to the even neighbour (2.5 to 2, 3.5 to 4). For averages and reports over many amounts. */
-export const divideHalfEven = (numerator: number | bigint, denominator: number | bigint): number => divide(numerator, denominator, (odd) => odd);
+export const divideHalfEven = (numerator: number | bigint, denominator: number | bigint): number =>
+  divide(numerator, denominator, (odd) => odd);
 
 /** One hundredth of one per cent is the unit of every rate here: 2000 basis points are 20 %. */
 export const BASIS_POINTS_PER_WHOLE = 10_000;
 
 /** A share of an amount in minor units, by basis points, halves away from zero. */
 export function percentOf(amountMinor: number, basisPoints: number): number {
-  const product = BigInt(checkedWhole(amountMinor, 'The amount')) * BigInt(checkedWhole(basisPoints, 'The rate in basis points'));
+  const product =
+    BigInt(checkedWhole(amountMinor, 'The amount')) * BigInt(checkedWhole(basisPoints, 'The rate in basis points'));
   return divideHalfUp(product, BigInt(BASIS_POINTS_PER_WHOLE));
 }

@@ -1,5 +1,4 @@
 /** What an offer is made from, and what comes out: the time that can be sold and, for every other minute, one reason. */
-import type { AosHighestLos } from '@skyberth/orbit';
 import type { Interval } from '../interval.js';
 
 /** Why time cannot be sold. The order here is the order in which reasons claim a minute: the first one that fits. */
@@ -34,7 +33,8 @@ export interface OfferPass {
   readonly losMs: number;
   readonly clippedStart: boolean;
   readonly clippedEnd: boolean;
-  readonly azimuthDeg: AosHighestLos<number>;
+  /** At AOS, highest point and LOS, from north through east. */
+  readonly azimuthDeg: readonly [aos: number, highest: number, los: number];
   /** Azimuth at any instant of the pass; without it, straight between AOS, highest point and LOS the shorter way round. */
   readonly azimuthAtDeg?: ((timeMs: number) => number) | undefined;
   /** Stretches the geometry takes away (below the lowest elevation for this use, travel limits, keyhole), in words. */

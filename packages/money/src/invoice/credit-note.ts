@@ -21,13 +21,20 @@ export interface CreditNoteInput {
  */
 export function buildCreditNote({ invoice, creditNetMinor, creditedBeforeMinor }: CreditNoteInput): InvoiceAmounts {
   if (creditNetMinor.length !== invoice.lines.length || creditedBeforeMinor.length !== invoice.lines.length) {
-    throw new MoneyError('bad invoice', `The invoice has ${invoice.lines.length} lines; the credit names ${creditNetMinor.length}.`);
+    throw new MoneyError(
+      'bad invoice',
+      `The invoice has ${invoice.lines.length} lines; the credit names ${creditNetMinor.length}.`,
+    );
   }
   invoice.lines.forEach((line, index) => {
     requireCreditable(line, creditNetMinor[index] as number, creditedBeforeMinor[index] as number);
   });
   const lineIndexesOf = (total: VatTotal): number[] =>
-    invoice.lines.flatMap((line, index) => (line.vatKind === total.vatKind && line.rateBasisPoints === total.rateBasisPoints ? [index] : []));
+    invoice.lines.flatMap((line, index) =>
+      line.vatKind === total.vatKind && line.rateBasisPoints === total.rateBasisPoints && line.vatText === total.text
+        ? [index]
+        : [],
+    );
   const vatOfLine = new Map<number, number>();
   const vatTotals: VatTotal[] = [];
   for (const total of invoice.vatTotals) {
@@ -40,11 +47,21 @@ export function buildCreditNote({ invoice, creditNetMinor, creditedBeforeMinor }
   if (vatTotals.length === 0) throw new MoneyError('bad invoice', 'A credit note must credit something.');
   const lines = invoice.lines.flatMap((line, index): InvoiceLine[] => {
     const credit = creditNetMinor[index] as number;
-    return credit === 0 ? [] : [{ ...line, discountMinor: 0, netMinor: -credit, vatMinor: vatOfLine.get(index) as number }];
+    return credit === 0
+      ? []
+      : [{ ...line, discountMinor: 0, netMinor: -credit, vatMinor: vatOfLine.get(index) as number }];
   });
   const netMinor = sumMinor(vatTotals.map((total) => total.netMinor));
   const vatMinor = sumMinor(vatTotals.map((total) => total.vatMinor));
-  return { currency: invoice.currency, rounding: invoice.rounding, lines, vatTotals, netMinor, vatMinor, grossMinor: netMinor + vatMinor };
+  return {
+    currency: invoice.currency,
+    rounding: invoice.rounding,
+    lines,
+    vatTotals,
+    netMinor,
+    vatMinor,
+    grossMinor: netMinor + vatMinor,
+  };
 }
 
 /** A share of each line, by basis points, halves away from zero; what a part refund credits. */
@@ -54,12 +71,26 @@ export function creditShare(invoice: InvoiceAmounts, basisPoints: number): numbe
 
 function requireCreditable(line: InvoiceLine, credit: number, before: number): void {
   const left = checkedWhole(line.netMinor, 'A line') - checkedWhole(before, 'A credit');
-  if (checkedWhole(credit, 'A credit') < 0 || before < 0 || line.netMinor < 0) throw new MoneyError('bad invoice', `“${line.description}” cannot be credited by ${credit}: only amounts above zero are credited.`);
-  if (credit > left) throw new MoneyError('bad invoice', `“${line.description}” has ${left} minor units left to credit, not ${credit}.`, { left, credit });
+  if (checkedWhole(credit, 'A credit') < 0 || before < 0 || line.netMinor < 0)
+    throw new MoneyError(
+      'bad invoice',
+      `“${line.description}” cannot be credited by ${credit}: only amounts above zero are credited.`,
+    );
+  if (credit > left)
+    throw new MoneyError(
+      'bad invoice',
+      `“${line.description}” has ${left} minor units left to credit, not ${credit}.`,
+      { left, credit },
+    );
 }
 
 /** VAT is taken on what was left before and after, so the steps telescope to the VAT of the whole. */
-function creditVat(invoice: InvoiceAmounts, indexes: readonly number[], credit: readonly number[], before: readonly number[]): number[] {
+function creditVat(
+  invoice: InvoiceAmounts,
+  indexes: readonly number[],
+  credit: readonly number[],
+  before: readonly number[],
+): number[] {
   const rate = invoice.lines[indexes[0] as number]?.rateBasisPoints ?? 0;
   const netOf = (index: number) => (invoice.lines[index] as InvoiceLine).netMinor;
   const onLine = (index: number): number => {

@@ -33,6 +33,8 @@ export interface InvoiceLine {
   readonly netMinor: number;
   readonly rateBasisPoints: number;
   readonly vatKind: VatKind;
+  /** Words that the treatment of this line puts on the invoice. */
+  readonly vatText: string | null;
   /** Its part of the VAT; the parts add up to the invoice's VAT under both rules. */
   readonly vatMinor: number;
 }
@@ -82,7 +84,13 @@ export function buildInvoice(input: {
     members.forEach((index, place) => {
       vatOfLine[index] = vats[place] as number;
     });
-    return { vatKind: treatment.kind, rateBasisPoints: treatment.rateBasisPoints, netMinor: sumMinor(nets), vatMinor: sumMinor(vats), text: treatment.invoiceText };
+    return {
+      vatKind: treatment.kind,
+      rateBasisPoints: treatment.rateBasisPoints,
+      netMinor: sumMinor(nets),
+      vatMinor: sumMinor(vats),
+      text: treatment.invoiceText,
+    };
   });
   const lines = input.lines.map((line, index): InvoiceLine => {
     const treatment = line.treatment ?? input.treatment;
@@ -94,12 +102,21 @@ export function buildInvoice(input: {
       netMinor: line.netMinor,
       rateBasisPoints: treatment.rateBasisPoints,
       vatKind: treatment.kind,
+      vatText: treatment.invoiceText,
       vatMinor: vatOfLine[index] as number,
     };
   });
   const netMinor = sumMinor(lines.map((line) => line.netMinor));
   const vatMinor = sumMinor(vatTotals.map((total) => total.vatMinor));
-  return { currency: input.currency, rounding, lines, vatTotals, netMinor, vatMinor, grossMinor: sumMinor([netMinor, vatMinor]) };
+  return {
+    currency: input.currency,
+    rounding,
+    lines,
+    vatTotals,
+    netMinor,
+    vatMinor,
+    grossMinor: sumMinor([netMinor, vatMinor]),
+  };
 }
 
 /** VAT of lines at one rate, in their order, adding up to what the rule says for the group. */
@@ -108,6 +125,9 @@ function vatOfGroup(nets: readonly number[], rateBasisPoints: number, rounding: 
   if (rounding === 'line') return each;
   const difference = percentOf(sumMinor(nets), rateBasisPoints) - sumMinor(each);
   if (difference === 0) return each;
-  const shares = allocateMinor(difference, nets.map((net) => Math.max(1, Math.abs(net))));
+  const shares = allocateMinor(
+    difference,
+    nets.map((net) => Math.max(1, Math.abs(net))),
+  );
   return each.map((vat, index) => vat + (shares[index] as number));
 }

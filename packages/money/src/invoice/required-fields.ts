@@ -41,27 +41,81 @@ export function missingInvoiceFields(invoice: InvoiceDocument): MissingField[] {
   const checks: readonly (readonly [missing: boolean, rule: string, field: string, sentence: string])[] = [
     [!Number.isFinite(invoice.issuedMs), 'Art. 226(1)', 'issuedMs', 'The date of issue is missing.'],
     [invoice.number.trim() === '', 'Art. 226(2)', 'number', 'The sequential number is missing.'],
-    [(kinds.has('domestic') || kinds.has('reverse charge')) && blank(supplier.vatNumber), 'Art. 226(3)', 'supplier.vatNumber', 'The supplier’s VAT number is missing.'],
-    [kinds.has('reverse charge') && !validVatNumber(customer.vatNumber), 'Art. 226(4)', 'customer.vatNumber', 'The customer owes the tax, so a valid VAT number of the customer is needed.'],
+    [
+      (kinds.has('domestic') || kinds.has('reverse charge')) && blank(supplier.vatNumber),
+      'Art. 226(3)',
+      'supplier.vatNumber',
+      'The supplier’s VAT number is missing.',
+    ],
+    [
+      kinds.has('reverse charge') && !validVatNumber(customer.vatNumber),
+      'Art. 226(4)',
+      'customer.vatNumber',
+      'The customer owes the tax, so a valid VAT number of the customer is needed.',
+    ],
     [!hasAddress(supplier), 'Art. 226(5)', 'supplier', 'The supplier’s full name and address are missing.'],
     [!hasAddress(customer), 'Art. 226(5)', 'customer', 'The customer’s full name and address are missing.'],
-    [amounts.lines.some((line) => line.description.trim() === '' || line.quantity.trim() === ''), 'Art. 226(6)', 'lines', 'A line does not say what was supplied and how much.'],
+    [
+      amounts.lines.some((line) => line.description.trim() === '' || line.quantity.trim() === ''),
+      'Art. 226(6)',
+      'lines',
+      'A line does not say what was supplied and how much.',
+    ],
     [!Number.isFinite(invoice.suppliedMs), 'Art. 226(7)', 'suppliedMs', 'The date of supply is missing.'],
-    [amounts.vatTotals.length === 0, 'Art. 226(8)', 'vatTotals', 'The taxable amount for each rate or exemption is missing.'],
-    [kinds.has('domestic') && amounts.vatTotals.some((total) => total.vatKind === 'domestic' && total.rateBasisPoints <= 0), 'Art. 226(9)', 'rateBasisPoints', 'The VAT rate applied is missing.'],
-    [amounts.vatMinor !== amounts.vatTotals.reduce((sum, total) => sum + total.vatMinor, 0), 'Art. 226(10)', 'vatMinor', 'The VAT payable does not add up.'],
-    [kinds.has('exempt') && lacksText(invoice, 'exempt'), 'Art. 226(11)', 'texts', 'The ground of the exemption is not stated.'],
-    [kinds.has('reverse charge') && !invoice.texts.some((text) => /reverse charge/i.test(text)), 'Art. 226(11a)', 'texts', 'The words “Reverse charge” are missing.'],
-    [invoice.kind === 'self-billed statement' && !invoice.texts.some((text) => /self-billing/i.test(text)), 'Art. 226(10a)', 'texts', 'The word “Self-billing” is missing.'],
-    [invoice.kind === 'credit note' && blank(invoice.changesNumber), 'Art. 219', 'changesNumber', 'A credit note must refer to the invoice that it changes.'],
+    [
+      amounts.vatTotals.length === 0,
+      'Art. 226(8)',
+      'vatTotals',
+      'The taxable amount for each rate or exemption is missing.',
+    ],
+    [
+      kinds.has('domestic') &&
+        amounts.vatTotals.some((total) => total.vatKind === 'domestic' && total.rateBasisPoints <= 0),
+      'Art. 226(9)',
+      'rateBasisPoints',
+      'The VAT rate applied is missing.',
+    ],
+    [
+      amounts.vatMinor !== amounts.vatTotals.reduce((sum, total) => sum + total.vatMinor, 0),
+      'Art. 226(10)',
+      'vatMinor',
+      'The VAT payable does not add up.',
+    ],
+    [
+      kinds.has('exempt') && lacksText(invoice, 'exempt'),
+      'Art. 226(11)',
+      'texts',
+      'The ground of the exemption is not stated.',
+    ],
+    [
+      kinds.has('reverse charge') && !invoice.texts.some((text) => /reverse charge/i.test(text)),
+      'Art. 226(11a)',
+      'texts',
+      'The words “Reverse charge” are missing.',
+    ],
+    [
+      invoice.kind === 'self-billed statement' && !invoice.texts.some((text) => /self-billing/i.test(text)),
+      'Art. 226(10a)',
+      'texts',
+      'The word “Self-billing” is missing.',
+    ],
+    [
+      invoice.kind === 'credit note' && blank(invoice.changesNumber),
+      'Art. 219',
+      'changesNumber',
+      'A credit note must refer to the invoice that it changes.',
+    ],
   ];
   return checks.filter(([missing]) => missing).map(([, rule, field, sentence]) => ({ rule, field, sentence }));
 }
 
 const blank = (text: string | null): boolean => text === null || text.trim() === '';
-const hasAddress = (party: InvoiceParty): boolean => !blank(party.name) && !blank(party.country) && party.addressLines.some((line) => !blank(line));
+const hasAddress = (party: InvoiceParty): boolean =>
+  !blank(party.name) && !blank(party.country) && party.addressLines.some((line) => !blank(line));
 const validVatNumber = (text: string | null): boolean => text !== null && checkVatNumber(text).ok;
 
 function lacksText(invoice: InvoiceDocument, kind: string): boolean {
-  return invoice.amounts.vatTotals.some((total) => total.vatKind === kind && (blank(total.text) || !invoice.texts.includes(total.text ?? '')));
+  return invoice.amounts.vatTotals.some(
+    (total) => total.vatKind === kind && (blank(total.text) || !invoice.texts.includes(total.text ?? '')),
+  );
 }

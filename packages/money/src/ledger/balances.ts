@@ -11,7 +11,8 @@ export interface Balance {
   readonly amountMinor: number;
 }
 
-const keyOf = (account: AccountName, organisationId: string | null, currency: string): string => `${currency}|${account}|${organisationId ?? ''}`;
+const keyOf = (account: AccountName, organisationId: string | null, currency: string): string =>
+  `${currency}|${account}|${organisationId ?? ''}`;
 
 /** One balance for each account, organisation and currency that was ever posted to, zero ones included, sorted. */
 export function balancesOf(entries: Iterable<JournalEntry>): Balance[] {
@@ -20,14 +21,25 @@ export function balancesOf(entries: Iterable<JournalEntry>): Balance[] {
     for (const { account, organisationId, amountMinor } of entry.postings) {
       const key = keyOf(account, organisationId, entry.currency);
       const before = sums.get(key)?.amountMinor ?? 0;
-      sums.set(key, { account, organisationId, currency: entry.currency, amountMinor: checkedWhole(before + amountMinor, 'A balance') });
+      sums.set(key, {
+        account,
+        organisationId,
+        currency: entry.currency,
+        amountMinor: checkedWhole(before + amountMinor, 'A balance'),
+      });
     }
   }
   return [...sums.entries()].sort(([a], [b]) => (a < b ? -1 : 1)).map(([, balance]) => balance);
 }
 
 export interface LedgerFault {
-  readonly kind: 'unbalanced entry' | 'repeated cause' | 'unbalanced currency' | 'owner owes' | 'wrong side' | 'provider differs';
+  readonly kind:
+    | 'unbalanced entry'
+    | 'repeated cause'
+    | 'unbalanced currency'
+    | 'owner owes'
+    | 'wrong side'
+    | 'provider differs';
   readonly sentence: string;
 }
 
@@ -41,14 +53,22 @@ const NEVER_DEBIT: readonly AccountName[] = ['refunds', 'dispute reserve', 'payo
  */
 export function checkLedger(
   entries: readonly JournalEntry[],
-  known: { readonly providerBalanceMinor?: Readonly<Record<string, number>>; readonly ownersInDebtWithCause?: ReadonlySet<string> } = {},
+  known: {
+    readonly providerBalanceMinor?: Readonly<Record<string, number>>;
+    readonly ownersInDebtWithCause?: ReadonlySet<string>;
+  } = {},
 ): LedgerFault[] {
   const faults: LedgerFault[] = [];
   const causes = new Set<string>();
   for (const entry of entries) {
     const sum = entry.postings.reduce((total, posting) => total + posting.amountMinor, 0);
-    if (sum !== 0) faults.push({ kind: 'unbalanced entry', sentence: `The entry “${entry.causeKey}” is out of balance by ${sum} minor units of ${entry.currency}.` });
-    if (causes.has(entry.causeKey)) faults.push({ kind: 'repeated cause', sentence: `The cause “${entry.causeKey}” was written more than once.` });
+    if (sum !== 0)
+      faults.push({
+        kind: 'unbalanced entry',
+        sentence: `The entry “${entry.causeKey}” is out of balance by ${sum} minor units of ${entry.currency}.`,
+      });
+    if (causes.has(entry.causeKey))
+      faults.push({ kind: 'repeated cause', sentence: `The cause “${entry.causeKey}” was written more than once.` });
     causes.add(entry.causeKey);
   }
   const balances = balancesOf(entries);
@@ -58,11 +78,21 @@ export function checkLedger(
     faults.push(...sideFaults(balance, known.ownersInDebtWithCause));
   }
   for (const [currency, sum] of perCurrency) {
-    if (sum !== 0) faults.push({ kind: 'unbalanced currency', sentence: `All accounts in ${currency} together are out of balance by ${sum} minor units.` });
+    if (sum !== 0)
+      faults.push({
+        kind: 'unbalanced currency',
+        sentence: `All accounts in ${currency} together are out of balance by ${sum} minor units.`,
+      });
   }
   for (const [currency, providerMinor] of Object.entries(known.providerBalanceMinor ?? {})) {
-    const ours = balances.find((balance) => balance.account === 'provider clearing' && balance.currency === currency)?.amountMinor ?? 0;
-    if (ours !== providerMinor) faults.push({ kind: 'provider differs', sentence: `The provider holds ${providerMinor} minor units of ${currency}, the ledger says ${ours}; the difference is ${providerMinor - ours}.` });
+    const ours =
+      balances.find((balance) => balance.account === 'provider clearing' && balance.currency === currency)
+        ?.amountMinor ?? 0;
+    if (ours !== providerMinor)
+      faults.push({
+        kind: 'provider differs',
+        sentence: `The provider holds ${providerMinor} minor units of ${currency}, the ledger says ${ours}; the difference is ${providerMinor - ours}.`,
+      });
   }
   return faults;
 }
@@ -71,10 +101,20 @@ function sideFaults(balance: Balance, ownersInDebtWithCause: ReadonlySet<string>
   if (balance.amountMinor <= 0) return [];
   const whose = balance.organisationId ?? '';
   if (NEVER_DEBIT.includes(balance.account)) {
-    return [{ kind: 'wrong side', sentence: `“${balance.account}” of ${whose} stands ${balance.amountMinor} minor units of ${balance.currency} beyond what was set aside.` }];
+    return [
+      {
+        kind: 'wrong side',
+        sentence: `“${balance.account}” of ${whose} stands ${balance.amountMinor} minor units of ${balance.currency} beyond what was set aside.`,
+      },
+    ];
   }
   if (balance.account === 'owner payable' && !ownersInDebtWithCause.has(whose)) {
-    return [{ kind: 'owner owes', sentence: `The owner ${whose} owes ${balance.amountMinor} minor units of ${balance.currency} and no cause is known.` }];
+    return [
+      {
+        kind: 'owner owes',
+        sentence: `The owner ${whose} owes ${balance.amountMinor} minor units of ${balance.currency} and no cause is known.`,
+      },
+    ];
   }
   return [];
 }

@@ -5,7 +5,8 @@ import { MoneyError } from '../money-error.js';
 import { percentOf } from '../rounding.js';
 
 /** The marketplace's fee on one contact: basis points of its net, halves away from zero; contacts are rounded one by one. */
-export const contactFeeMinor = (netMinor: number, feeBasisPoints: number): number => percentOf(netMinor, feeBasisPoints);
+export const contactFeeMinor = (netMinor: number, feeBasisPoints: number): number =>
+  percentOf(netMinor, feeBasisPoints);
 
 /** One contact as the ledger has it; every amount is zero or more. */
 export interface PayoutContact {
@@ -51,13 +52,18 @@ export function buildPayout(input: PayoutInput): PayoutStatement {
   currencyExponent(input.currency);
   const seen = new Set<string>();
   for (const contact of input.contacts) {
-    if (seen.has(contact.bookingId)) throw new MoneyError('bad payout', `The contact ${contact.bookingId} stands twice in the statement of ${input.ownerId}.`);
+    if (seen.has(contact.bookingId))
+      throw new MoneyError(
+        'bad payout',
+        `The contact ${contact.bookingId} stands twice in the statement of ${input.ownerId}.`,
+      );
     seen.add(contact.bookingId);
     if (Math.min(contact.settledMinor, contact.feeMinor, contact.refundMinor, contact.reserveMinor) < 0) {
       throw new MoneyError('bad payout', `The contact ${contact.bookingId} has an amount below zero.`, { contact });
     }
   }
-  if (input.adjustments.some((adjustment) => adjustment.reason.trim() === '')) throw new MoneyError('bad payout', 'An adjustment needs a reason.');
+  if (input.adjustments.some((adjustment) => adjustment.reason.trim() === ''))
+    throw new MoneyError('bad payout', 'An adjustment needs a reason.');
   const settledMinor = sumMinor(input.contacts.map((contact) => contact.settledMinor));
   const feeMinor = sumMinor(input.contacts.map((contact) => contact.feeMinor));
   const refundMinor = sumMinor(input.contacts.map((contact) => contact.refundMinor));
@@ -79,9 +85,15 @@ export function buildPayout(input: PayoutInput): PayoutStatement {
 }
 
 function stateOf(toPayMinor: number, input: PayoutInput): { state: PayoutState; sentence: string } {
-  if (toPayMinor <= 0) return { state: 'nothing due', sentence: toPayMinor === 0 ? 'Nothing is due.' : 'The owner owes this amount; it is carried over to the next run.' };
+  if (toPayMinor <= 0)
+    return {
+      state: 'nothing due',
+      sentence:
+        toPayMinor === 0 ? 'Nothing is due.' : 'The owner owes this amount; it is carried over to the next run.',
+    };
   if (input.heldBack !== null) return { state: 'held back', sentence: `Held back: ${input.heldBack}.` };
-  if (toPayMinor < input.minimumMinor) return { state: 'below minimum', sentence: "Below the owner's own minimum; it stays for the next run." };
+  if (toPayMinor < input.minimumMinor)
+    return { state: 'below minimum', sentence: "Below the owner's own minimum; it stays for the next run." };
   return { state: 'ready', sentence: 'Ready to be sent.' };
 }
 
@@ -108,8 +120,13 @@ export interface PayoutRunTotals {
 export function payoutRunTotals(statements: readonly PayoutStatement[], currency: string): PayoutRunTotals {
   const owners = new Set<string>();
   for (const statement of statements) {
-    if (statement.currency !== currency) throw new MoneyError('different currencies', `A run in ${currency} cannot hold a statement in ${statement.currency}.`);
-    if (owners.has(statement.ownerId)) throw new MoneyError('bad payout', `The owner ${statement.ownerId} stands twice in the run.`);
+    if (statement.currency !== currency)
+      throw new MoneyError(
+        'different currencies',
+        `A run in ${currency} cannot hold a statement in ${statement.currency}.`,
+      );
+    if (owners.has(statement.ownerId))
+      throw new MoneyError('bad payout', `The owner ${statement.ownerId} stands twice in the run.`);
     owners.add(statement.ownerId);
   }
   const total = (pick: (statement: PayoutStatement) => number): number => sumMinor(statements.map(pick));

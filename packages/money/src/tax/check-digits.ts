@@ -30,7 +30,9 @@ export function iso7064Mod11Mod10(text: string): boolean {
 
 function austria(number: string): boolean {
   const digits = digitsOf(number.slice(1));
-  const sum = digits.slice(0, 7).reduce((total, digit, index) => total + (index % 2 === 0 ? digit : digit * 2 - (digit > 4 ? 9 : 0)), 0);
+  const sum = digits
+    .slice(0, 7)
+    .reduce((total, digit, index) => total + (index % 2 === 0 ? digit : digit * 2 - (digit > 4 ? 9 : 0)), 0);
   return (10 - ((sum + 4) % 10)) % 10 === digits[7];
 }
 

@@ -39,19 +39,37 @@ export const REVERSE_CHARGE_TEXT = 'Reverse charge';
 const none = { rateBasisPoints: 0, customerVatNumberRequired: false, caution: null } as const;
 
 /** Decides for a service supplied on the UTC day of `dateMs`. Throws `no rate` where a rate is needed and not kept. */
-export function vatTreatment({ supplier, customer, dateMs }: { readonly supplier: TaxSupplier; readonly customer: TaxParty; readonly dateMs: number }): VatTreatment {
+export function vatTreatment({
+  supplier,
+  customer,
+  dateMs,
+}: {
+  readonly supplier: TaxSupplier;
+  readonly customer: TaxParty;
+  readonly dateMs: number;
+}): VatTreatment {
   const supplierInEu = isEuCountry(supplier.country);
   const customerInEu = isEuCountry(customer.country);
   if (supplier.exemption !== undefined) {
-    return { ...none, kind: 'exempt', taxCountry: supplierInEu ? supplier.country : null, invoiceText: supplier.exemption };
+    return {
+      ...none,
+      kind: 'exempt',
+      taxCountry: supplierInEu ? supplier.country : null,
+      invoiceText: supplier.exemption,
+    };
   }
   if (!customerInEu) {
     return {
       ...none,
       kind: 'outside scope',
       taxCountry: null,
-      invoiceText: supplierInEu ? 'Outside the scope of EU VAT: the place of supply is the customer’s country (Directive 2006/112/EC, Article 44).' : null,
-      caution: supplier.country === customer.country ? `Both sides are in ${customer.country}, whose own tax is not kept here: it may have to be charged.` : null,
+      invoiceText: supplierInEu
+        ? 'Outside the scope of EU VAT: the place of supply is the customer’s country (Directive 2006/112/EC, Article 44).'
+        : null,
+      caution:
+        supplier.country === customer.country
+          ? `Both sides are in ${customer.country}, whose own tax is not kept here: it may have to be charged.`
+          : null,
     };
   }
   const customerIsTaxable = isTaxablePerson(customer);
@@ -62,7 +80,10 @@ export function vatTreatment({ supplier, customer, dateMs }: { readonly supplier
       rateBasisPoints: standardRateBasisPoints(supplier.country, dateMs),
       taxCountry: supplier.country,
       invoiceText: null,
-      caution: supplier.country === customer.country ? null : 'The customer gave no valid VAT number of an EU country, so the supplier’s VAT is charged as to a private person.',
+      caution:
+        supplier.country === customer.country
+          ? null
+          : 'The customer gave no valid VAT number of an EU country, so the supplier’s VAT is charged as to a private person.',
     };
   }
   return {
@@ -71,7 +92,9 @@ export function vatTreatment({ supplier, customer, dateMs }: { readonly supplier
     taxCountry: customer.country,
     invoiceText: REVERSE_CHARGE_TEXT,
     customerVatNumberRequired: true,
-    caution: customerIsTaxable ? null : 'The customer gave no valid VAT number of an EU country; ask for it before invoicing.',
+    caution: customerIsTaxable
+      ? null
+      : 'The customer gave no valid VAT number of an EU country; ask for it before invoicing.',
   };
 }
 

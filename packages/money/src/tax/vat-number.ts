@@ -42,7 +42,12 @@ const FORMS: Readonly<Record<string, VatNumberForm>> = {
 };
 
 export type VatNumberCheck =
-  | { readonly ok: true; /** ISO 3166. */ readonly country: string; /** No spaces, capitals, with prefix. */ readonly number: string; readonly checked: 'check digits' | 'form only' }
+  | {
+      readonly ok: true /** ISO 3166. */;
+      readonly country: string /** No spaces, capitals, with prefix. */;
+      readonly number: string;
+      readonly checked: 'check digits' | 'form only';
+    }
   | { readonly ok: false; readonly sentence: string };
 
 /**
@@ -53,11 +58,14 @@ export function checkVatNumber(text: string): VatNumberCheck {
   const plain = text.toUpperCase().replace(/[\s.\-/]/g, '');
   const prefix = plain.startsWith('GR') ? 'EL' : plain.slice(0, 2);
   const form = Object.hasOwn(FORMS, prefix) ? FORMS[prefix] : undefined;
-  if (form === undefined) return { ok: false, sentence: `“${text}” does not begin with a country whose VAT numbers are known here.` };
+  if (form === undefined)
+    return { ok: false, sentence: `“${text}” does not begin with a country whose VAT numbers are known here.` };
   const number = prefix === 'CH' ? plain : plain.slice(2);
-  if (!form.pattern.test(number)) return { ok: false, sentence: `“${text}” does not have the form of a VAT number there: ${form.example}.` };
+  if (!form.pattern.test(number))
+    return { ok: false, sentence: `“${text}” does not have the form of a VAT number there: ${form.example}.` };
   const agrees = CHECK_DIGIT_RULES[prefix];
-  if (agrees !== undefined && !agrees(number)) return { ok: false, sentence: `The check digits of “${text}” do not agree; one digit is probably wrong.` };
+  if (agrees !== undefined && !agrees(number))
+    return { ok: false, sentence: `The check digits of “${text}” do not agree; one digit is probably wrong.` };
   return {
     ok: true,
     country: prefix === 'EL' ? 'GR' : prefix,
