@@ -1,5 +1,8 @@
 /** The application: the platform and one module for each feature. */
 import { type DynamicModule, Module } from '@nestjs/common';
+import { JobsModule } from './jobs/jobs.module.js';
+import { MailModule } from './mail/mail.module.js';
+import { OutboxModule } from './outbox/outbox.module.js';
 import type { ClockPort } from './platform/clock.js';
 import type { Config } from './platform/config.js';
 import { PlatformModule } from './platform/platform.module.js';
@@ -10,7 +13,7 @@ export class AppModule {
   static forRoot(config: Config, clock: ClockPort): DynamicModule {
     return {
       module: AppModule,
-      imports: [PlatformModule.forRoot(config, clock), SystemModule],
+      imports: [PlatformModule.forRoot(config, clock), JobsModule, OutboxModule, MailModule, SystemModule],
     };
   }
 }

@@ -1,4 +1,5 @@
 /** The environment, read once and checked; a wrong value stops the start with a sentence. */
+import { Country, Email, type PostalAddress } from '@skyberth/shared';
 import { z } from 'zod';
 
 const Port = z.coerce.number().int().min(0).max(65_535);
@@ -20,6 +21,17 @@ const Environment = z.object({
   /** Health endpoints of the local stand-ins, separated by commas; empty in production. */
   STAND_IN_HEALTH_URLS: z.string().default(''),
   JOBS: z.enum(['on', 'off']).default('on'),
+  /** The first staff: invited when they are not there yet. */
+  SKYBERTH_ADMIN_EMAIL: Email.optional(),
+  SKYBERTH_FINANCE_EMAIL: Email.optional(),
+  /** Who sells: printed on every invoice. The defaults are invented. */
+  MARKETPLACE_NAME: z.string().min(1).default('Skyberth Harbour Office Oy'),
+  MARKETPLACE_LINE1: z.string().min(1).default('Pilot Quay 4'),
+  MARKETPLACE_POSTAL_CODE: z.string().default('00990'),
+  MARKETPLACE_CITY: z.string().min(1).default('Helsinki'),
+  MARKETPLACE_COUNTRY: Country.default('FI'),
+  MARKETPLACE_VAT_NUMBER: z.string().default('FI12345671'),
+  MARKETPLACE_BILLING_EMAIL: Email.default('billing@skyberth.example'),
 });
 
 export interface Config {
@@ -37,6 +49,17 @@ export interface Config {
   readonly mailFrom: string;
   readonly standInHealthUrls: readonly string[];
   readonly jobs: boolean;
+  /** Staff who are invited at the first start. */
+  readonly firstStaff: readonly { readonly email: string; readonly role: 'admin' | 'finance' }[];
+  readonly marketplace: Marketplace;
+}
+
+/** The organisation that runs the marketplace, as invoices name it. */
+export interface Marketplace {
+  readonly name: string;
+  readonly address: PostalAddress;
+  readonly vatNumber: string | null;
+  readonly billingEmail: string;
 }
 
 /** Reads the settings; throws one error that lists every bad variable. */
@@ -64,6 +87,26 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
       .map((url) => url.trim())
       .filter(Boolean),
     jobs: env.JOBS === 'on',
+    firstStaff: [
+      ...(env.SKYBERTH_ADMIN_EMAIL ? [{ email: env.SKYBERTH_ADMIN_EMAIL, role: 'admin' as const }] : []),
+      ...(env.SKYBERTH_FINANCE_EMAIL ? [{ email: env.SKYBERTH_FINANCE_EMAIL, role: 'finance' as const }] : []),
+    ],
+    marketplace: marketplaceOf(env),
+  };
+}
+
+function marketplaceOf(env: z.infer<typeof Environment>): Marketplace {
+  return {
+    name: env.MARKETPLACE_NAME,
+    address: {
+      line1: env.MARKETPLACE_LINE1,
+      line2: '',
+      postalCode: env.MARKETPLACE_POSTAL_CODE,
+      city: env.MARKETPLACE_CITY,
+      country: env.MARKETPLACE_COUNTRY,
+    },
+    vatNumber: env.MARKETPLACE_VAT_NUMBER || null,
+    billingEmail: env.MARKETPLACE_BILLING_EMAIL,
   };
 }
 
