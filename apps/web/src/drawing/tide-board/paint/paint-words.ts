@@ -1,0 +1,128 @@
+/** Names, prices, words and countdowns of one row, placed so that none lies over another. */
+import { formatCountdown } from '../../../ui/format.js';
+import { apexOf, type CurvePoints, openWater } from '../curve.js';
+import { type Box, type LabelLine, type LabelWish, LINE_PX, placeLabels } from '../labels.js';
+import { baseLinePx, type PlacedRow } from '../rows.js';
+import type { BoardHump, HumpState } from '../tide-board-types.js';
+import { type Brush, FONT, textWidth } from './brush.js';
+
+/** A hump with its drawn points. */
+export interface DrawnHump {
+  readonly hump: BoardHump;
+  readonly points: CurvePoints;
+  readonly isPicked: boolean;
+}
+
+const RANKS: Readonly<Record<HumpState, number>> = {
+  underWay: 90,
+  held: 80,
+  asked: 70,
+  berth: 60,
+  forSale: 50,
+  done: 40,
+  taken: 20,
+  notForSale: 10,
+};
+const PICKED_RANK = 100;
+const STATE_WORDS: Partial<Record<HumpState, string>> = {
+  berth: 'yours',
+  done: 'done',
+  asked: 'asked',
+  underWay: 'live',
+};
+const FLANK_DROP_PX = 16;
+
+/** Places and writes the words of a row. */
+export function paintWords(brush: Brush, row: PlacedRow, drawn: readonly DrawnHump[], taken: readonly Box[]): void {
+  const { ctx, layout, widthPx } = brush;
+  const bounds = {
+    x0: 2,
+    y0: row.topPx + layout.measures.headroomPx + 1,
+    x1: widthPx - 2,
+    y1: row.topPx + layout.measures.rowPx,
+  };
+  const wishes = drawn.map((one) => wishOf(brush, row, one));
+  const byId = new Map(drawn.map((one) => [one.hump.id, one]));
+  ctx.textAlign = 'left';
+  for (const line of placeLabels(wishes, bounds, taken)) {
+    const one = byId.get(line.humpId);
+    if (!one) continue;
+    const isName = line.text === one.hump.spacecraftShort;
+    ctx.font = isName || isQuiet(one.hump) ? FONT.short : FONT.price;
+    ctx.fillStyle = colourOf(brush, one, line.isInside, isName);
+    ctx.fillText(line.text, line.x, line.y + 0.5);
+  }
+}
+
+function isQuiet(hump: BoardHump): boolean {
+  return hump.state === 'notForSale' || hump.state === 'taken';
+}
+
+function colourOf(brush: Brush, one: DrawnHump, isInside: boolean, isName: boolean): string {
+  const { palette } = brush;
+  const { state } = one.hump;
+  const isSolid = state === 'berth' || state === 'underWay' || state === 'done';
+  if (isInside && isSolid) return palette.berthInk;
+  if (state === 'held') return isInside ? palette.ink : palette.brassInk;
+  if (state === 'underWay' && !isName) return palette.deep;
+  if (isName) return one.isPicked ? palette.ink : palette.ink2;
+  return isQuiet(one.hump) ? palette.ink2 : palette.ink;
+}
+
+/** The strong line of a hump: its countdown, price or word. */
+function strongText(brush: Brush, hump: BoardHump): string | null {
+  if (hump.state === 'held' && hump.holdEndsMs !== undefined) return formatCountdown(hump.holdEndsMs - brush.nowMs);
+  if (hump.state === 'forSale') return hump.priceLabel ?? null;
+  return STATE_WORDS[hump.state] ?? hump.reason?.word ?? null;
+}
+
+function wishOf(brush: Brush, row: PlacedRow, one: DrawnHump): LabelWish {
+  const { ctx, layout } = brush;
+  const { hump, points } = one;
+  const apex = apexOf(points);
+  const baseY = baseLinePx(row, layout.measures);
+  const strong = strongText(brush, hump);
+  const strongLine = strong
+    ? { text: strong, widthPx: textWidth(ctx, isQuiet(hump) ? FONT.short : FONT.price, strong), keep: true }
+    : null;
+  const name = { text: hump.spacecraftShort, widthPx: textWidth(ctx, FONT.short, hump.spacecraftShort) };
+  const inside = strongLine && !isQuiet(hump) && hump.state !== 'asked' ? insideOf(points, apex.y, strongLine) : null;
+  const lines: LabelLine[] = isQuiet(hump) ? [] : [name];
+  if (strongLine && !inside) lines.push(strongLine);
+  const flankY = Math.min(apex.y + FLANK_DROP_PX, baseY - 2);
+  return {
+    id: hump.id,
+    rank: one.isPicked ? PICKED_RANK : RANKS[hump.state],
+    body: { x0: points.xs[0] as number, y0: apex.y, x1: points.xs.at(-1) as number, y1: baseY },
+    apexX: apex.x,
+    inside,
+    lines,
+    flankRightX: one.isPicked ? (points.xs.at(-1) as number) : flankX(points, flankY, apex.x, 1),
+    flankLeftX: one.isPicked ? (points.xs[0] as number) : flankX(points, flankY, apex.x, -1),
+  };
+}
+
+/** The lowest place inside the hump where the line fits between the curve's flanks and above the land. */
+function insideOf(points: CurvePoints, apexY: number, line: LabelLine): LabelWish['inside'] {
+  const lowestLand = Math.max(...points.lands);
+  for (const lift of [2, 6]) {
+    const bottom = lowestLand - lift + 2;
+    const top = bottom - LINE_PX;
+    if (top - 1 < apexY) return null;
+    const water = openWater(points, top + 1, bottom - 3);
+    if (!water || water[1] - water[0] < line.widthPx + 4) continue;
+    const x0 = (water[0] + water[1] - line.widthPx) / 2;
+    return { line, box: { x0, y0: top, x1: x0 + line.widthPx, y1: bottom } };
+  }
+  return null;
+}
+
+/** Where the curve's flank crosses a height, seen from the top outwards. */
+function flankX(points: CurvePoints, y: number, apexX: number, side: 1 | -1): number {
+  let reach = apexX;
+  for (let at = 0; at < points.xs.length; at += 1) {
+    const x = points.xs[at] as number;
+    if ((points.tops[at] as number) <= y && (x - apexX) * side > (reach - apexX) * side) reach = x;
+  }
+  return reach;
+}
