@@ -2,7 +2,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { antennas, bookingEvents, bookings, type SkyberthDatabase, stations } from '@skyberth/drizzle';
 import { type BookingState, OCCUPYING_STATES, type Principal } from '@skyberth/shared';
-import { and, asc, eq, gt, inArray, isNotNull, lt, lte, max, ne, or, type SQL } from 'drizzle-orm';
+import { and, asc, eq, gt, inArray, isNotNull, lt, lte, max, ne, or, type SQL, sql } from 'drizzle-orm';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
 import { notFound } from '../platform/domain-error.js';
@@ -28,6 +28,9 @@ export interface BusyInterval {
   readonly guardFromMs: number;
   /** With teardown. */
   readonly guardToMs: number;
+  /** Where the dish points at AOS and at LOS. */
+  readonly startAzimuthDeg: number | null;
+  readonly endAzimuthDeg: number | null;
 }
 
 /** No guarded interval is longer (`bookings_order`), so nothing that began earlier than this can reach into a period. */
@@ -70,6 +73,8 @@ export class BookingRepository {
         losMs: bookings.losMs,
         guardFromMs: bookings.guardFromMs,
         guardToMs: bookings.guardToMs,
+        startAzimuthDeg: sql<number | null>`json_extract(${bookings.pass}, '$.azimuthDeg[0]')`,
+        endAzimuthDeg: sql<number | null>`json_extract(${bookings.pass}, '$.azimuthDeg[2]')`,
       })
       .from(bookings)
       .where(
