@@ -1,6 +1,10 @@
 /** The environment, read once and checked; a wrong value stops the start with a sentence. */
 import { Country, Email, type PostalAddress } from '@skyberth/shared';
+import { availableParallelism } from 'node:os';
 import { z } from 'zod';
+
+/** Each worker holds a cache of passes of up to a hundred megabytes or so. */
+const MOST_WORKERS_UNASKED = 4;
 
 const Port = z.coerce.number().int().min(0).max(65_535);
 
@@ -21,6 +25,8 @@ const Environment = z.object({
   /** Health endpoints of the local stand-ins, separated by commas; empty in production. */
   STAND_IN_HEALTH_URLS: z.string().default(''),
   JOBS: z.enum(['on', 'off']).default('on'),
+  /** Threads that compute passes; 0 computes them in this process, which then answers nobody meanwhile. */
+  PASS_WORKERS: z.coerce.number().int().min(0).max(32).optional(),
   /** The first staff: invited when they are not there yet. */
   SKYBERTH_ADMIN_EMAIL: Email.optional(),
   SKYBERTH_FINANCE_EMAIL: Email.optional(),
@@ -49,6 +55,7 @@ export interface Config {
   readonly mailFrom: string;
   readonly standInHealthUrls: readonly string[];
   readonly jobs: boolean;
+  readonly passWorkers: number;
   /** Staff who are invited at the first start. */
   readonly firstStaff: readonly { readonly email: string; readonly role: 'admin' | 'finance' }[];
   readonly marketplace: Marketplace;
@@ -87,6 +94,7 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
       .map((url) => url.trim())
       .filter(Boolean),
     jobs: env.JOBS === 'on',
+    passWorkers: env.PASS_WORKERS ?? Math.min(MOST_WORKERS_UNASKED, availableParallelism()),
     firstStaff: [
       ...(env.SKYBERTH_ADMIN_EMAIL ? [{ email: env.SKYBERTH_ADMIN_EMAIL, role: 'admin' as const }] : []),
       ...(env.SKYBERTH_FINANCE_EMAIL ? [{ email: env.SKYBERTH_FINANCE_EMAIL, role: 'finance' as const }] : []),
