@@ -79,7 +79,7 @@ function norway(number: string): boolean {
 
 function unitedKingdom(number: string): boolean {
   const rest = weighted(number, [8, 7, 6, 5, 4, 3, 2, 10, 1]) % 97;
-  return rest === 0 || rest === 42;
+  return rest === 0 || rest === 42 || rest === 55;
 }
 
 export const CHECK_DIGIT_RULES: Readonly<Record<string, (number: string) => boolean>> = {
