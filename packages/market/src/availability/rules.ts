@@ -18,6 +18,7 @@ import {
   startOfDay,
   toWallClock,
 } from '../time/local-time.js';
+import { recurrenceParts } from './recurrence-grammar.js';
 
 export interface AvailabilityRule {
   readonly id: string;
@@ -41,49 +42,23 @@ export const MOST_INSTANCES_A_YEAR = 8_784;
 /** The package is CommonJS to Node and ESM to a bundler; its classes stand in one place or the other. */
 const { RRule } = 'RRule' in rruleModule ? rruleModule : (rruleModule as { default: typeof rruleModule }).default;
 
-const PERMITTED_FREQUENCIES = ['YEARLY', 'MONTHLY', 'WEEKLY', 'DAILY'];
-
 /**
- * The rule in its parts. Throws `bad rule` for text that is no recurrence, a frequency below a day (too dense), or an
- * interval or count that would never end or never begin.
+ * The rule in its parts, on the station's clock. Throws `bad rule` for text that is no recurrence, a frequency below a day
+ * (too dense), or an interval or count that would never end or never begin.
  */
 export function parseRecurrence(rrule: string, startLocal: string, timeZone: string): Partial<Options> {
-  const refuse = (why: string): never => {
-    throw new MarketError('bad rule', `The recurrence “${rrule}” cannot be used: ${why}`, { rrule });
-  };
-  const parts = new Map(rrule.split(';').map((part) => part.split('=', 2) as [string, string | undefined]));
-  const frequency = parts.get('FREQ');
-  if (frequency === undefined) return refuse('it has no FREQ.');
-  if (!PERMITTED_FREQUENCIES.includes(frequency))
-    return refuse(`${frequency} is too dense or unknown; use DAILY, WEEKLY, MONTHLY or YEARLY.`);
-  if (parts.has('BYHOUR') || parts.has('BYMINUTE') || parts.has('BYSECOND'))
-    return refuse('the time of day comes from the start; write one rule for each time.');
-  if (parts.has('DTSTART')) return refuse('the start is given beside it.');
-  if (parts.has('COUNT') && parts.has('UNTIL')) return refuse('COUNT and UNTIL exclude each other.');
-  for (const name of ['INTERVAL', 'COUNT'] as const) {
-    const value = parts.get(name);
-    if (value !== undefined && !/^[1-9]\d{0,4}$/.test(value))
-      return refuse(`${name} is a whole number from 1 to 99999.`);
-  }
-  try {
-    return {
-      ...RRule.parseString(rrule),
-      dtstart: new Date(parseLocalDateTime(startLocal)),
-      until: untilWallClock(parts.get('UNTIL'), timeZone),
-    };
-  } catch (cause) {
-    if (cause instanceof MarketError) throw cause;
-    return refuse(cause instanceof Error ? `${cause.message}.` : 'it cannot be read.');
-  }
+  const parts = recurrenceParts(rrule);
+  if (typeof parts === 'string')
+    throw new MarketError('bad rule', `The recurrence “${rrule}” cannot be used: ${parts}`, { rrule });
+  const dtstart = new Date(parseLocalDateTime(startLocal));
+  return { ...RRule.parseString(rrule), dtstart, until: untilWallClock(parts.get('UNTIL'), timeZone) };
 }
 
 /** UNTIL is UTC when it ends in Z (RFC 5545 3.3.10); the recurrence is computed on the station's clock. */
 function untilWallClock(until: string | undefined, timeZone: string): Date | null {
   if (until === undefined) return null;
-  const match = /^(\d{4})(\d{2})(\d{2})(?:T(\d{2})(\d{2})(\d{2})(Z?))?$/.exec(until);
-  if (match === null)
-    throw new MarketError('bad rule', `UNTIL=${until} is neither a date nor a date with a time.`, { until });
-  const [, year, month, day, hour = '23', minute = '59', second = '59', zulu] = match;
+  const [, year, month, day, hour = '23', minute = '59', second = '59', zulu] =
+    /^(\d{4})(\d{2})(\d{2})(?:T(\d{2})(\d{2})(\d{2})(Z?))?$/.exec(until) ?? [];
   const clock = Date.UTC(Number(year), Number(month) - 1, Number(day), Number(hour), Number(minute), Number(second));
   return new Date(zulu === 'Z' ? toWallClock(clock, timeZone) : clock);
 }
