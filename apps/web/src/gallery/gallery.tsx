@@ -34,7 +34,11 @@ const items = [
 ];
 
 createRoot(document.getElementById('root') as HTMLElement).render(
-  <MantineProvider theme={theme} cssVariablesResolver={cssVariablesResolver} defaultColorScheme={query.get('scheme') === 'dark' ? 'dark' : 'light'}>
+  <MantineProvider
+    theme={theme}
+    cssVariablesResolver={cssVariablesResolver}
+    defaultColorScheme={query.get('scheme') === 'dark' ? 'dark' : 'light'}
+  >
     <Shell
       items={items}
       currentPath={`/${name}`}

@@ -41,7 +41,11 @@ export function maskAt(mask: readonly MaskPoint[], azimuthDeg: number): number {
   const sorted = [...mask].sort((a, b) => a.azimuthDeg - b.azimuthDeg);
   const first = sorted[0] as MaskPoint;
   const last = sorted.at(-1) as MaskPoint;
-  const ring = [{ ...last, azimuthDeg: last.azimuthDeg - 360 }, ...sorted, { ...first, azimuthDeg: first.azimuthDeg + 360 }];
+  const ring = [
+    { ...last, azimuthDeg: last.azimuthDeg - 360 },
+    ...sorted,
+    { ...first, azimuthDeg: first.azimuthDeg + 360 },
+  ];
   for (let index = 1; index < ring.length; index += 1) {
     const a = ring[index - 1] as MaskPoint;
     const b = ring[index] as MaskPoint;
@@ -53,16 +57,42 @@ export function maskAt(mask: readonly MaskPoint[], azimuthDeg: number): number {
 }
 
 export const TARNWICK_MASK: readonly MaskPoint[] = [
-  [0, 6.4], [18, 7], [38, 8.4], [58, 6.5], [72, 9], [84, 13], [90, 14], [98, 13.6], [112, 6], [134, 5], [150, 4.6], [172, 7.4],
-  [194, 11.2], [212, 14], [230, 11.5], [248, 7], [272, 4.4], [300, 3.4], [324, 4.8], [342, 6.1],
+  [0, 6.4],
+  [18, 7],
+  [38, 8.4],
+  [58, 6.5],
+  [72, 9],
+  [84, 13],
+  [90, 14],
+  [98, 13.6],
+  [112, 6],
+  [134, 5],
+  [150, 4.6],
+  [172, 7.4],
+  [194, 11.2],
+  [212, 14],
+  [230, 11.5],
+  [248, 7],
+  [272, 4.4],
+  [300, 3.4],
+  [324, 4.8],
+  [342, 6.1],
 ].map(([azimuthDeg = 0, elevationDeg = 0]) => ({ azimuthDeg, elevationDeg }));
 
 export const FLAT_MASK: readonly MaskPoint[] = [
-  [0, 5], [60, 7], [120, 5], [180, 9], [240, 12], [300, 6],
+  [0, 5],
+  [60, 7],
+  [120, 5],
+  [180, 9],
+  [240, 12],
+  [300, 6],
 ].map(([azimuthDeg = 0, elevationDeg = 0]) => ({ azimuthDeg, elevationDeg }));
 
 /** Samples every 10 s over the time above the horizon, and AOS and LOS over the mask. */
-export function fly(pass: InventedPass, mask: readonly MaskPoint[]): { profile: HumpProfile; aosMs: number; losMs: number } {
+export function fly(
+  pass: InventedPass,
+  mask: readonly MaskPoint[],
+): { profile: HumpProfile; aosMs: number; losMs: number } {
   const stepMs = 10_000;
   const half = 75;
   const elevation: number[] = [];
@@ -131,29 +161,44 @@ const NIGHT = [{ fromMs: at(12, 0), toMs: at(31, 0) }];
 
 export const STATIONS: readonly BoardStation[] = [
   {
-    id: 'hollenvik', name: 'Hollenvik', timeZone: 'Europe/Oslo', nights: NIGHT,
+    id: 'hollenvik',
+    name: 'Hollenvik',
+    timeZone: 'Europe/Oslo',
+    nights: NIGHT,
     rows: [
       { id: 'h1', name: 'Hollenvik 1', detail: ['7.3 m, S and X', 'from €6.40 a min'] },
       { id: 'h2', name: 'Hollenvik 2', detail: ['3.7 m, S', 'from €3.90 a min'] },
     ],
   },
   {
-    id: 'tarnwick', name: 'Tarnwick', timeZone: 'Europe/London', nights: [{ fromMs: at(15, 51), toMs: at(32, 0) }],
+    id: 'tarnwick',
+    name: 'Tarnwick',
+    timeZone: 'Europe/London',
+    nights: [{ fromMs: at(15, 51), toMs: at(32, 0) }],
     rows: [
       { id: 'te', name: 'Tarnwick East', detail: ['5.4 m, S and X', 'from €5.60 a min'] },
       { id: 'tw', name: 'Tarnwick West', detail: ['5.4 m, S and X', 'from €5.60 a min'] },
     ],
   },
   {
-    id: 'pico', name: 'Pico Verdal', timeZone: 'Atlantic/Azores', nights: [],
+    id: 'pico',
+    name: 'Pico Verdal',
+    timeZone: 'Atlantic/Azores',
+    nights: [],
     rows: [{ id: 'pv', name: 'Pico Verdal', detail: ['6.1 m, S and X', 'from €7.20 a min'] }],
   },
   {
-    id: 'droevlei', name: 'Droëvlei', timeZone: 'Africa/Johannesburg', nights: [],
+    id: 'droevlei',
+    name: 'Droëvlei',
+    timeZone: 'Africa/Johannesburg',
+    nights: [],
     rows: [{ id: 'dn', name: 'Droëvlei North', detail: ['9.0 m, S and X', 'from €4.80 a min'] }],
   },
   {
-    id: 'punta', name: 'Punta Cormorán', timeZone: 'America/Argentina/Ushuaia', nights: [],
+    id: 'punta',
+    name: 'Punta Cormorán',
+    timeZone: 'America/Argentina/Ushuaia',
+    nights: [],
     rows: [
       { id: 'p1', name: 'Punta Cormorán 1', detail: ['5.0 m, S and X', 'from €5.30 a min'] },
       { id: 'p2', name: 'Punta Cormorán 2', detail: ['3.7 m, S', 'from €3.40 a min'] },
@@ -162,15 +207,26 @@ export const STATIONS: readonly BoardStation[] = [
 ];
 
 const p = (hour: number, minute: number, highestDeg: number, azimuthAtHighestDeg = 95): InventedPass => ({
-  highestMs: at(hour, minute), highestDeg, azimuthAtHighestDeg,
+  highestMs: at(hour, minute),
+  highestDeg,
+  azimuthAtHighestDeg,
 });
 const M = TARNWICK_MASK;
 const why = (word: string, sentence: string, refused = false) => ({ reason: { word, sentence, refused } });
 const forSale = (euro: number) => ({ priceLabel: `€${euro}`, priceText: `€${euro}.40` });
 
-export const PICKED = hump('h1', 'W4', p(15, 4, 84.9), FLAT_MASK, 'forSale', { priceLabel: '€82', priceText: '€81.88' });
-export const REFUSED = hump('p1', 'W5', p(16, 12, 34, 250), M, 'notForSale',
-  why('no time to turn', 'The dish cannot turn in time.', true));
+export const PICKED = hump('h1', 'W4', p(15, 4, 84.9), FLAT_MASK, 'forSale', {
+  priceLabel: '€82',
+  priceText: '€81.88',
+});
+export const REFUSED = hump(
+  'p1',
+  'W5',
+  p(16, 12, 34, 250),
+  M,
+  'notForSale',
+  why('no time to turn', 'The dish cannot turn in time.', true),
+);
 
 export const HUMPS: readonly BoardHump[] = [
   PICKED,
@@ -209,10 +265,19 @@ export const HUMPS: readonly BoardHump[] = [
 ];
 
 export const OTHERS: readonly OthersBlock[] = [
-  ['h1', 14, 12, 24], ['te', 15, 2, 17], ['pv', 15, 8, 22], ['dn', 14, 21, 33], ['dn', 14, 52, 65], ['p1', 14, 0, 15],
-  ['p1', 15, 53, 67], ['p2', 15, 24, 38],
+  ['h1', 14, 12, 24],
+  ['te', 15, 2, 17],
+  ['pv', 15, 8, 22],
+  ['dn', 14, 21, 33],
+  ['dn', 14, 52, 65],
+  ['p1', 14, 0, 15],
+  ['p1', 15, 53, 67],
+  ['p2', 15, 24, 38],
 ].map(([rowId, hour, from, to], index) => ({
-  id: `other-${index}`, rowId: String(rowId), fromMs: at(Number(hour), Number(from)), toMs: at(Number(hour), Number(to)),
+  id: `other-${index}`,
+  rowId: String(rowId),
+  fromMs: at(Number(hour), Number(from)),
+  toMs: at(Number(hour), Number(to)),
 }));
 
 export const BLACKOUTS = [{ id: 'b1', rowId: 'h2', fromMs: at(14, 20), toMs: at(16, 20), reason: 'Feed change' }];
@@ -223,14 +288,40 @@ export function crowd(): { stations: BoardStation[]; humps: BoardHump[] } {
   const humps: BoardHump[] = [];
   const states: HumpState[] = ['forSale', 'forSale', 'forSale', 'notForSale', 'berth', 'taken', 'asked', 'held'];
   for (let s = 0; s < 50; s += 1) {
-    const rows = [0, 1, 2, 3].map((r) => ({ id: `r${s}-${r}`, name: `Antenna ${s + 1}.${r + 1}`, detail: ['5.4 m, S and X', 'from €5.60 a min'] }));
-    stations.push({ id: `s${s}`, name: `Station ${s + 1}`, timeZone: 'UTC', rows, nights: Array.from({ length: 14 }, (_, day) => ({ fromMs: NOW + day * 86_400_000 + s * 1_000_000, toMs: NOW + day * 86_400_000 + s * 1_000_000 + 40_000_000 })) });
+    const rows = [0, 1, 2, 3].map((r) => ({
+      id: `r${s}-${r}`,
+      name: `Antenna ${s + 1}.${r + 1}`,
+      detail: ['5.4 m, S and X', 'from €5.60 a min'],
+    }));
+    stations.push({
+      id: `s${s}`,
+      name: `Station ${s + 1}`,
+      timeZone: 'UTC',
+      rows,
+      nights: Array.from({ length: 14 }, (_, day) => ({
+        fromMs: NOW + day * 86_400_000 + s * 1_000_000,
+        toMs: NOW + day * 86_400_000 + s * 1_000_000 + 40_000_000,
+      })),
+    });
     rows.forEach((row, r) => {
       for (let index = 0; index < 100; index += 1) {
         const highestMs = NOW + index * 12_096_000 + ((s * 7919 + r * 104_729 + index * 15_485) % 9000) * 1000;
         const highestDeg = 8 + ((s * 31 + r * 17 + index * 13) % 80);
         const state = states[(s + r * 3 + index) % states.length] as HumpState;
-        humps.push(hump(row.id, `W${(index % 5) + 1}`, { highestMs, highestDeg, azimuthAtHighestDeg: (index * 37) % 360 }, index % 2 ? M : FLAT_MASK, state, state === 'forSale' ? forSale(30 + (index % 60)) : state === 'held' ? { holdEndsMs: NOW + 600_000 } : why('notice', 'Too late.')));
+        humps.push(
+          hump(
+            row.id,
+            `W${(index % 5) + 1}`,
+            { highestMs, highestDeg, azimuthAtHighestDeg: (index * 37) % 360 },
+            index % 2 ? M : FLAT_MASK,
+            state,
+            state === 'forSale'
+              ? forSale(30 + (index % 60))
+              : state === 'held'
+                ? { holdEndsMs: NOW + 600_000 }
+                : why('notice', 'Too late.'),
+          ),
+        );
       }
     });
   }

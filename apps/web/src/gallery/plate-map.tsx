@@ -1,1 +1,3 @@
-export default function Plate() { return null; }
+export default function Plate() {
+  return null;
+}

@@ -5,7 +5,8 @@ import { at, FLAT_MASK, hump, NOW, TARNWICK_MASK } from './invented.js';
 const pass = { highestMs: at(14, 5), highestDeg: 34, azimuthAtHighestDeg: 95 };
 const reason = { word: 'no time to turn', sentence: 'The dish cannot turn in time.' };
 const part = { fromMs: at(14, 4), toMs: at(14, 8) };
-const make = (state: BoardHump['state'], extra: Partial<BoardHump> = {}) => hump('r', 'W4', pass, TARNWICK_MASK, state, extra);
+const make = (state: BoardHump['state'], extra: Partial<BoardHump> = {}) =>
+  hump('r', 'W4', pass, TARNWICK_MASK, state, extra);
 const CASES: readonly (readonly [string, BoardHump[], object?])[] = [
   ['For sale', [make('forSale', { priceLabel: '€68' })]],
   ['Picked', [make('forSale', { priceLabel: '€82' })], { picked: true }],
@@ -32,7 +33,15 @@ export default function PlateStates() {
             <TideBoard
               bare
               label={title}
-              stations={[{ id: 's', name: 'Tarnwick', timeZone: 'Europe/London', nights: on.night ? [{ fromMs: at(13, 0), toMs: at(14, 30) }] : [], rows: [{ id: 'r', name: 'East', detail: [] }] }]}
+              stations={[
+                {
+                  id: 's',
+                  name: 'Tarnwick',
+                  timeZone: 'Europe/London',
+                  nights: on.night ? [{ fromMs: at(13, 0), toMs: at(14, 30) }] : [],
+                  rows: [{ id: 'r', name: 'East', detail: [] }],
+                },
+              ]}
               humps={humps}
               nowMs={on.now ?? at(12, 0)}
               view={{ fromMs: at(13, 56), toMs: at(14, 14) }}
@@ -41,7 +50,11 @@ export default function PlateStates() {
               onOpen={() => undefined}
               pickedIds={on.picked ? humps.map((one) => one.id) : []}
               othersBlocks={on.others ? [{ id: 'o', rowId: 'r', fromMs: at(13, 57), toMs: at(14, 12) }] : []}
-              blackouts={on.blackout ? [{ id: 'b', rowId: 'r', fromMs: at(13, 58), toMs: at(14, 12), reason: 'Feed change' }] : []}
+              blackouts={
+                on.blackout
+                  ? [{ id: 'b', rowId: 'r', fromMs: at(13, 58), toMs: at(14, 12), reason: 'Feed change' }]
+                  : []
+              }
             />
           </div>
         );

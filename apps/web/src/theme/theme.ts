@@ -115,7 +115,7 @@ export const theme = createTheme({
   components: {
     Button: Button.extend({ classNames: { root: parts.button ?? '' }, defaultProps: { size: 'sm' } }),
     ActionIcon: ActionIcon.extend({ defaultProps: { variant: 'subtle' } }),
-    Anchor: Anchor.extend({ classNames: { root: parts.anchor ?? '' } }),
+    Anchor: Anchor.extend({ classNames: { root: parts.anchor ?? '' }, defaultProps: { inherit: true } }),
     Input: Input.extend({ classNames: { input: parts.input ?? '' }, defaultProps: { size: 'sm' } }),
     InputWrapper: InputWrapper.extend({
       classNames: { label: parts.label ?? '', description: parts.note ?? '', error: parts.error ?? '' },

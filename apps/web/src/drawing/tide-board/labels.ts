@@ -30,9 +30,8 @@ export interface LabelWish {
   /** Place for one line inside the hump, as far as it has one. */
   readonly inside: { readonly line: LabelLine; readonly box: Box } | null;
   readonly lines: readonly LabelLine[];
-  /** Where words beside the hump may begin: right and left flank near the top. */
-  readonly flankRightX: number;
-  readonly flankLeftX: number;
+  /** Where words of so many lines beside the hump may begin: its flank at that depth, right (1) or left (-1). */
+  readonly flankX: (lines: number, side: 1 | -1) => number;
 }
 
 /** One line put in its place; `x` is its left edge, `y` the middle of its height. */
@@ -44,7 +43,7 @@ export interface PlacedLine {
   readonly isInside: boolean;
 }
 
-export const LINE_PX = 14;
+export const LINE_PX = 13;
 const GAP_PX = 3;
 const SIDE_GAP_PX = 5;
 
@@ -95,8 +94,8 @@ function candidates(wish: LabelWish, lines: readonly LabelLine[]): Stacked[][] {
   const sideTop = Math.min(wish.body.y0 - 1, wish.body.y1 - heightPx);
   return [
     stackLines(lines, aboveTop, (widthPx) => wish.apexX - widthPx / 2),
-    stackLines(lines, sideTop, () => wish.flankRightX + SIDE_GAP_PX),
-    stackLines(lines, sideTop, (widthPx) => wish.flankLeftX - SIDE_GAP_PX - widthPx),
+    stackLines(lines, sideTop, () => wish.flankX(lines.length, 1) + SIDE_GAP_PX),
+    stackLines(lines, sideTop, (widthPx) => wish.flankX(lines.length, -1) - SIDE_GAP_PX - widthPx),
   ];
 }
 

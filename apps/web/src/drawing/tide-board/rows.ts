@@ -18,7 +18,7 @@ export interface BoardMeasures {
 }
 
 export const MEASURES: Readonly<Record<'wide' | 'phone', BoardMeasures>> = {
-  wide: { stripPx: 27, rowPx: 68, headroomPx: 0, quayPx: 10, humpPx: 54, namesPx: 180, targetPx: 24 },
+  wide: { stripPx: 27, rowPx: 68, headroomPx: 0, quayPx: 10, humpPx: 53, namesPx: 180, targetPx: 24 },
   phone: { stripPx: 0, rowPx: 84, headroomPx: 20, quayPx: 11, humpPx: 50, namesPx: 0, targetPx: 44 },
 };
 

@@ -41,6 +41,8 @@ export interface SceneInput {
   readonly blackoutsByRow: ReadonlyMap<string, readonly BoardBlackout[]>;
   readonly othersByRow: ReadonlyMap<string, readonly OthersBlock[]>;
   readonly pickedIds: ReadonlySet<string>;
+  /** The pass that a bubble speaks for. */
+  readonly bubbleId: string | null;
   readonly nowMs: number;
   readonly palette: Tokens;
 }
@@ -173,7 +175,7 @@ export class BoardScene {
     for (const hump of humps) if (input.pickedIds.has(hump.id)) paintPosts(brush, row, hump);
     for (const hump of humps) paintLand(brush, row, hump);
     for (const block of others) paintOthersBlock(brush, patterns, row, block);
-    const taken: Box[] = blackouts.flatMap((blackout) => paintBlackoutWords(brush, row, blackout));
+    const taken: Box[] = [];
     for (const block of others) {
       const y0 = othersTopPx(row, brush);
       taken.push({
@@ -189,8 +191,11 @@ export class BoardScene {
     }
     const drawn: DrawnHump[] = humps.map((hump) => {
       const isPicked = input.pickedIds.has(hump.id);
-      return { hump, isPicked, points: paintHump(brush, row, hump, isPicked) };
+      const isClosed = blackouts.some((one) => hump.aosMs < one.toMs && hump.losMs > one.fromMs);
+      const isMute = hump.id === input.bubbleId || (hump.state === 'notForSale' && isClosed);
+      return { hump, isPicked, isMute, points: paintHump(brush, row, hump, isPicked) };
     });
+    taken.push(...blackouts.flatMap((blackout) => paintBlackoutWords(brush, row, blackout)));
     for (const hump of ticks) paintTick(brush, row, hump, input.pickedIds.has(hump.id));
     for (const { hump } of drawn) {
       if (brush.x(hump.losMs) - brush.x(hump.aosMs) >= CLOSE_UP_FROM_PX) taken.push(...paintCloseUp(brush, row, hump));

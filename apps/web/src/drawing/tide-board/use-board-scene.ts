@@ -29,6 +29,7 @@ export function useBoardScene(props: TideBoardProps, elements: BoardElements) {
   const othersByRow = useMemo(() => byRow(othersBlocks ?? []), [othersBlocks]);
   const pickedKey = (props.pickedIds ?? []).join('\n');
   const pickedIds = useMemo(() => new Set(pickedKey === '' ? [] : pickedKey.split('\n')), [pickedKey]);
+  const bubbleId = props.bubble?.humpId ?? null;
   const repaints = useRepaintCount();
   const [scene, setScene] = useState<BoardScene | null>(null);
   const [settled, setSettled] = useState<Interval>(() => clampView(props.view, props.limits));
@@ -73,8 +74,8 @@ export function useBoardScene(props: TideBoardProps, elements: BoardElements) {
   }, [scene, repaints, elements]);
 
   useLayoutEffect(() => {
-    scene?.setInput({ layout, index, blackoutsByRow, othersByRow, pickedIds, nowMs: props.nowMs, palette });
-  }, [scene, layout, index, blackoutsByRow, othersByRow, pickedIds, props.nowMs, palette]);
+    scene?.setInput({ layout, index, blackoutsByRow, othersByRow, pickedIds, bubbleId, nowMs: props.nowMs, palette });
+  }, [scene, layout, index, blackoutsByRow, othersByRow, pickedIds, bubbleId, props.nowMs, palette]);
 
   useSizes(scene, elements, setWidthPx, layout, setRange);
   useGestures(scene, elements, show, settle, latest);

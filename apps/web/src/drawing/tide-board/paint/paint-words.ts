@@ -11,6 +11,8 @@ export interface DrawnHump {
   readonly hump: BoardHump;
   readonly points: CurvePoints;
   readonly isPicked: boolean;
+  /** Says nothing: the plate of a blackout speaks for it. */
+  readonly isMute: boolean;
 }
 
 const RANKS: Readonly<Record<HumpState, number>> = {
@@ -30,7 +32,8 @@ const STATE_WORDS: Partial<Record<HumpState, string>> = {
   asked: 'asked',
   underWay: 'live',
 };
-const FLANK_DROP_PX = 16;
+/** Prices and countdowns may lean over the flanks a little: a halo keeps them readable there. */
+const LEAN_PX = 3;
 
 /** Places and writes the words of a row. */
 export function paintWords(brush: Brush, row: PlacedRow, drawn: readonly DrawnHump[], taken: readonly Box[]): void {
@@ -49,20 +52,34 @@ export function paintWords(brush: Brush, row: PlacedRow, drawn: readonly DrawnHu
     if (!one) continue;
     const isName = line.text === one.hump.spacecraftShort;
     ctx.font = isName || isQuiet(one.hump) ? FONT.short : FONT.price;
+    if (line.isInside && !isSolid(one.hump)) {
+      ctx.lineJoin = 'round';
+      ctx.lineWidth = 3;
+      ctx.strokeStyle = groundOf(brush, one);
+      ctx.strokeText(line.text, line.x, line.y + 0.5);
+    }
     ctx.fillStyle = colourOf(brush, one, line.isInside, isName);
     ctx.fillText(line.text, line.x, line.y + 0.5);
   }
+}
+
+function isSolid({ state }: BoardHump): boolean {
+  return state === 'berth' || state === 'underWay' || state === 'done';
 }
 
 function isQuiet(hump: BoardHump): boolean {
   return hump.state === 'notForSale' || hump.state === 'taken';
 }
 
+function groundOf({ palette }: Brush, one: DrawnHump): string {
+  if (one.hump.state === 'held') return palette.brassWash;
+  return one.isPicked ? palette.sheet : palette.shoalWash;
+}
+
 function colourOf(brush: Brush, one: DrawnHump, isInside: boolean, isName: boolean): string {
   const { palette } = brush;
   const { state } = one.hump;
-  const isSolid = state === 'berth' || state === 'underWay' || state === 'done';
-  if (isInside && isSolid) return palette.berthInk;
+  if (isInside && isSolid(one.hump)) return palette.berthInk;
   if (state === 'held') return isInside ? palette.ink : palette.brassInk;
   if (state === 'underWay' && !isName) return palette.deep;
   if (isName) return one.isPicked ? palette.ink : palette.ink2;
@@ -81,15 +98,15 @@ function wishOf(brush: Brush, row: PlacedRow, one: DrawnHump): LabelWish {
   const { hump, points } = one;
   const apex = apexOf(points);
   const baseY = baseLinePx(row, layout.measures);
-  const strong = strongText(brush, hump);
+  const strong = one.isMute ? null : strongText(brush, hump);
   const strongLine = strong
     ? { text: strong, widthPx: textWidth(ctx, isQuiet(hump) ? FONT.short : FONT.price, strong), keep: true }
     : null;
   const name = { text: hump.spacecraftShort, widthPx: textWidth(ctx, FONT.short, hump.spacecraftShort) };
-  const inside = strongLine && !isQuiet(hump) && hump.state !== 'asked' ? insideOf(points, apex.y, strongLine) : null;
+  const inside =
+    strongLine && !isQuiet(hump) && hump.state !== 'asked' ? insideOf(points, apex.y, strongLine, isSolid(hump)) : null;
   const lines: LabelLine[] = isQuiet(hump) ? [] : [name];
   if (strongLine && !inside) lines.push(strongLine);
-  const flankY = Math.min(apex.y + FLANK_DROP_PX, baseY - 2);
   return {
     id: hump.id,
     rank: one.isPicked ? PICKED_RANK : RANKS[hump.state],
@@ -97,20 +114,23 @@ function wishOf(brush: Brush, row: PlacedRow, one: DrawnHump): LabelWish {
     apexX: apex.x,
     inside,
     lines,
-    flankRightX: one.isPicked ? (points.xs.at(-1) as number) : flankX(points, flankY, apex.x, 1),
-    flankLeftX: one.isPicked ? (points.xs[0] as number) : flankX(points, flankY, apex.x, -1),
+    flankX: (count, side) => {
+      if (one.isPicked) return (side === 1 ? points.xs.at(-1) : points.xs[0]) as number;
+      return flankX(points, Math.min(apex.y + count * LINE_PX, baseY - 1), apex.x, side);
+    },
   };
 }
 
 /** The lowest place inside the hump where the line fits between the curve's flanks and above the land. */
-function insideOf(points: CurvePoints, apexY: number, line: LabelLine): LabelWish['inside'] {
+function insideOf(points: CurvePoints, apexY: number, line: LabelLine, isStrict: boolean): LabelWish['inside'] {
   const lowestLand = Math.max(...points.lands);
-  for (const lift of [2, 6]) {
-    const bottom = lowestLand - lift + 2;
+  const leanPx = isStrict ? -4 : LEAN_PX;
+  for (const lift of [0, 4, 8]) {
+    const bottom = lowestLand - lift + 1;
     const top = bottom - LINE_PX;
     if (top - 1 < apexY) return null;
-    const water = openWater(points, top + 1, bottom - 3);
-    if (!water || water[1] - water[0] < line.widthPx + 4) continue;
+    const water = openWater(points, isStrict ? top + 1 : top + LINE_PX / 2, bottom - 5);
+    if (!water || water[1] - water[0] < line.widthPx - leanPx) continue;
     const x0 = (water[0] + water[1] - line.widthPx) / 2;
     return { line, box: { x0, y0: top, x1: x0 + line.widthPx, y1: bottom } };
   }
