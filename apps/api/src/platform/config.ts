@@ -37,6 +37,8 @@ const Environment = z.object({
   MARKETPLACE_CITY: z.string().min(1).default('Helsinki'),
   MARKETPLACE_COUNTRY: Country.default('FI'),
   MARKETPLACE_VAT_NUMBER: z.string().default('FI12345671'),
+  /** The marketplace's share of a contact, in hundredths of a per cent of its net price. */
+  MARKETPLACE_FEE_BASIS_POINTS: z.coerce.number().int().min(0).max(5_000).default(800),
   MARKETPLACE_BILLING_EMAIL: Email.default('billing@skyberth.example'),
 });
 
@@ -67,6 +69,7 @@ export interface Marketplace {
   readonly address: PostalAddress;
   readonly vatNumber: string | null;
   readonly billingEmail: string;
+  readonly feeBasisPoints: number;
 }
 
 /** Reads the settings; throws one error that lists every bad variable. */
@@ -115,6 +118,7 @@ function marketplaceOf(env: z.infer<typeof Environment>): Marketplace {
     },
     vatNumber: env.MARKETPLACE_VAT_NUMBER || null,
     billingEmail: env.MARKETPLACE_BILLING_EMAIL,
+    feeBasisPoints: env.MARKETPLACE_FEE_BASIS_POINTS,
   };
 }
 

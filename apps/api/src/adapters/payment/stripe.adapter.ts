@@ -1,0 +1,203 @@
+/** The payment port over the provider's own SDK. Where it connects to is configuration; the calls are the same everywhere. */
+import { Inject, Injectable } from '@nestjs/common';
+import Stripe from 'stripe';
+import type {
+  CardFacts,
+  IntentFacts,
+  PageFacts,
+  PageOrder,
+  PaymentOrder,
+  PaymentPort,
+  ProviderEvent,
+} from '../../payments/payment.port.js';
+import { CONFIG, type Config } from '../../platform/config.js';
+import { DomainError } from '../../platform/domain-error.js';
+import { BOOKING_KEY, cardFacts, eventFacts, intentFacts, pageFacts, refusalSentence } from './stripe-facts.js';
+
+/** A person waits for most of these calls; what takes longer is found again by its idempotency key. */
+const TIMEOUT_MS = 12_000;
+const NETWORK_RETRIES = 2;
+/** Signed longer ago than this, an event is a replay; the provider's own libraries use the same figure. */
+const SIGNATURE_TOLERANCE_S = 300;
+/** Clocks differ a little; a signature from further ahead was not made by the provider just now. */
+const SIGNATURE_AHEAD_S = 60;
+const CARDS_SHOWN = 20;
+
+@Injectable()
+export class StripeAdapter implements PaymentPort {
+  private readonly stripe: Stripe;
+
+  constructor(@Inject(CONFIG) private readonly config: Config) {
+    const url = new URL(config.paymentsUrl);
+    const protocol = url.protocol === 'http:' ? 'http' : 'https';
+    this.stripe = new Stripe(config.stripeSecretKey, {
+      host: url.hostname,
+      port: url.port || (protocol === 'http' ? 80 : 443),
+      protocol,
+      timeout: TIMEOUT_MS,
+      maxNetworkRetries: NETWORK_RETRIES,
+      telemetry: false,
+    });
+  }
+
+  async createCustomer(customer: { organisationId: string; name: string; email: string }): Promise<string> {
+    const { organisationId, name, email } = customer;
+    const made = await ask(
+      this.stripe.customers.create(
+        { name, email, metadata: { skyberth_organisation: organisationId } },
+        { idempotencyKey: `skyberth:customer:${organisationId}` },
+      ),
+    );
+    return made.id;
+  }
+
+  async cards(customerId: string): Promise<CardFacts[]> {
+    const page = await ask(this.stripe.paymentMethods.list({ customer: customerId, type: 'card', limit: CARDS_SHOWN }));
+    return page.data.flatMap((method) => cardFacts(method) ?? []);
+  }
+
+  async openPage(order: PageOrder): Promise<PageFacts> {
+    const { bookingId, customerId, amountMinor, currency, description, idempotencyKey } = order;
+    const session = await ask(
+      this.stripe.checkout.sessions.create(
+        {
+          mode: 'payment',
+          customer: customerId,
+          client_reference_id: bookingId,
+          metadata: { [BOOKING_KEY]: bookingId },
+          line_items: [
+            {
+              quantity: 1,
+              price_data: {
+                currency: currency.toLowerCase(),
+                unit_amount: amountMinor,
+                product_data: { name: description },
+              },
+            },
+          ],
+          allowed_payment_method_types: ['card'],
+          payment_intent_data: {
+            capture_method: 'manual',
+            description,
+            metadata: { [BOOKING_KEY]: bookingId },
+            ...(order.saveCard ? { setup_future_usage: 'off_session' as const } : {}),
+          },
+          success_url: order.returnUrl,
+          cancel_url: order.cancelUrl,
+          expires_at: Math.ceil(order.closesMs / 1000),
+        },
+        { idempotencyKey },
+      ),
+    );
+    return pageFacts(session);
+  }
+
+  async readPage(checkoutId: string): Promise<PageFacts> {
+    return pageFacts(await ask(this.stripe.checkout.sessions.retrieve(checkoutId)));
+  }
+
+  async closePage(checkoutId: string): Promise<PageFacts> {
+    const expired = this.stripe.checkout.sessions.expire(checkoutId);
+    return await ask(expired.then(pageFacts), () => this.readPage(checkoutId));
+  }
+
+  async createIntent(order: PaymentOrder & { readonly saveCard: boolean }): Promise<IntentFacts> {
+    const { bookingId, customerId, amountMinor, currency, description, idempotencyKey } = order;
+    const intent = await ask(
+      this.stripe.paymentIntents.create(
+        {
+          amount: amountMinor,
+          currency: currency.toLowerCase(),
+          customer: customerId,
+          capture_method: 'manual',
+          description,
+          metadata: { [BOOKING_KEY]: bookingId },
+          ...(order.saveCard ? { setup_future_usage: 'off_session' as const } : {}),
+        },
+        { idempotencyKey },
+      ),
+    );
+    return intentFacts(intent);
+  }
+
+  async confirmIntent(intentId: string, confirm: { cardId: string; returnUrl: string }): Promise<IntentFacts> {
+    const confirmed = this.stripe.paymentIntents.confirm(intentId, {
+      payment_method: confirm.cardId,
+      return_url: confirm.returnUrl,
+      off_session: false,
+      expand: ['latest_charge'],
+    });
+    return await ask(confirmed.then(intentFacts), () => this.readIntent(intentId));
+  }
+
+  async readIntent(intentId: string): Promise<IntentFacts> {
+    return intentFacts(await ask(this.stripe.paymentIntents.retrieve(intentId, { expand: ['latest_charge'] })));
+  }
+
+  async capture(intentId: string, amountMinor: number): Promise<IntentFacts> {
+    const captured = this.stripe.paymentIntents.capture(
+      intentId,
+      { amount_to_capture: amountMinor, expand: ['latest_charge'] },
+      { idempotencyKey: `skyberth:capture:${intentId}:${amountMinor}` },
+    );
+    return await ask(captured.then(intentFacts), () => this.readIntent(intentId));
+  }
+
+  async release(intentId: string): Promise<IntentFacts> {
+    const released = this.stripe.paymentIntents.cancel(
+      intentId,
+      { cancellation_reason: 'requested_by_customer' },
+      { idempotencyKey: `skyberth:release:${intentId}` },
+    );
+    return await ask(released.then(intentFacts), () => this.readIntent(intentId));
+  }
+
+  verifyEvent(rawBody: Buffer, signature: string, nowMs: number): ProviderEvent {
+    let event: Stripe.Event;
+    try {
+      const secret = this.config.stripeWebhookSecret;
+      event = this.stripe.webhooks.constructEvent(rawBody, signature, secret, SIGNATURE_TOLERANCE_S, undefined, nowMs);
+    } catch {
+      throw badSignature();
+    }
+    if (signedAtS(signature) > nowMs / 1000 + SIGNATURE_AHEAD_S) throw badSignature();
+    return eventFacts(event);
+  }
+}
+
+const badSignature = (): DomainError =>
+  new DomainError('bad-signature', 'The event is not signed by the payment provider, or was signed too long ago.');
+
+/** The library refuses signatures that are too old, and lets those from the future pass. */
+function signedAtS(signature: string): number {
+  return Number(/(?:^|,)\s*t=(\d+)/.exec(signature)?.[1] ?? Number.POSITIVE_INFINITY);
+}
+
+/**
+ * The provider's errors as ours. `whenElsewhere` answers where the provider says that the object is past this step:
+ * a repeat after a crash, or the buyer was faster.
+ */
+async function ask<T>(answer: Promise<T>, whenElsewhere?: () => Promise<T>): Promise<T> {
+  try {
+    return await answer;
+  } catch (error) {
+    if (error instanceof Stripe.errors.StripeCardError) throw new DomainError('card-declined', refusalSentence(error));
+    if (error instanceof Stripe.errors.StripeInvalidRequestError) {
+      const elsewhere = error.code === 'payment_intent_unexpected_state' || error.statusCode === 400;
+      if (whenElsewhere && elsewhere) return await whenElsewhere();
+      throw error;
+    }
+    if (
+      error instanceof Stripe.errors.StripeConnectionError ||
+      error instanceof Stripe.errors.StripeAPIError ||
+      error instanceof Stripe.errors.StripeRateLimitError ||
+      error instanceof Stripe.errors.StripeIdempotencyError
+    ) {
+      throw new DomainError(
+        'payment-unavailable',
+        'The payment service does not answer just now. Nothing is charged twice if you try again in a moment.',
+      );
+    }
+    throw error;
+  }
+}
