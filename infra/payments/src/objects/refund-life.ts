@@ -21,7 +21,7 @@ export interface RefundOrder {
 /** Gives money back to the card: at once, or when the balance can bear it. */
 export function makeRefund(work: Work, order: RefundOrder): Stripe.Refund {
   const { charge, amountMinor } = order;
-  checkRefundable(charge, amountMinor);
+  checkRefundable(charge, amountMinor, hasOpenDispute(work, charge));
   const enough = totalMinor(work.desk, work.account, charge.currency) >= amountMinor;
   const refund: Stripe.Refund = {
     id: newId('re'),
@@ -106,7 +106,17 @@ export function failRefund(work: Work, refundId: string): void {
   work.desk.emit('charge.refund.updated', failed, work.account);
 }
 
-function checkRefundable(charge: Stripe.Charge, amountMinor: number): void {
+/** A dispute that was won leaves the charge as it was; any other one has taken its money already. */
+function hasOpenDispute(work: Work, charge: Stripe.Charge): boolean {
+  const disputes = work.desk.store.list('dispute', {
+    account: work.account,
+    where: { charge: charge.id },
+    limit: 10,
+  }).items;
+  return disputes.some((dispute) => dispute.status !== 'won');
+}
+
+function checkRefundable(charge: Stripe.Charge, amountMinor: number, disputed: boolean): void {
   if (charge.status !== 'succeeded' || !charge.captured) {
     throw refused(
       'This charge has not been captured, so there is nothing to refund. Cancel its PaymentIntent instead.',
@@ -115,7 +125,7 @@ function checkRefundable(charge: Stripe.Charge, amountMinor: number): void {
       },
     );
   }
-  if (charge.disputed) throw refused('This charge is disputed, so it cannot be refunded.', { code: 'charge_disputed' });
+  if (disputed) throw refused('This charge is disputed, so it cannot be refunded.', { code: 'charge_disputed' });
   const left = refundableMinor(charge);
   if (left === 0) throw refused(`Charge ${charge.id} has already been refunded.`, { code: 'charge_already_refunded' });
   if (amountMinor > left) {

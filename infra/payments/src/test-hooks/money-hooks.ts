@@ -1,4 +1,5 @@
 import { PLATFORM } from '../core/store.js';
+import { setAccountActive } from '../objects/account-life.js';
 import { refundableMinor } from '../objects/charge-life.js';
 import { closeDispute, openDispute } from '../objects/dispute-life.js';
 import { returnPayout } from '../objects/payout-life.js';
@@ -35,6 +36,10 @@ export function moneyHooks(tools: HookTools): Record<string, Hook> {
           word(body, 'verdict', ['won', 'lost'] as const),
         ),
       ),
+    'accounts/:id/activate': (_body, params) =>
+      change(() => setAccountActive(desk, desk.get('account', params.id ?? ''), true)),
+    'accounts/:id/restrict': (_body, params) =>
+      change(() => setAccountActive(desk, desk.get('account', params.id ?? ''), false)),
     'payouts/:id/fail': (_body, params) => {
       const account = desk.store.accountOf(params.id ?? '') ?? PLATFORM;
       return change(() => returnPayout({ desk, account }, desk.get('payout', params.id ?? '', account), 'failed'));
