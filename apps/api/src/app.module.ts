@@ -1,5 +1,6 @@
 /** The application: the platform and one module for each feature. */
 import { type DynamicModule, Module } from '@nestjs/common';
+import { AccountsModule } from './accounts/accounts.module.js';
 import { JobsModule } from './jobs/jobs.module.js';
 import { MailModule } from './mail/mail.module.js';
 import { OutboxModule } from './outbox/outbox.module.js';
@@ -13,7 +14,7 @@ export class AppModule {
   static forRoot(config: Config, clock: ClockPort): DynamicModule {
     return {
       module: AppModule,
-      imports: [PlatformModule.forRoot(config, clock), JobsModule, OutboxModule, MailModule, SystemModule],
+      imports: [PlatformModule.forRoot(config, clock), JobsModule, OutboxModule, MailModule, AccountsModule, SystemModule],
     };
   }
 }

@@ -94,7 +94,7 @@ export const accountRoutes = {
     body: z.object({ email: Email, password: z.string().min(1, 'Give the password.').max(200) }),
     response: Session,
     idempotencyKey: 'none',
-    errors: ['wrong-credentials', 'too-many'],
+    errors: ['wrong-credentials', 'not-allowed', 'too-many'],
   }),
   refresh: defineRoute({
     name: 'refresh',
@@ -106,7 +106,7 @@ export const accountRoutes = {
     data: 'self',
     response: Session,
     idempotencyKey: 'none',
-    errors: ['session-ended'],
+    errors: ['session-ended', 'in-progress'],
   }),
   signOut: defineRoute({
     name: 'signOut',
@@ -208,6 +208,7 @@ export const accountRoutes = {
       })
       .partial(),
     response: Organisation,
+    errors: ['already-exists'],
   }),
   members: defineRoute({
     name: 'members',

@@ -2,10 +2,13 @@
 import { type CanActivate, type ExecutionContext, Inject, Injectable } from '@nestjs/common';
 import { Reflector } from '@nestjs/core';
 import { can, type RouteContract } from '@skyberth/shared';
-import passport from 'passport';
+import type { Authenticator } from 'passport';
 import { CONFIG, type Config } from './config.js';
-import { CONTRACT, type SkyberthRequest } from './contract.js';
+import { type Caller, CONTRACT, type SkyberthRequest } from './contract.js';
 import { DomainError } from './domain-error.js';
+
+/** Each application has its own: the strategy that features register on it reads that application's database. */
+export const AUTHENTICATOR = Symbol('Authenticator');
 
 const SAFE_METHODS = new Set(['GET', 'HEAD', 'OPTIONS']);
 
@@ -14,6 +17,7 @@ export class AccessGuard implements CanActivate {
   constructor(
     private readonly reflector: Reflector,
     @Inject(CONFIG) private readonly config: Config,
+    @Inject(AUTHENTICATOR) private readonly authenticator: Authenticator,
   ) {}
 
   async canActivate(context: ExecutionContext): Promise<boolean> {
@@ -21,7 +25,7 @@ export class AccessGuard implements CanActivate {
     if (!contract) throw new DomainError('not-found', 'There is nothing at this address.');
     const request = context.switchToHttp().getRequest<SkyberthRequest>();
     this.refuseOtherSites(request);
-    const principal = await authenticate(request);
+    const principal = await this.authenticate(request);
     if (principal) request.principal = principal;
     if (contract.access === 'public') return true;
     if (!principal) throw new DomainError('not-signed-in', 'Sign in to go on.');
@@ -49,20 +53,18 @@ export class AccessGuard implements CanActivate {
       (host !== undefined && (origin === `http://${host}` || origin === `https://${host}`));
     if (!own) throw new DomainError('cross-site', 'This action can only be started from Skyberth itself.');
   }
-}
 
-type SignedIn = NonNullable<SkyberthRequest['principal']>;
-
-/** Runs the passport strategy; resolves to null where there is no valid access token. */
-function authenticate(request: SkyberthRequest): Promise<SignedIn | null> {
-  return new Promise((resolve, reject) => {
-    const done = (error: unknown, user: SignedIn | false | null | undefined) =>
-      error ? reject(error) : resolve(user || null);
-    const handler = passport.authenticate('jwt', { session: false }, done) as (
-      req: unknown,
-      res: unknown,
-      next: (error?: unknown) => void,
-    ) => void;
-    handler(request, undefined, (error) => (error ? reject(error) : resolve(null)));
-  });
+  /** Runs the passport strategy; resolves to null where there is no valid access token. */
+  private authenticate(request: SkyberthRequest): Promise<Caller | null> {
+    return new Promise((resolve, reject) => {
+      const done = (error: unknown, user: Caller | false | null | undefined) =>
+        error ? reject(error) : resolve(user || null);
+      const handler = this.authenticator.authenticate('jwt', { session: false }, done) as (
+        req: unknown,
+        res: unknown,
+        next: (error?: unknown) => void,
+      ) => void;
+      handler(request, undefined, (error) => (error ? reject(error) : resolve(null)));
+    });
+  }
 }

@@ -31,18 +31,21 @@ export const Handles = (contract: RouteContract): MethodDecorator =>
     ...(contract.produces ? [Header('Content-Type', contract.produces)] : []),
   );
 
+/** The caller, with the session they call in. */
+export type Caller = Principal & { readonly familyId: string };
+
 /** What a handler is given: parsed by the contract, with the caller beside it. */
 export interface HandlerInput<C extends RouteContract> {
   readonly params: ParamsOf<C>;
   readonly query: QueryOf<C>;
   readonly body: BodyOf<C>;
   /** The caller; on public routes null. */
-  readonly caller: C['access'] extends 'public' ? Principal | null : Principal;
+  readonly caller: C['access'] extends 'public' ? Caller | null : Caller;
 }
 
 /** The request with what guard and interceptor have put on it. */
 export interface SkyberthRequest extends Request {
-  principal?: Principal & { readonly familyId: string };
+  principal?: Caller;
   handlerInput?: { params: unknown; query: unknown; body: unknown };
   rawBody?: Buffer;
 }

@@ -1,7 +1,8 @@
 /** What every feature stands on: configuration, clock, guard, contract, errors, audit. */
 import { type DynamicModule, Global, Module } from '@nestjs/common';
 import { APP_FILTER, APP_GUARD, APP_INTERCEPTOR } from '@nestjs/core';
-import { AccessGuard } from './access.guard.js';
+import passport from 'passport';
+import { AccessGuard, AUTHENTICATOR } from './access.guard.js';
 import { AuditService } from './audit.service.js';
 import { CLOCK, type ClockPort } from './clock.js';
 import { CONFIG, type Config } from './config.js';
@@ -20,13 +21,14 @@ export class PlatformModule {
       providers: [
         { provide: CONFIG, useValue: config },
         { provide: CLOCK, useValue: clock },
+        { provide: AUTHENTICATOR, useFactory: () => new passport.Authenticator() },
         AuditService,
         IdempotencyStore,
         { provide: APP_GUARD, useClass: AccessGuard },
         { provide: APP_INTERCEPTOR, useClass: ContractInterceptor },
         { provide: APP_FILTER, useClass: ProblemFilter },
       ],
-      exports: [CONFIG, CLOCK, AuditService, IdempotencyStore],
+      exports: [CONFIG, CLOCK, AUTHENTICATOR, AuditService, IdempotencyStore],
     };
   }
 }
