@@ -1,8 +1,9 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { totalMs } from '../interval.js';
 import { DAY_MS, HOUR_MS } from '../time/local-time.js';
 import { blackoutIntervals, openIntervals, sellableIntervals } from './availability.js';
-import { type AvailabilityRule, expandRules, weeklyRule } from './rules.js';
+import { type AvailabilityRule, expandRules, ruleInstances, weeklyRule } from './rules.js';
 import { validateRules } from './validate-rules.js';
 
 const OSLO = 'Europe/Oslo';
@@ -65,6 +66,34 @@ describe('availability rules', () => {
     const rule = { ...hours('08:00', '18:00', [1, 3]), rrule: 'FREQ=WEEKLY;BYDAY=MO,WE;UNTIL=20260107T235959Z' };
     expect(rule.startLocal).toBe('2026-01-05T08:00');
     expect(expandRules([rule], Date.UTC(2026, 0, 1), Date.UTC(2026, 2, 1))).toHaveLength(2);
+  });
+
+  it('finds the same instances years later as by walking from the start', () => {
+    const rules = fc.constantFrom(
+      'FREQ=DAILY;INTERVAL=3',
+      'FREQ=DAILY;BYMONTH=3,10;BYDAY=SA,SU',
+      'FREQ=WEEKLY;INTERVAL=2;BYDAY=TU,SU;WKST=MO',
+      'FREQ=WEEKLY;INTERVAL=3;BYDAY=MO,WE,FR;WKST=SU',
+      'FREQ=WEEKLY;BYDAY=MO,TU,WE;BYSETPOS=-1',
+      'FREQ=WEEKLY;UNTIL=20240630T000000Z',
+      'FREQ=MONTHLY;BYDAY=-1FR',
+    );
+    const begin = Date.UTC(2022, 4, 4);
+    fc.assert(
+      fc.property(rules, fc.integer({ min: 0, max: 1_000 }), (rrule, days) => {
+        const rule: AvailabilityRule = {
+          id: 'r',
+          rrule,
+          startLocal: '2022-05-04T09:00',
+          durationMin: 90,
+          timeZone: OSLO,
+        };
+        const fromMs = begin + days * DAY_MS;
+        const toMs = fromMs + 40 * DAY_MS;
+        const walked = ruleInstances(rule, begin, toMs).filter((each) => each.toMs > fromMs);
+        expect(ruleInstances(rule, fromMs, toMs)).toEqual(walked);
+      }),
+    );
   });
 
   it('refuses days that are none', () => {

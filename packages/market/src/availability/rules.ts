@@ -63,9 +63,22 @@ function untilWallClock(until: string | undefined, timeZone: string): Date | nul
   return new Date(zulu === 'Z' ? toWallClock(clock, timeZone) : clock);
 }
 
+/**
+ * The library walks from the first instance on, so a rule of years ago grows slow. Daily and weekly rules without a count
+ * repeat exactly after their interval: they may begin a whole number of intervals later, one before the period.
+ */
+function nearStart(options: Partial<Options>, fromWallMs: number): Partial<Options> {
+  const { freq, interval, count, dtstart } = options;
+  const days = freq === RRule.DAILY ? 1 : freq === RRule.WEEKLY ? 7 : 0;
+  if (days === 0 || typeof count === 'number' || !dtstart) return options;
+  const stepMs = days * (interval ?? 1) * DAY_MS;
+  const steps = Math.floor((fromWallMs - dtstart.getTime()) / stepMs) - 1;
+  return steps <= 0 ? options : { ...options, dtstart: new Date(dtstart.getTime() + steps * stepMs) };
+}
+
 /** Starts of instances, on the station's clock, in `[fromWallMs, toWallMs)`. */
 export function recurrenceStarts(rule: AvailabilityRule, fromWallMs: number, toWallMs: number): number[] {
-  const recurrence = new RRule(parseRecurrence(rule.rrule, rule.startLocal, rule.timeZone));
+  const recurrence = new RRule(nearStart(parseRecurrence(rule.rrule, rule.startLocal, rule.timeZone), fromWallMs));
   return recurrence.between(new Date(fromWallMs), new Date(toWallMs - 1), true).map((date) => date.getTime());
 }
 

@@ -110,6 +110,8 @@ function noticeBlocks(pass: OfferPass, { antenna, nowMs }: OffersInput): Block[]
   const fromSetupMs = nowMs + antenna.setupS * 1000;
   const fromNoticeMs = nowMs + antenna.minNoticeMin * MINUTE_MS;
   const horizonMs = nowMs + antenna.horizonDays * DAY_MS;
+  // Most passes of a search are neither soon nor far off; building nothing for them is what keeps a large search quick.
+  if (pass.aosMs >= fromSetupMs && pass.aosMs >= fromNoticeMs && pass.losMs <= horizonMs) return [];
   const later = 'Choose a later pass.';
   return [
     {
@@ -149,9 +151,10 @@ function noticeBlocks(pass: OfferPass, { antenna, nowMs }: OffersInput): Block[]
 }
 
 function closedBlocks(pass: OfferPass, { antenna }: OffersInput, times: PreparedTimes): Block[] {
-  const whole = { fromMs: pass.aosMs, toMs: pass.losMs };
   const open = windowOf(times.open, pass.aosMs, pass.losMs, times.longestOpenMs);
-  return subtractIntervals([whole], open).map(
+  const [only] = open;
+  if (only !== undefined && only.fromMs <= pass.aosMs && only.toMs >= pass.losMs) return [];
+  return subtractIntervals([{ fromMs: pass.aosMs, toMs: pass.losMs }], open).map(
     (gap): Block => ({
       ...gap,
       code: 'closed',

@@ -29,6 +29,7 @@ export function bookingBlocks(input: {
     pass.losMs + antenna.teardownS * 1000 + reachMs,
     longestGuardMs,
   );
+  if (near.length === 0) return [];
   const taken = near.map(
     ({ booking }): Block => ({
       fromMs: booking.guardFromMs,

@@ -123,7 +123,7 @@ function offersOfPass(pass: OfferPass, prepared: Prepared): PassOffers {
   });
   const best = results.reduce((a, b) => (totalMs(b.saleable) > totalMs(a.saleable) ? b : a));
   const offers = offersOfBeams(pass, input.antenna, results);
-  const lost = keepLost(best.lost, offers);
+  const lost = joinLost(results.length === 1 ? best.lost : outsideOffers(best.lost, offers));
   return { passId: pass.id, offers, lost, refusal: refusalOf(pass, input.antenna, offers, lost) };
 }
 
@@ -196,7 +196,8 @@ function wholeReason(
 
 /** One offer for each saleable piece that no other beam's piece already contains. */
 function offersOfBeams(pass: OfferPass, antenna: OfferAntenna, results: readonly BeamResult[]): Offer[] {
-  const pieces = results.flatMap(({ beam, saleable }) => saleable.map((piece) => ({ ...piece, beam })));
+  const pieces = results.flatMap(({ beam, saleable }) => saleable.map(({ fromMs, toMs }) => ({ fromMs, toMs, beam })));
+  if (results.length === 1) return pieces.map((piece) => offerOf(pass, antenna, piece));
   const contains = (a: Interval, b: Interval): boolean => a.fromMs <= b.fromMs && a.toMs >= b.toMs;
   const same = (a: Interval, b: Interval): boolean => a.fromMs === b.fromMs && a.toMs === b.toMs;
   const kept = pieces.filter(
@@ -230,13 +231,15 @@ function offerOf(pass: OfferPass, antenna: OfferAntenna, piece: Interval & { rea
   };
 }
 
-/** What no beam can sell, with the reasons of the beam that sells most; stretches with one reason that touch are one. */
-function keepLost(lost: readonly LostStretch[], offers: readonly Offer[]): LostStretch[] {
-  const sorted = lost
-    .flatMap((stretch) =>
-      offers.length === 0 ? [stretch] : subtractIntervals([stretch], offers).map((piece) => ({ ...stretch, ...piece })),
-    )
-    .sort((a, b) => a.fromMs - b.fromMs);
+/** What no beam can sell, with the reasons of the beam that sells most. */
+function outsideOffers(lost: readonly LostStretch[], offers: readonly Offer[]): LostStretch[] {
+  return lost.flatMap((stretch) => subtractIntervals([stretch], offers).map((piece) => ({ ...stretch, ...piece })));
+}
+
+/** Sorted by beginning; stretches that touch and have one reason are one. */
+function joinLost(lost: readonly LostStretch[]): LostStretch[] {
+  if (lost.length < 2) return [...lost];
+  const sorted = [...lost].sort((a, b) => a.fromMs - b.fromMs);
   const joined: LostStretch[] = [];
   for (const stretch of sorted) {
     const before = joined.at(-1);

@@ -6,25 +6,46 @@ export const MINUTE_MS = 60_000;
 export const HOUR_MS = 3_600_000;
 export const DAY_MS = 86_400_000;
 
-const zones = new Map<string, IANAZone>();
+/** Days of one zone that are remembered; a thousand years is more than anyone books, so this only bounds hostile input. */
+const MOST_DAYS_REMEMBERED = 400_000;
+
+/** A zone with the offset of each UTC day on which no clock changes, since the engine's own look-up is slow. */
+interface KnownZone {
+  readonly zone: IANAZone;
+  readonly offsetMsByDay: Map<number, number>;
+}
+
+const zones = new Map<string, KnownZone>();
 
 /** Whether the engine's time zone database knows the name. */
 export const isTimeZone = (name: string): boolean => name !== '' && IANAZone.isValidZone(name);
 
-function zoneOf(name: string): IANAZone {
+function zoneOf(name: string): KnownZone {
   const known = zones.get(name);
   if (known !== undefined) return known;
   if (!isTimeZone(name))
     throw new MarketError('bad time zone', `“${name}” is not a time zone of the IANA database, such as Europe/Oslo.`, {
       timeZone: name,
     });
-  const zone = IANAZone.create(name);
-  zones.set(name, zone);
-  return zone;
+  const made = { zone: IANAZone.create(name), offsetMsByDay: new Map<number, number>() };
+  zones.set(name, made);
+  return made;
+}
+
+/** NaN stands for a day on which the clock changes: there each instant is looked up. */
+function offsetIn({ zone, offsetMsByDay }: KnownZone, timeMs: number): number {
+  const day = Math.floor(timeMs / DAY_MS);
+  let offset = offsetMsByDay.get(day);
+  if (offset === undefined) {
+    const first = zone.offset(day * DAY_MS) * MINUTE_MS;
+    offset = zone.offset((day + 1) * DAY_MS) * MINUTE_MS === first ? first : Number.NaN;
+    if (offsetMsByDay.size < MOST_DAYS_REMEMBERED) offsetMsByDay.set(day, offset);
+  }
+  return Number.isNaN(offset) ? zone.offset(timeMs) * MINUTE_MS : offset;
 }
 
 /** Milliseconds that local time is ahead of UTC at an instant. */
-export const offsetMs = (timeMs: number, timeZone: string): number => zoneOf(timeZone).offset(timeMs) * MINUTE_MS;
+export const offsetMs = (timeMs: number, timeZone: string): number => offsetIn(zoneOf(timeZone), timeMs);
 
 /**
  * A wall-clock reading as a number: the UTC milliseconds at which UTC clocks would show it. Never an instant; calendar
@@ -42,12 +63,12 @@ export const toWallClock = (timeMs: number, timeZone: string): WallClockMs => ti
 export function fromWallClock(wallClockMs: WallClockMs, timeZone: string): number {
   const zone = zoneOf(timeZone);
   // A day either way is outside every zone's offset, so these are the offsets before and after any change near by.
-  const before = zone.offset(wallClockMs - DAY_MS) * MINUTE_MS;
-  const after = zone.offset(wallClockMs + DAY_MS) * MINUTE_MS;
+  const before = offsetIn(zone, wallClockMs - DAY_MS);
+  const after = offsetIn(zone, wallClockMs + DAY_MS);
   const first = wallClockMs - before;
-  if (before === after || zone.offset(first) * MINUTE_MS === before) return first;
+  if (before === after || offsetIn(zone, first) === before) return first;
   const second = wallClockMs - after;
-  return zone.offset(second) * MINUTE_MS === after ? second : first;
+  return offsetIn(zone, second) === after ? second : first;
 }
 
 const LOCAL_DATE_TIME = /^(\d{4})-(\d{2})-(\d{2})T([01]\d|2[0-3]):([0-5]\d)$/;
