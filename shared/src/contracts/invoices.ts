@@ -23,8 +23,16 @@ export const Invoice = InvoiceSummary.extend({
   supplier: Party,
   customer: Party,
   suppliedOnUtc: UtcTime,
+  /** What was sold, in one line: the contact, its station and its time. */
+  subject: z.string(),
   lines: z.array(
-    z.object({ description: z.string(), quantity: z.string(), unitMinor: z.int().nullable(), amountMinor: z.int() }),
+    z.object({
+      description: z.string(),
+      quantity: z.string(),
+      unitMinor: z.int().nullable(),
+      discountMinor: z.int().describe('already taken off the amount'),
+      amountMinor: z.int(),
+    }),
   ),
   vatRatePercent: z.number(),
   vatNote: z.string(),
