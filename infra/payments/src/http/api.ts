@@ -217,7 +217,7 @@ function parseForm(text: string): Record<string, unknown> {
 
 /** Waits, unless the caller hangs up first: then nobody is kept waiting and the key is free again. */
 async function waitWhileConnected(response: Response, delayMs: number): Promise<void> {
-  if (delayMs === 0) return;
+  if (delayMs === 0 || response.closed) return;
   const hungUp = new AbortController();
   const onClose = (): void => hungUp.abort();
   response.once('close', onClose);
