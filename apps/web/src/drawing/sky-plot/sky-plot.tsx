@@ -189,18 +189,22 @@ function Vessel({ rose, track, at }: { rose: Rose; track: readonly TrackPoint[];
   );
 }
 
-/** The Sun with its keep-off circle. The words stand outside the shore's line, towards the middle of the plot. */
+/** The Sun with its keep-off circle. Its words stand in the corner outside the rim, so that they cross no shore. */
 function SunMark({ rose, sun, isLarge }: { rose: Rose; sun: SunPlace; isLarge: boolean }) {
-  const { x, y } = toPoint(rose, sun.azimuthDeg, sun.elevationDeg);
-  const keepOffPx = (rose.radiusPx * sun.keepOffDeg) / 90;
-  const isRight = x > rose.centreX;
-  const inward = toPoint(rose, sun.azimuthDeg, Math.max(sun.elevationDeg + sun.keepOffDeg + 4, 24));
+  const { x, y } = toPoint(rose, sun.azimuthDeg, Math.max(0, sun.elevationDeg));
+  const keepOffPx = Math.max(7, (rose.radiusPx * sun.keepOffDeg) / 90);
+  const side = x > rose.centreX ? 1 : -1;
+  const boxPx = 2 * rose.centreX;
+  const words = { x: side === 1 ? boxPx - 3 : 3, y: y > rose.centreY ? boxPx - 9 : 10 };
+  const corner = { x: words.x - side * 40, y: words.y + (y > rose.centreY ? -9 : 9) };
+  const reach = Math.hypot(corner.x - x, corner.y - y);
+  const start = { x: x + ((corner.x - x) * keepOffPx) / reach, y: y + ((corner.y - y) * keepOffPx) / reach };
   return (
     <g>
       <circle
         cx={x}
         cy={y}
-        r={Math.max(keepOffPx, 7)}
+        r={keepOffPx}
         fill="var(--sk-brass-wash)"
         stroke="var(--sk-brass-ink)"
         strokeWidth="1.4"
@@ -208,20 +212,20 @@ function SunMark({ rose, sun, isLarge }: { rose: Rose; sun: SunPlace; isLarge: b
       />
       <circle cx={x} cy={y} r={isLarge ? 4.2 : 3} fill="var(--sk-brass)" stroke="var(--sk-ink)" strokeWidth="1" />
       {isLarge && (
-        <text
-          x={inward.x + (isRight ? -2 : 2)}
-          y={inward.y}
-          textAnchor={isRight ? 'end' : 'start'}
-          dominantBaseline="central"
-          fontSize="12"
-          fontWeight="700"
-          fill="var(--sk-brass-ink)"
-          stroke="var(--sk-sea)"
-          strokeWidth="4"
-          paintOrder="stroke"
-        >
-          Sun, keep {formatDegrees(sun.keepOffDeg, 0)} off
-        </text>
+        <>
+          <path d={pathThrough([start, corner])} stroke="var(--sk-brass-ink)" strokeWidth="1" strokeDasharray="3 2.4" />
+          <text
+            x={words.x}
+            y={words.y}
+            textAnchor={side === 1 ? 'end' : 'start'}
+            dominantBaseline="central"
+            fontSize="12"
+            fontWeight="700"
+            fill="var(--sk-brass-ink)"
+          >
+            Sun, keep {formatDegrees(sun.keepOffDeg, 0)} off
+          </text>
+        </>
       )}
     </g>
   );
