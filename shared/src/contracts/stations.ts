@@ -242,7 +242,7 @@ export const stationRoutes = {
     params: IdParams,
     body: StationInput,
     response: Station,
-    errors: ['not-found', 'wrong-state'],
+    errors: ['not-found', 'already-exists', 'wrong-state'],
   }),
   submitStation: defineRoute({
     name: 'submitStation',
@@ -302,7 +302,7 @@ export const stationRoutes = {
     path: '/api/antennas/:id',
     summary: 'Change size, mount, limits and booking rules',
     body: AntennaInput,
-    errors: ['not-found'],
+    errors: ['not-found', 'already-exists'],
   }),
   setBands: defineRoute({
     ...antennaRoute,

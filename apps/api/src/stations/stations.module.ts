@@ -1,0 +1,18 @@
+/** Stations and antennas: what an owner describes once, and publishes. */
+import { Module } from '@nestjs/common';
+import { MailModule } from '../mail/mail.module.js';
+import { AntennaCatalogue } from './antenna-catalogue.js';
+import { AntennasController } from './antennas.controller.js';
+import { AntennasRepository } from './antennas.repository.js';
+import { AntennasService } from './antennas.service.js';
+import { StationsController } from './stations.controller.js';
+import { StationsRepository } from './stations.repository.js';
+import { StationsService } from './stations.service.js';
+
+@Module({
+  imports: [MailModule],
+  controllers: [StationsController, AntennasController],
+  providers: [AntennaCatalogue, AntennasRepository, AntennasService, StationsRepository, StationsService],
+  exports: [AntennaCatalogue],
+})
+export class StationsModule {}
