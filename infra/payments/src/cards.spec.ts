@@ -65,7 +65,7 @@ describe('test cards', () => {
     const setup = await stripe.setupIntents.create({
       customer: customer.id,
       payment_method: card,
-      payment_method_types: ['card'],
+      allowed_payment_method_types: ['card'],
       confirm: true,
     });
     expect(setup.status).toBe('requires_action');
@@ -131,7 +131,7 @@ describe('test cards', () => {
     const intent = await stripe.paymentIntents.create({
       amount: 900,
       currency: 'eur',
-      payment_method_types: ['card'],
+      allowed_payment_method_types: ['card'],
       metadata: { secret: 'x' },
     });
     const call = (path: string, fields: Record<string, string>) =>

@@ -6,9 +6,19 @@ import { bench, pay, refusal, sdk } from './testing.js';
 describe('idempotency keys', () => {
   it('repeat the first answer, and say so', async () => {
     const { stripe } = await bench();
-    const params = { amount: 900, currency: 'eur', payment_method_types: ['card'], metadata: { a: '1', b: '2' } };
+    const params = {
+      amount: 900,
+      currency: 'eur',
+      allowed_payment_method_types: ['card'],
+      metadata: { a: '1', b: '2' },
+    };
     const first = await stripe.paymentIntents.create(params, { idempotencyKey: 'berth-1' });
-    const turned = { metadata: { b: '2', a: '1' }, currency: 'eur', amount: 900, payment_method_types: ['card'] };
+    const turned = {
+      metadata: { b: '2', a: '1' },
+      currency: 'eur',
+      amount: 900,
+      allowed_payment_method_types: ['card'],
+    };
     const second = await stripe.paymentIntents.create(turned, { idempotencyKey: 'berth-1' });
     expect(second).toEqual(first);
     const { headers } = second.lastResponse as unknown as { headers: Record<string, string> };
@@ -33,7 +43,11 @@ describe('idempotency keys', () => {
 
   it('repeat a refusal too, and charge nothing twice', async () => {
     const { stripe } = await bench();
-    const intent = await stripe.paymentIntents.create({ amount: 900, currency: 'eur', payment_method_types: ['card'] });
+    const intent = await stripe.paymentIntents.create({
+      amount: 900,
+      currency: 'eur',
+      allowed_payment_method_types: ['card'],
+    });
     const confirm = () =>
       stripe.paymentIntents.confirm(
         intent.id,
@@ -59,7 +73,7 @@ describe('idempotency keys', () => {
       amount: 900,
       currency: 'eur',
       payment_method: 'pm_card_slowAnswer',
-      payment_method_types: ['card'],
+      allowed_payment_method_types: ['card'],
       confirm: true,
     };
     const impatient = sdk(service.url, undefined, { timeout: 400 });

@@ -22,7 +22,7 @@ async function openPayment(tools: Bench): Promise<{ id: string; path: string }> 
     amount: 12_345,
     currency: 'eur',
     capture_method: 'manual',
-    payment_method_types: ['card'],
+    allowed_payment_method_types: ['card'],
     description: 'Contact <b>7</b>',
   });
   return { id: intent.id, path: `/pay/${intent.client_secret}?return_url=${encodeURIComponent(BACK)}` };
@@ -109,7 +109,10 @@ describe('the card page', () => {
   it('saves a card for a customer', async () => {
     const tools = await bench();
     const customer = await tools.stripe.customers.create({});
-    const setup = await tools.stripe.setupIntents.create({ customer: customer.id, payment_method_types: ['card'] });
+    const setup = await tools.stripe.setupIntents.create({
+      customer: customer.id,
+      allowed_payment_method_types: ['card'],
+    });
     await submit(tools, `/pay/${setup.client_secret}`, { token: 'pm_card_mastercard' });
     expect((await tools.stripe.customers.listPaymentMethods(customer.id)).data).toMatchObject([
       { card: { brand: 'mastercard' } },

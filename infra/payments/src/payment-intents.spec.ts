@@ -109,7 +109,11 @@ describe('payment intents', () => {
 
   it('goes step by step: without a method, with one, confirmed', async () => {
     const { stripe } = await bench();
-    const intent = await stripe.paymentIntents.create({ amount: 700, currency: 'USD', payment_method_types: ['card'] });
+    const intent = await stripe.paymentIntents.create({
+      amount: 700,
+      currency: 'USD',
+      allowed_payment_method_types: ['card'],
+    });
     expect(intent).toMatchObject({ status: 'requires_payment_method', currency: 'usd', payment_method: null });
     expect(intent.client_secret).toContain(`${intent.id}_secret_`);
     expect((await refusal(stripe.paymentIntents.confirm(intent.id))).code).toBe('payment_intent_unexpected_state');

@@ -102,7 +102,7 @@ export async function pay(
   return stripe.paymentIntents.create({
     currency: 'eur',
     payment_method: 'pm_card_visa',
-    payment_method_types: ['card'],
+    allowed_payment_method_types: ['card'],
     confirm: true,
     ...given,
   });

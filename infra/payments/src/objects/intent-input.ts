@@ -19,24 +19,28 @@ export function readMethod(call: Call): Stripe.PaymentMethod | undefined {
   return id === undefined ? undefined : usableMethod(call, id);
 }
 
+type MethodTypes = Pick<Stripe.PaymentIntent, 'automatic_payment_methods' | 'payment_method_types'> & {
+  allowed_payment_method_types: 'card'[] | null;
+};
+
 /** How the intent may be paid. Without a word about it, whatever is switched on: that is the API's own default. */
-export function readMethodTypes(
-  input: Input,
-): Pick<Stripe.PaymentIntent, 'automatic_payment_methods' | 'payment_method_types'> {
-  const types = input.texts('payment_method_types');
+export function readMethodTypes(input: Input): MethodTypes {
+  const types = input.texts('allowed_payment_method_types');
   const automatic = input.group('automatic_payment_methods');
   const enabled = automatic?.flag('enabled') ?? types === undefined;
   const redirects = automatic?.choice('allow_redirects', ['always', 'never'] as const) ?? 'always';
-  if (types?.some((type) => type !== 'card'))
-    throw badParameter('payment_method_types', 'Only "card" is held by this local service.');
+  if (types?.some((type) => type !== 'card')) {
+    throw badParameter('allowed_payment_method_types', 'Only "card" is held by this local service.');
+  }
   if (types && enabled) {
     throw badParameter(
-      'payment_method_types',
-      'Give payment_method_types or automatic_payment_methods, not both.',
+      'allowed_payment_method_types',
+      'Give allowed_payment_method_types or automatic_payment_methods, not both.',
       'parameters_exclusive',
     );
   }
   return {
+    allowed_payment_method_types: types ? ['card'] : null,
     automatic_payment_methods: enabled ? { enabled: true, allow_redirects: redirects } : null,
     payment_method_types: ['card'],
   };

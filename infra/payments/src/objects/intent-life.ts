@@ -234,7 +234,7 @@ function needsReturnUrl(intent: Stripe.PaymentIntent, choice: ConfirmChoice): vo
   if (!automatic?.enabled || automatic.allow_redirects === 'never' || choice.returnUrl !== null || choice.offSession)
     return;
   throw refused(
-    'This PaymentIntent accepts payment methods that redirect. Give a return_url, or create it with payment_method_types or with automatic_payment_methods[allow_redirects]=never.',
+    'This PaymentIntent accepts payment methods that redirect. Give a return_url, or create it with allowed_payment_method_types or with automatic_payment_methods[allow_redirects]=never.',
     { code: 'payment_intent_invalid_parameter', param: 'return_url' },
   );
 }
