@@ -99,7 +99,7 @@ function writeFacts(pen: PdfPen, invoice: Invoice): number {
   ] as const;
   let y = TOP + 56;
   for (const [label, value] of facts) {
-    pen.line(label ?? '', { x: 405, y }, SMALL);
+    pen.line(label ?? '', { x: 392, y }, SMALL);
     pen.line(value ?? '', { x: RIGHT, y, toLeft: true }, PLAIN);
     y += 16;
   }

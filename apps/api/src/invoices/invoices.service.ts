@@ -65,6 +65,10 @@ export class InvoiceService implements OnModuleInit {
     return this.repository.ofBooking(bookingId, 'invoice');
   }
 
+  creditOfBooking(tx: Db, bookingId: string): InvoiceRow | undefined {
+    return this.repository.ofBooking(bookingId, 'credit note', tx);
+  }
+
   list(reader: Principal, query: { page: number; pageSize: number }) {
     const { rows, total } = this.repository.page(reader, query);
     return { items: rows.map(summaryOf), total, page: query.page, pageSize: query.pageSize };

@@ -59,6 +59,15 @@ export class PaymentOrders {
     });
   }
 
+  /** Closes one page that nobody may pay on any more. */
+  closePage(tx: Db, checkoutId: string): void {
+    this.outbox.enqueue(tx, {
+      kind: RELEASE,
+      dedupeKey: `${RELEASE}:page:${checkoutId}`,
+      payload: { intentId: null, checkoutId } satisfies z.input<typeof ReleaseOrder>,
+    });
+  }
+
   /** Asks for what events do not tell: the card, and how long the reservation lasts. */
   read(tx: Db, intentId: string): void {
     this.outbox.enqueue(tx, {

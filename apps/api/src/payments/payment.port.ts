@@ -30,6 +30,8 @@ export interface PageFacts {
   readonly checkoutId: string;
   readonly status: 'open' | 'complete' | 'expired';
   readonly url: string | null;
+  /** Whether paying there keeps the card for later. */
+  readonly savesCard: boolean;
   /** The intent behind the page, once the provider has made one. */
   readonly intentId: string | null;
 }
@@ -50,8 +52,6 @@ export interface PageOrder extends PaymentOrder {
   /** Where the provider sends the buyer afterwards. */
   readonly returnUrl: string;
   readonly cancelUrl: string;
-  /** When the page closes by itself, UTC milliseconds; the provider takes 30 minutes to 24 hours from now. */
-  readonly closesMs: number;
 }
 
 export interface CardFacts {
@@ -83,6 +83,7 @@ export interface ProviderEvent {
 export interface PaymentPort {
   createCustomer(customer: { organisationId: string; name: string; email: string }): Promise<string>;
   cards(customerId: string): Promise<CardFacts[]>;
+  /** The page stays open for a day unless it is closed; the end of a hold closes it. */
   openPage(order: PageOrder): Promise<PageFacts>;
   readPage(checkoutId: string): Promise<PageFacts>;
   /** Nobody can pay on the page any more, unless it was already paid: the answer says so. */

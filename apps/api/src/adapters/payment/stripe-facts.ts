@@ -3,6 +3,7 @@ import type Stripe from 'stripe';
 import type { CardFacts, IntentFacts, PageFacts, ProviderEvent } from '../../payments/payment.port.js';
 
 export const BOOKING_KEY = 'skyberth_booking';
+export const SAVES_CARD_KEY = 'skyberth_saves_card';
 
 const STATUS: Readonly<Record<Stripe.PaymentIntent.Status, IntentFacts['status']>> = {
   requires_payment_method: 'unpaid',
@@ -36,6 +37,7 @@ export const pageFacts = (session: Stripe.Checkout.Session): PageFacts => ({
   checkoutId: session.id,
   status: pageStatus(session.status),
   url: session.url,
+  savesCard: session.metadata?.[SAVES_CARD_KEY] === 'true',
   intentId: idOf(session.payment_intent),
 });
 

@@ -12,7 +12,15 @@ import type {
 } from '../../payments/payment.port.js';
 import { CONFIG, type Config } from '../../platform/config.js';
 import { DomainError } from '../../platform/domain-error.js';
-import { BOOKING_KEY, cardFacts, eventFacts, intentFacts, pageFacts, refusalSentence } from './stripe-facts.js';
+import {
+  BOOKING_KEY,
+  cardFacts,
+  eventFacts,
+  intentFacts,
+  pageFacts,
+  refusalSentence,
+  SAVES_CARD_KEY,
+} from './stripe-facts.js';
 
 /** A person waits for most of these calls; what takes longer is found again by its idempotency key. */
 const TIMEOUT_MS = 12_000;
@@ -64,7 +72,7 @@ export class StripeAdapter implements PaymentPort {
           mode: 'payment',
           customer: customerId,
           client_reference_id: bookingId,
-          metadata: { [BOOKING_KEY]: bookingId },
+          metadata: { [BOOKING_KEY]: bookingId, [SAVES_CARD_KEY]: String(order.saveCard) },
           line_items: [
             {
               quantity: 1,
@@ -84,7 +92,6 @@ export class StripeAdapter implements PaymentPort {
           },
           success_url: order.returnUrl,
           cancel_url: order.cancelUrl,
-          expires_at: Math.ceil(order.closesMs / 1000),
         },
         { idempotencyKey },
       ),

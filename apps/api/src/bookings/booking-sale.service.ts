@@ -1,0 +1,163 @@
+/** From a hold to a sold contact, or to nothing: secured funds, the owner's answer, and time that ran out. */
+import { Injectable } from '@nestjs/common';
+import { InvoiceService } from '../invoices/invoices.service.js';
+import { PaymentOrders } from '../payments/payment-orders.js';
+import type { Db } from '../platform/transaction.js';
+import { BookingNotices, contactName } from './booking-notices.js';
+import { BookingTransitions, BY_CLOCK, BY_PAYMENT, type Mover } from './booking-transitions.js';
+import { moneyText, utcText } from './booking-words.js';
+import type { BookingRow } from './bookings.repository.js';
+
+@Injectable()
+export class BookingSale {
+  constructor(
+    private readonly transitions: BookingTransitions,
+    private readonly notices: BookingNotices,
+    private readonly invoices: InvoiceService,
+    private readonly orders: PaymentOrders,
+  ) {}
+
+  /** The price of a held booking is reserved. Where the owner answers each request (frozen with the hold), ask; else sell. */
+  fundsSecured(tx: Db, booking: BookingRow): BookingRow {
+    const secured = `${moneyText(booking.toPayMinor, booking.currency)} are reserved`;
+    if (booking.answerByMs === null) {
+      return this.confirm(tx, booking, {
+        cause: 'funds secured',
+        mover: BY_PAYMENT,
+        sentence: `Confirmed: ${secured}.`,
+      });
+    }
+    const until = utcText(booking.answerByMs);
+    const asked = this.transitions.apply(tx, booking.id, {
+      cause: 'funds secured, owner asked',
+      mover: BY_PAYMENT,
+      sentence: `The station is asked; ${secured}. Answer due by ${until}.`,
+    });
+    const name = contactName(this.notices.names(tx, booking));
+    this.notices.toStation(tx, booking, {
+      kind: 'asked',
+      subject: `Please answer by ${until}: ${name}`,
+      sentences: ['An operator asks for this contact. Accept or decline it; without an answer the request lapses.'],
+    });
+    this.notices.toBuyer(tx, booking, {
+      kind: 'asked',
+      subject: `The station is asked: ${name}`,
+      sentences: [`${secured} and nothing is charged before the contact. The station answers by ${until}.`],
+    });
+    return asked;
+  }
+
+  accept(tx: Db, booking: BookingRow, mover: Mover): BookingRow {
+    return this.confirm(tx, booking, { cause: 'owner accepts', mover, sentence: 'The station accepted; confirmed.' });
+  }
+
+  decline(tx: Db, booking: BookingRow, decision: { mover: Mover; reason: string }): BookingRow {
+    const { mover, reason } = decision;
+    const sentence = `The station declined: ${reason}`;
+    const declined = this.transitions.apply(tx, booking.id, { cause: 'owner declines', mover, sentence });
+    this.orders.release(tx, booking.id);
+    this.notices.toBuyer(tx, booking, {
+      kind: 'declined',
+      subject: `Declined: ${contactName(this.notices.names(tx, booking))}`,
+      sentences: [sentence, 'What was reserved on your card is let go; nothing is charged.'],
+    });
+    return declined;
+  }
+
+  /** The buyer gives a hold back. */
+  letGo(tx: Db, booking: BookingRow, mover: Mover): BookingRow {
+    const released = this.transitions.apply(tx, booking.id, {
+      cause: 'let go',
+      mover,
+      sentence: 'The hold was let go.',
+    });
+    this.orders.release(tx, booking.id);
+    return released;
+  }
+
+  /** The time of a hold is over. */
+  lapseHold(tx: Db, booking: BookingRow): BookingRow {
+    const sentence = 'The hold ran out; nothing is charged.';
+    const lapsed = this.transitions.apply(tx, booking.id, { cause: 'hold ran out', mover: BY_CLOCK, sentence });
+    this.orders.release(tx, booking.id);
+    return lapsed;
+  }
+
+  /** The station did not answer in time, or the contact would have begun. */
+  answerOverdue(tx: Db, booking: BookingRow): BookingRow {
+    const sentence = 'The station did not answer in time; nothing is charged.';
+    const lapsed = this.transitions.apply(tx, booking.id, { cause: 'answer overdue', mover: BY_CLOCK, sentence });
+    this.orders.release(tx, booking.id);
+    const name = contactName(this.notices.names(tx, booking));
+    const subject = `No answer in time: ${name}`;
+    this.notices.toBuyer(tx, booking, { kind: 'unanswered', subject, sentences: [sentence, 'Look for another pass.'] });
+    this.notices.toStation(tx, booking, {
+      kind: 'unanswered',
+      subject,
+      sentences: ['The request has lapsed; the time is free again.'],
+    });
+    return lapsed;
+  }
+
+  /** Money came for a hold that is over: it goes back, and the buyer hears why. */
+  tooLate(tx: Db, booking: BookingRow, intentId: string): void {
+    this.orders.releaseIntent(tx, intentId);
+    const sentence = 'The payment came after the hold had ended. What was reserved is let go; nothing is charged.';
+    this.transitions.note(tx, booking, { kind: 'payment too late', sentence, mover: BY_PAYMENT });
+    this.notices.toBuyer(tx, booking, {
+      kind: `too late:${intentId}`,
+      subject: `Not booked, the hold had ended: ${contactName(this.notices.names(tx, booking))}`,
+      sentences: [sentence, 'If the pass is still for sale you can hold it again.'],
+    });
+  }
+
+  private confirm(
+    tx: Db,
+    booking: BookingRow,
+    move: { cause: 'funds secured' | 'owner accepts'; mover: Mover; sentence: string },
+  ): BookingRow {
+    const confirmed = this.transitions.apply(tx, booking.id, move);
+    const names = this.notices.names(tx, booking);
+    const name = contactName(names);
+    const subject = `${name}, ${utcText(booking.aosMs)} to ${utcText(booking.losMs)}`;
+    const invoice = this.invoices.issue(tx, booking, subject);
+    this.notices.toBuyer(tx, booking, {
+      kind: 'confirmed',
+      subject: `Confirmed: ${name}`,
+      sentences: ['The contact is yours. The price is reserved on your card and taken after the contact.'],
+      attachments: [calendarOf(booking)],
+    });
+    this.notices.toBilling(tx, booking, {
+      kind: 'invoice',
+      subject: `Invoice ${invoice.number}: ${name}`,
+      sentences: [
+        'The invoice is attached. Nothing is to be transferred: the card that was given is charged after the contact.',
+      ],
+      attachments: [pdfOf(invoice)],
+    });
+    this.notices.toStation(tx, booking, {
+      kind: 'confirmed',
+      subject: `Sold: ${name}`,
+      sentences: [
+        `${names.operatorName} has bought this contact. Report how it went after LOS; you are paid for reported contacts.`,
+      ],
+      attachments: [calendarOf(booking)],
+    });
+    return confirmed;
+  }
+}
+
+export const CALENDAR_ATTACHMENT = 'contact calendar';
+
+const calendarOf = (booking: BookingRow) => ({
+  fileName: `berth-${booking.number}.ics`,
+  contentType: 'text/calendar; charset=utf-8',
+  ref: { kind: CALENDAR_ATTACHMENT, id: booking.id },
+});
+
+/** The PDF of an invoice or credit note as an attachment. */
+export const pdfOf = (invoice: { id: string; number: string }) => ({
+  fileName: `${invoice.number}.pdf`,
+  contentType: 'application/pdf',
+  ref: { kind: 'invoice', id: invoice.id },
+});
