@@ -7,18 +7,15 @@ export interface CautionProps {
   readonly title: string;
   /** Short sentences that defer to the licence, local rules and the interlock. */
   readonly children: ReactNode;
-  /** Level of the title in the page's outline. Default 3. */
-  readonly level?: 2 | 3 | 4;
 }
 
 /** A buoy: the caution that stands where a dangerous or unlawful act could happen. */
-export function Caution({ title, children, level = 3 }: CautionProps) {
-  const Title = `h${level}` as const;
+export function Caution({ title, children }: CautionProps) {
   return (
     <section className={classes.caution} role="note" aria-label={`Caution: ${title}`}>
       <CautionSign />
       <div>
-        <Title className={classes.cautionTitle}>{title}</Title>
+        <strong className={classes.cautionTitle}>{title}</strong>
         <div className={classes.cautionText}>{children}</div>
       </div>
     </section>

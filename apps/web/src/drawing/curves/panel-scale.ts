@@ -7,12 +7,12 @@ export interface PanelScale {
   readonly ticks: readonly number[];
 }
 
-const MOST_TICKS = 5;
+const MOST_STEPS = 5;
 const ROUND_STEPS = [1, 2, 2.5, 5, 10];
 
 /** Smallest round step with which a span needs at most a few grid lines. */
-export function roundStep(span: number): number {
-  const raw = span / MOST_TICKS;
+export function roundStep(span: number, mostSteps = MOST_STEPS): number {
+  const raw = span / mostSteps;
   const power = 10 ** Math.floor(Math.log10(raw));
   return (ROUND_STEPS.find((step) => step * power >= raw * (1 - 1e-9)) ?? 10) * power;
 }
@@ -20,7 +20,7 @@ export function roundStep(span: number): number {
 /** Grid for a span that may be fixed on either side; without any value it runs from 0 to 1. */
 export function panelScale(
   values: Float32Array,
-  fixed: { min?: number | undefined; max?: number | undefined } = {},
+  fixed: { min?: number | undefined; max?: number | undefined; mostSteps?: number } = {},
 ): PanelScale {
   let low = Number.POSITIVE_INFINITY;
   let high = Number.NEGATIVE_INFINITY;
@@ -33,7 +33,7 @@ export function panelScale(
   low = fixed.min ?? low;
   high = fixed.max ?? high;
   if (high - low < 1e-9) high = low + 1;
-  const step = roundStep(high - low);
+  const step = roundStep(high - low, fixed.mostSteps);
   const min = fixed.min ?? Math.floor(low / step) * step;
   const max = fixed.max ?? Math.ceil(high / step) * step;
   const ticks: number[] = [];

@@ -8,6 +8,8 @@ import { timeMarks } from './time-bar.js';
 
 const DEFAULT_PX = 104;
 const PAD_PX = 5;
+/** Grid lines stand about this far apart. */
+const STEP_PX = 36;
 
 interface PanelProps {
   readonly panel: CurvePanel;
@@ -22,7 +24,11 @@ interface PanelProps {
 export function Panel({ panel, chart, x, widthPx, lineMs, isPointed }: PanelProps) {
   const { fromMs, toMs, aosMs, losMs, nowMs } = chart;
   const heightPx = panel.heightPx ?? DEFAULT_PX;
-  const scale = panelScale(panel.values, { min: panel.minValue, max: panel.maxValue });
+  const scale = panelScale(panel.values, {
+    min: panel.minValue,
+    max: panel.maxValue,
+    mostSteps: Math.max(2, Math.round(heightPx / STEP_PX)),
+  });
   const y = (value: number) => PAD_PX + (1 - (value - scale.min) / (scale.max - scale.min)) * (heightPx - 2 * PAD_PX);
   const share = (atMs: number) => (atMs - fromMs) / (toMs - fromMs);
   const flownMs = nowMs === undefined ? losMs : Math.max(aosMs, Math.min(losMs, nowMs));
