@@ -102,24 +102,10 @@ export function gcrfToTeme(utcMs: number, meanSidereal1982Rad: number): Rotation
   return multiply(aboutZ(apparentSiderealRad(utcMs, t) - meanSidereal1982Rad), gcrfToTrueOfDate(t));
 }
 
-/**
- * GCRF to the mean equator and equinox of J2000 (EME2000): the frame bias of IERS Conventions 2010, 0.02 arc seconds.
- */
-export const GCRF_TO_EME2000: Rotation = (() => {
-  const rightAscension = -0.0146 * ARCSECOND_RAD;
-  const xi = -0.016617 * ARCSECOND_RAD;
-  const eta = -0.0068192 * ARCSECOND_RAD;
-  return multiply(aboutX(-eta), multiply(aboutY(xi), aboutZ(rightAscension)));
-})();
-
-/** Axes turned by an angle about one of them, as in the Explanatory Supplement: R1, R2, R3. */
+/** Axes turned by an angle about one of them, as in the Explanatory Supplement: R1 and R3. */
 export function aboutX(angleRad: number): Rotation {
   const [s, c] = [Math.sin(angleRad), Math.cos(angleRad)];
   return Float64Array.of(1, 0, 0, 0, c, s, 0, -s, c);
-}
-export function aboutY(angleRad: number): Rotation {
-  const [s, c] = [Math.sin(angleRad), Math.cos(angleRad)];
-  return Float64Array.of(c, 0, -s, 0, 1, 0, s, 0, c);
 }
 export function aboutZ(angleRad: number): Rotation {
   const [s, c] = [Math.sin(angleRad), Math.cos(angleRad)];

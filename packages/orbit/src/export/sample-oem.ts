@@ -38,7 +38,8 @@ export function sampleOem(source: TrajectorySource, request: OemRequest): Oem {
       },
     );
   }
-  const steps = Math.ceil((toMs - fromMs) / (1000 * stepS));
+  // The small allowance keeps a rounding error from making a last step of nothing.
+  const steps = Math.ceil((toMs - fromMs) / (1000 * stepS) - 1e-9);
   const timesMs = Float64Array.from({ length: steps + 1 }, (_, row) => Math.min(toMs, fromMs + row * stepS * 1000));
   const states = new Float64Array(6 * timesMs.length);
   const state = new Float64Array(6);

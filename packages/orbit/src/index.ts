@@ -1,0 +1,35 @@
+/** Where spacecraft are, when a station sees them, and what the link between them carries. */
+
+export { formatCcsdsTime, parseCcsdsTime } from './ephemeris/ccsds-time.js';
+export * from './ephemeris/hybrid-source.js';
+export { fromUtcMs, TIME_SYSTEMS, type TimeSystem, taiMinusUtcS, toUtcMs } from './ephemeris/leap-seconds.js';
+export type { Oem, OemFault, OemFrame, OemInterpolation, OemSegment } from './ephemeris/oem.js';
+export { type EphemerisSpan, type OemSource, oemSource } from './ephemeris/oem-source.js';
+export * from './ephemeris/parse-oem.js';
+export { escapeXml, readXmlTree, type XmlElement, type XmlReading } from './ephemeris/xml-tree.js';
+export * from './export/csv.js';
+export * from './export/icalendar.js';
+export * from './export/oem-writer.js';
+export * from './export/pointing-csv.js';
+export * from './export/sample-oem.js';
+export * from './mount/mount.js';
+export * from './mount/mount-coverage.js';
+export * from './orbit-error.js';
+export * from './radio/antenna.js';
+export * from './radio/atmosphere.js';
+export * from './radio/coding.js';
+export * from './radio/compatibility.js';
+export * from './radio/decibel.js';
+export * from './radio/doppler.js';
+export * from './radio/free-space.js';
+export * from './radio/gas.js';
+export * from './radio/link-along-pass.js';
+export * from './radio/link-budget.js';
+export * from './radio/noise.js';
+export * from './radio/rain.js';
+export * from './sun/daylight.js';
+export * from './sun/illumination.js';
+export * from './sun/refraction.js';
+export * from './sun/sun-interference.js';
+export * from './sun/sun-position.js';
+export * from './types.js';
