@@ -56,6 +56,7 @@ CREATE TABLE IF NOT EXISTS timers (
   ref TEXT NOT NULL
 ) STRICT;
 CREATE INDEX IF NOT EXISTS timers_due ON timers (due_ms, seq);
+CREATE INDEX IF NOT EXISTS timers_by_ref ON timers (ref, task);
 
 CREATE TABLE IF NOT EXISTS deliveries (
   seq INTEGER PRIMARY KEY AUTOINCREMENT,

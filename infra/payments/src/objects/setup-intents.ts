@@ -68,7 +68,15 @@ export function confirmSetup(
 ): Stripe.SetupIntent {
   if (!['requires_payment_method', 'requires_confirmation', 'requires_action'].includes(intent.status))
     throw unexpectedState(intent, 'confirmed');
-  const card = testCardOf(cardMemory(call, method.id));
+  const memory = cardMemory(call, method.id);
+  const owner = idOf(method.customer);
+  if (memory.usedUp || (owner !== null && owner !== idOf(intent.customer))) {
+    throw refused('The PaymentMethod belongs to another customer, or was used up or detached before. Make a new one.', {
+      code: 'setup_intent_invalid_parameter',
+      param: 'payment_method',
+    });
+  }
+  const card = testCardOf(memory);
   const chosen: Stripe.SetupIntent = { ...intent, payment_method: method.id, next_action: null };
   if (card.decline) throw failSetup(call, chosen, method, refusalOf(card.decline));
   if (!card.authentication || card.authentication === 'on_session') return succeed(call, chosen, method);
