@@ -9,9 +9,10 @@ export class Clock {
 
   constructor(
     private readonly store: Store,
+    startOffsetMs = 0,
     private readonly machineNowMs: () => number = Date.now,
   ) {
-    this.#offsetMs = Number(store.readNote('clock_offset_ms') ?? 0);
+    this.#offsetMs = Number(store.readNote('clock_offset_ms') ?? startOffsetMs);
   }
 
   nowMs(): number {

@@ -25,7 +25,7 @@ export class Desk {
 
   constructor(readonly settings: Settings) {
     this.store = new Store(settings.dataDir);
-    this.clock = new Clock(this.store);
+    this.clock = new Clock(this.store, settings.startOffsetMs);
   }
 
   /** The object, or the API's 404 naming the parameter that pointed at it. */

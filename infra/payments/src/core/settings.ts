@@ -16,6 +16,8 @@ export interface Settings {
   /** Waiting time before the 2nd, 3rd, ... delivery attempt; after the last one the delivery has failed. */
   retryDelaysMs: readonly number[];
   deliveryTimeoutMs: number;
+  /** How far ahead (behind: negative) of the machine an empty service begins; the demo begins months ago and moves forward. */
+  startOffsetMs: number;
   /** Hosts besides this machine that webhooks may be sent to and that the pages may send a browser back to. */
   trustedHosts: readonly string[];
   /** A webhook endpoint with a known secret, kept in step at every start. */
@@ -38,6 +40,7 @@ export const DEFAULT_SETTINGS: Settings = {
   slowAnswerMs: 100 * SECOND_MS,
   retryDelaysMs: [SECOND_MS, 5 * SECOND_MS, 30 * SECOND_MS, 5 * MINUTE_MS, HOUR_MS, 6 * HOUR_MS, 24 * HOUR_MS],
   deliveryTimeoutMs: 10 * SECOND_MS,
+  startOffsetMs: 0,
   trustedHosts: [],
   webhook: undefined,
 };
