@@ -206,6 +206,8 @@ export const BerthRequest = z.object({
   antennaId: Id,
   spacecraftId: Id,
   need: Need.default('downlink'),
+  /** Bands of the search; they decide which radios and so which lowest elevation count. */
+  bands: z.array(z.string()).max(8).default([]),
   aosUtc: UtcTime,
   losUtc: UtcTime,
 });
@@ -245,7 +247,7 @@ export const marketRoutes = {
     body: SearchInput,
     response: SearchResult,
     idempotencyKey: 'none',
-    errors: ['not-found', 'elements-unusable', 'unavailable'],
+    errors: ['not-found', 'elements-unusable', 'too-large', 'unavailable'],
   }),
   passDetail: defineRoute({
     name: 'passDetail',
@@ -258,6 +260,6 @@ export const marketRoutes = {
     body: BerthRequest,
     response: PassDetail,
     idempotencyKey: 'none',
-    errors: ['not-found', 'elements-unusable'],
+    errors: ['not-found', 'not-for-sale', 'elements-unusable'],
   }),
 } as const;

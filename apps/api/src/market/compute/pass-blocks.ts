@@ -1,0 +1,138 @@
+/**
+ * Passes day by day, remembered. A day of one element set over one version of one antenna always gives the same passes,
+ * whatever was asked before or with it, so a repeated or shifted search pays only for what is new, and a hold recomputes to
+ * the very millisecond what the search has shown.
+ */
+import { findPasses, OrbitError, type Pass } from '@skyberth/orbit';
+import type { AntennaInput, ElementsSpan } from '../workers/job-types.js';
+import { antennaKey, type Horizons } from './horizons.js';
+import { joinDays, type Stay } from './stay.js';
+import { stretchOf } from './stretch.js';
+import type { TrackTables } from './track-table.js';
+import { WeightedCache } from './weighted-cache.js';
+
+const DAY_MS = 86_400_000;
+/** What a kept pass weighs with the text made from it, roughly, in bytes. */
+const STAY_WEIGHT = 2_000;
+const BLOCK_WEIGHT = 300;
+const MAX_WEIGHT = 96_000_000;
+
+/** The stays of one day, or why there are none. */
+interface Block {
+  readonly stays: readonly Stay[];
+  readonly fault: string | null;
+}
+
+export interface Viewpoint {
+  readonly antenna: AntennaInput;
+  /** Nothing below it counts, whatever the mask says. */
+  readonly floorDeg: number;
+}
+
+export interface BlocksQuestion {
+  readonly span: ElementsSpan;
+  readonly antennas: readonly Viewpoint[];
+  readonly fromMs: number;
+  readonly toMs: number;
+}
+
+export class PassBlocks {
+  private readonly kept = new WeightedCache<Block>(MAX_WEIGHT);
+
+  constructor(
+    private readonly horizons: Horizons,
+    private readonly tables: TrackTables,
+  ) {}
+
+  /**
+   * Stays that touch the period, by antenna. One that reaches over its end is followed for a day further; one that goes on
+   * beyond that is as good as permanent and is cut to the period.
+   */
+  touching(question: BlocksQuestion): { stays: Stay[][]; fault: string | null } {
+    const { span, antennas, fromMs, toMs } = question;
+    if (antennas.length === 0 || toMs <= fromMs) return { stays: antennas.map(() => []), fault: null };
+    const firstDay = Math.floor(fromMs / DAY_MS);
+    const lastDay = Math.ceil(toMs / DAY_MS) - 1;
+    let fault: string | null = null;
+    const pieces: Stay[][] = antennas.map(() => []);
+    const add = (day: number, atFront: boolean, only: readonly number[]): void => {
+      this.day(span, antennas, only, day).forEach((block, place) => {
+        const own = pieces[only[place] ?? 0];
+        fault ??= block.fault;
+        if (own === undefined) return;
+        if (atFront) own.unshift(...block.stays);
+        else own.push(...block.stays);
+      });
+    };
+    const all = antennas.map((_, index) => index);
+    for (let day = firstDay; day <= lastDay; day += 1) add(day, false, all);
+    const cutAtStart = all.filter((index) => reachesBack(pieces[index]?.[0], firstDay * DAY_MS, fromMs));
+    if (cutAtStart.length > 0) add(firstDay - 1, true, cutAtStart);
+    const cutAtEnd = all.filter((index) => reachesOn(pieces[index]?.at(-1), (lastDay + 1) * DAY_MS, toMs));
+    if (cutAtEnd.length > 0) add(lastDay + 1, false, cutAtEnd);
+    const stays = pieces.map((own, index) =>
+      joinDays(own)
+        .filter((stay) => stay.losMs > fromMs && stay.aosMs < toMs)
+        .map((stay) => this.cutToPeriod(stay, question, index)),
+    );
+    return { stays, fault };
+  }
+
+  /** The blocks of one day for some of the antennas; missing ones are computed together. */
+  private day(span: ElementsSpan, antennas: readonly Viewpoint[], only: readonly number[], day: number): Block[] {
+    return only.map((index) => {
+      const view = antennas[index] as Viewpoint;
+      const key = `${span.digest}|${antennaKey(view.antenna)}|${view.floorDeg}|${day}`;
+      const known = this.kept.get(key);
+      if (known !== undefined) return known;
+      const block = this.compute(span, view, day);
+      this.kept.set(key, block, BLOCK_WEIGHT + block.stays.length * STAY_WEIGHT);
+      return block;
+    });
+  }
+
+  private compute(span: ElementsSpan, { antenna, floorDeg }: Viewpoint, day: number): Block {
+    try {
+      const passes = findPasses({
+        source: this.tables.source(span),
+        site: antenna.site,
+        mask: this.horizons.of(antenna).mask,
+        minElevationDeg: floorDeg,
+        fromMs: day * DAY_MS,
+        toMs: (day + 1) * DAY_MS,
+      });
+      return { stays: passes.map((pass) => stayOf(pass, span.elementSetId)), fault: null };
+    } catch (error) {
+      if (!(error instanceof OrbitError)) throw error;
+      return { stays: [], fault: error.message };
+    }
+  }
+
+  private cutToPeriod(stay: Stay, { span, antennas, fromMs, toMs }: BlocksQuestion, index: number): Stay {
+    if (!stay.clippedStart && !stay.clippedEnd) return stay;
+    const { antenna } = antennas[index] as Viewpoint;
+    return stretchOf({
+      stay,
+      source: this.tables.source(span),
+      site: antenna.site,
+      fromMs: stay.clippedStart ? Math.max(stay.aosMs, fromMs) : stay.aosMs,
+      toMs: stay.clippedEnd ? Math.min(stay.losMs, toMs) : stay.losMs,
+    });
+  }
+}
+
+const reachesBack = (first: Stay | undefined, dayStartMs: number, fromMs: number): boolean =>
+  first !== undefined && first.clippedStart && first.aosMs <= dayStartMs + 1 && first.losMs > fromMs;
+
+const reachesOn = (last: Stay | undefined, dayEndMs: number, toMs: number): boolean =>
+  last !== undefined && last.clippedEnd && last.losMs >= dayEndMs - 1 && last.aosMs < toMs;
+
+function stayOf(pass: Pass, elementSetId: string): Stay {
+  return {
+    ...pass,
+    elementSetId,
+    aosMs: Math.round(pass.aosMs),
+    tcaMs: Math.round(pass.tcaMs),
+    losMs: Math.round(pass.losMs),
+  };
+}

@@ -1,0 +1,149 @@
+/** Gathers from the other features what a question to the pass engine needs. */
+import { Injectable } from '@nestjs/common';
+import { BookingRepository } from '../bookings/bookings.repository.js';
+import { notFound } from '../platform/domain-error.js';
+import { ElementsService } from '../spacecraft/elements.service.js';
+import { SpacecraftService } from '../spacecraft/spacecraft.service.js';
+import { AntennaCatalogue, type SaleAntenna } from '../stations/antenna-catalogue.js';
+import { groupBy } from './group-by.js';
+import { MarketRepository } from './market.repository.js';
+import type { AntennaInput, BusyInput, CraftInput, ElementsSpan } from './workers/job-types.js';
+
+export interface Period {
+  readonly fromMs: number;
+  readonly toMs: number;
+}
+
+/** Volume is counted by calendar month, which reaches at most this far to either side of a contact. */
+const MONTH_MS = 32 * 86_400_000;
+
+@Injectable()
+export class MarketInputs {
+  constructor(
+    private readonly repository: MarketRepository,
+    private readonly bookings: BookingRepository,
+    private readonly fleet: SpacecraftService,
+    private readonly elements: ElementsService,
+    private readonly catalogue: AntennaCatalogue,
+  ) {}
+
+  /** Antennas on sale, sorted by station and antenna name. */
+  onSale(period: Period, stationIds: readonly string[]): SaleAntenna[] {
+    return this.catalogue.onSale({ ...period, stationIds });
+  }
+
+  /** One antenna, on sale or not: a contact outlives the sale. Throws `not-found`. */
+  antenna(id: string, period: Period): SaleAntenna {
+    const antenna = this.catalogue.byId(id, period);
+    if (antenna === null) throw notFound('antenna');
+    return antenna;
+  }
+
+  /** The caller's own spacecraft with radios, elements and contacts. Throws `not-found` where one is not theirs. */
+  craft(operatorId: string, ids: readonly string[], period: Period): CraftInput[] {
+    const rows = this.fleet.forMarket(operatorId, ids);
+    const busy = this.bookings.spacecraftBusyIn(ids, period.fromMs, period.toMs);
+    const names = this.repository.antennaNames([...new Set(busy.map((each) => each.antennaId))]);
+    return rows.map((row) => ({
+      id: row.id,
+      name: row.name,
+      shortName: row.shortName,
+      spans: this.spansOf(row.id, period),
+      radios: row.radios,
+      contacts: busy
+        .filter((each) => each.spacecraftId === row.id)
+        .map((each) => ({
+          fromMs: each.aosMs,
+          toMs: each.losMs,
+          antennaId: each.antennaId,
+          antennaName: names.get(each.antennaId) ?? 'another antenna',
+        })),
+    }));
+  }
+
+  /** Antennas as the engine takes them, with what keeps them busy and what the caller has bought there. */
+  forEngine(operatorId: string, antennas: readonly SaleAntenna[], period: Period): AntennaInput[] {
+    const busy = groupBy(
+      this.bookings.busyIn(
+        antennas.map((antenna) => antenna.id),
+        period.fromMs,
+        period.toMs,
+      ),
+      (each) => each.antennaId,
+    );
+    const tiered = antennas.some((antenna) => antenna.price.volume.length > 0);
+    const bought = tiered
+      ? groupBy(
+          this.repository.boughtAt(operatorId, period.fromMs - MONTH_MS, period.toMs + MONTH_MS),
+          (each) => each.stationId,
+        )
+      : new Map<string, Period[]>();
+    return antennas.map((antenna) => ({
+      ...engineFields(antenna),
+      busy: (busy.get(antenna.id) ?? []).map(
+        (each): BusyInput => ({
+          beam: each.beam,
+          guardFromMs: each.guardFromMs,
+          guardToMs: each.guardToMs,
+          aosMs: each.aosMs,
+          losMs: each.losMs,
+          startAzimuthDeg: each.startAzimuthDeg,
+          endAzimuthDeg: each.endAzimuthDeg,
+          own:
+            each.operatorId === operatorId
+              ? { bookingId: each.bookingId, spacecraftId: each.spacecraftId, state: each.state }
+              : null,
+        }),
+      ),
+      bought: (bought.get(antenna.stationId) ?? []).map(({ fromMs, toMs }) => ({ fromMs, toMs })),
+    }));
+  }
+
+  /**
+   * The element sets in force over a period, each for the passes whose highest point lies in its stretch. The first and the
+   * last serve beyond the period too, for passes that reach over its ends.
+   */
+  private spansOf(spacecraftId: string, { fromMs, toMs }: Period): ElementsSpan[] {
+    const spans = this.elements.inForceOver(spacecraftId, fromMs, toMs);
+    return spans.map(({ fromMs: startMs, toMs: endMs, elements }) => ({
+      fromMs: startMs <= fromMs ? Number.NEGATIVE_INFINITY : startMs,
+      toMs: endMs >= toMs ? Number.POSITIVE_INFINITY : endMs,
+      elementSetId: elements.id,
+      digest: elements.digest,
+      elementSet: elements.elementSet,
+    }));
+  }
+}
+
+/** Only what the engine uses: everything here is copied to a thread. */
+function engineFields(antenna: SaleAntenna): Omit<AntennaInput, 'busy' | 'bought'> {
+  const { id, version, name, site, mask, mount, tiltDeg, bands, timeZone, weekly, blackouts, price } = antenna;
+  const { slewAzimuthDegPerS, slewElevationDegPerS, lowestReceiveDeg, lowestTransmitDeg, setupS, teardownS } = antenna;
+  const { beams, minNoticeMin, horizonDays, minContactS, maxContactS, partsAllowed } = antenna;
+  return {
+    id,
+    version,
+    name,
+    site,
+    mask,
+    mount,
+    tiltDeg,
+    bands,
+    timeZone,
+    weekly,
+    blackouts,
+    price,
+    slewAzimuthDegPerS,
+    slewElevationDegPerS,
+    lowestReceiveDeg,
+    lowestTransmitDeg,
+    setupS,
+    teardownS,
+    beams,
+    minNoticeMin,
+    horizonDays,
+    minContactS,
+    maxContactS,
+    partsAllowed,
+  };
+}

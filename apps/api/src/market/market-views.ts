@@ -1,0 +1,107 @@
+/** What the market knows, in the form of the wire. */
+import type { FoundStation, Need, PassDetail, SearchResult } from '@skyberth/shared';
+import { freshnessOf } from '../spacecraft/freshness.js';
+import type { SaleAntenna } from '../stations/antenna-catalogue.js';
+import { cautionsFor } from './cautions.js';
+import { radiosFor } from './compute/objections.js';
+import type { Period } from './market-inputs.js';
+import { freshnessFor } from './offer.service.js';
+import type { PassAnswer } from './pass-finder.js';
+import { takenIntervals } from './taken.js';
+import type { AntennaInput, CraftInput } from './workers/job-types.js';
+
+type FoundCraft = SearchResult['spacecraft'][number];
+
+const utc = (timeMs: number): string => new Date(timeMs).toISOString();
+export const utcInterval = (each: Period): { fromUtc: string; toUtc: string } => ({
+  fromUtc: utc(each.fromMs),
+  toUtc: utc(each.toMs),
+});
+
+/** Puts the passes, which are text already, into the object that the head begins. */
+export function withPasses(head: string, passes: readonly Uint8Array[]): Uint8Array {
+  const some = passes.filter((each) => each.byteLength > 0);
+  const parts: Uint8Array[] = [Buffer.from(`${head.slice(0, -1)},"passes":[`)];
+  some.forEach((each, index) => {
+    if (index > 0) parts.push(Buffer.from(','));
+    parts.push(each);
+  });
+  parts.push(Buffer.from(']}'));
+  return Buffer.concat(parts);
+}
+
+export function foundCraft(craft: CraftInput, fault: string | null, period: Period, nowMs: number): FoundCraft {
+  const { id, name, shortName, spans } = craft;
+  const span = spans.findLast((each) => each.fromMs < period.toMs);
+  if (span === undefined) {
+    const none = { elementsId: null, elementsEpochUtc: null, ageH: null, timingErrorS: null };
+    return { id, name, shortName, ...none, freshness: 'none', fault: fault ?? `${name} has no elements yet.` };
+  }
+  const { epochMs, meanMotionRevPerDay } = span.elementSet;
+  const { freshness, ageH, timingErrorS } = freshnessOf(epochMs, meanMotionRevPerDay, nowMs);
+  return {
+    id,
+    name,
+    shortName,
+    elementsId: span.elementSetId,
+    elementsEpochUtc: utc(epochMs),
+    ageH,
+    timingErrorS,
+    freshness,
+    fault,
+  };
+}
+
+export function foundAntenna(
+  antenna: SaleAntenna,
+  busy: AntennaInput['busy'],
+  period: Period,
+): FoundStation['antennas'][number] {
+  const within = (each: Period): boolean => each.fromMs < period.toMs && each.toMs > period.fromMs;
+  return {
+    id: antenna.id,
+    name: antenna.name,
+    diameterM: antenna.diameterM,
+    bands: [...new Set(antenna.bands.map((band) => band.band))],
+    currency: antenna.price.currency,
+    perMinuteMinor: antenna.price.perMinuteMinor,
+    acceptance: antenna.acceptance,
+    blackouts: antenna.blackouts.filter(within).map((each) => ({ ...utcInterval(each), reason: each.reason })),
+    taken: takenIntervals(antenna.beams, busy, period).map(utcInterval),
+  };
+}
+
+/** What the card and the contact page share. */
+export function detailView(answer: PassAnswer, need: Need): Omit<PassDetail, 'reasons' | 'quote'> {
+  const { outcome, sale, craft, span } = answer;
+  if (outcome.detail === null) throw new Error('A pass in full must come with its track.');
+  const { track, sun, illumination, links, untrackable } = outcome.detail;
+  const { freshness, ageH, timingErrorS } = freshnessFor(answer);
+  return {
+    spacecraft: { id: craft.id, name: craft.name, shortName: craft.shortName },
+    antenna: {
+      id: sale.id,
+      name: sale.name,
+      stationName: sale.stationName,
+      ownerName: sale.ownerName,
+      mask: sale.mask.map(([azimuthDeg, elevationDeg]): [number, number] => [azimuthDeg, elevationDeg]),
+      timeZone: sale.timeZone,
+    },
+    geometry: outcome.pass,
+    aosUtc: utc(outcome.aosMs),
+    losUtc: utc(outcome.losMs),
+    track,
+    sun,
+    illumination,
+    links,
+    elements: { id: span.elementSetId, epochUtc: utc(span.elementSet.epochMs), ageH, timingErrorS, freshness },
+    cautions: cautionsFor({
+      need,
+      sun,
+      radiosOnFile: radiosFor(craft, need, []).length > 0,
+      stale: freshness === 'stale',
+      untrackable,
+    }),
+    acceptance: sale.acceptance,
+  };
+}

@@ -1,0 +1,196 @@
+/** Finding contact time: searches, and one pass or booked contact in full. */
+import { Inject, Injectable } from '@nestjs/common';
+import {
+  type FoundStation,
+  type Need,
+  type PassDetail,
+  type ResponseOf,
+  type routes,
+  type SearchInput,
+  SearchResult,
+} from '@skyberth/shared';
+import { CLOCK, type ClockPort } from '../platform/clock.js';
+import { DomainError } from '../platform/domain-error.js';
+import type { SaleAntenna } from '../stations/antenna-catalogue.js';
+import { groupBy } from './group-by.js';
+import { MarketInputs, type Period } from './market-inputs.js';
+import { detailView, foundAntenna, foundCraft, utcInterval, withPasses } from './market-views.js';
+import { type BerthRequest, NOT_ON_SALE, OfferService } from './offer.service.js';
+import { PassFinder } from './pass-finder.js';
+import type { AntennaInput, CraftInput, SearchJob, SearchOutcome } from './workers/job-types.js';
+import { PASS_ENGINE, type PassEngine } from './workers/pass-engine.js';
+
+/** A board of more passes than this serves nobody, and its answer would be tens of megabytes. */
+export const MOST_PASSES = 10_000;
+/** What lies just outside the period may bear on its first and last passes. */
+const ABOUT_MS = 86_400_000;
+
+/** What the market needs to know of a booking to show its geometry. */
+export interface BookedContact {
+  readonly operatorId: string;
+  readonly spacecraftId: string;
+  readonly antennaId: string;
+  readonly need: Need;
+  readonly aosMs: number;
+  readonly losMs: number;
+}
+
+const Head = SearchResult.omit({ passes: true });
+
+@Injectable()
+export class MarketService {
+  constructor(
+    private readonly inputs: MarketInputs,
+    private readonly finder: PassFinder,
+    private readonly offers: OfferService,
+    @Inject(PASS_ENGINE) private readonly engine: PassEngine,
+    @Inject(CLOCK) private readonly clock: ClockPort,
+  ) {}
+
+  /** Stations with at least one antenna on sale. */
+  stations(): ResponseOf<typeof routes.listMarketStations> {
+    const nowMs = this.clock.nowMs();
+    const stations = groupBy(this.inputs.onSale({ fromMs: nowMs, toMs: nowMs }, []), (each) => each.stationId);
+    return {
+      items: [...stations.values()].flatMap((antennas) => {
+        const [first] = antennas;
+        if (first === undefined) return [];
+        const { stationId: id, stationName: name, country, site } = first;
+        return [
+          {
+            id,
+            name,
+            country,
+            latitudeDeg: site.latitudeDeg,
+            longitudeDeg: site.longitudeDeg,
+            antennas: antennas.length,
+          },
+        ];
+      }),
+    };
+  }
+
+  /**
+   * The whole answer as JSON bytes, in the form of `SearchResult`. Throws `not-found` for someone else's spacecraft and
+   * `too-large` where there are more passes than can be shown.
+   */
+  async search(operatorId: string, input: SearchInput, signal: AbortSignal): Promise<Uint8Array> {
+    const nowMs = this.clock.nowMs();
+    const period: Period = { fromMs: Date.parse(input.fromUtc), toMs: Date.parse(input.toUtc) };
+    const about: Period = { fromMs: period.fromMs - ABOUT_MS, toMs: period.toMs + ABOUT_MS };
+    const craft = this.inputs.craft(operatorId, [...new Set(input.spacecraftIds)], about);
+    const sale = this.inputs.onSale(about, input.stationIds);
+    const antennas = this.inputs.forEngine(operatorId, sale, about);
+    const job = (some: readonly CraftInput[], cancel: SharedArrayBuffer): SearchJob => ({
+      kind: 'search',
+      nowMs,
+      ...period,
+      wish: input,
+      spacecraft: some,
+      antennas,
+      maxPasses: MOST_PASSES,
+      cancel,
+    });
+    const [outcomes, stations] = await Promise.all([
+      this.inLanes(craft, job, signal),
+      this.foundStations(sale, antennas, period),
+    ]);
+    const found = outcomes.map(foundOrRefused);
+    const passes = found.reduce((sum, each) => sum + each.passes, 0);
+    if (passes > MOST_PASSES) throw tooMany();
+    const faults = new Map(found.flatMap((each) => each.faults.map((fault) => [fault.spacecraftId, fault.sentence])));
+    const head = Head.parse({
+      computedUtc: utc(nowMs),
+      stations,
+      spacecraft: craft.map((each) => foundCraft(each, faults.get(each.id) ?? null, period, nowMs)),
+      counts: { forSale: found.reduce((sum, each) => sum + each.forSale, 0), passes },
+    });
+    return withPasses(
+      JSON.stringify(head),
+      found.map((each) => each.json),
+    );
+  }
+
+  /** One pass, or a part of it, with everything that the card shows. */
+  async detail(operatorId: string, request: BerthRequest): Promise<PassDetail> {
+    const { spacecraftId, antennaId, need, bands } = request;
+    const [aosMs, losMs] = [Date.parse(request.aosUtc), Date.parse(request.losUtc)];
+    const question = { operatorId, spacecraftId, antennaId, need, bands, aosMs, losMs };
+    const answer = await this.finder.find({ ...question, withTrack: true, booked: false });
+    const reasons = answer.sale.onSale ? answer.outcome.reasons : [NOT_ON_SALE, ...answer.outcome.reasons];
+    return {
+      ...detailView(answer, need),
+      reasons: [...reasons],
+      quote: reasons.length > 0 ? null : this.offers.quote(operatorId, answer),
+    };
+  }
+
+  /** A booked contact by the elements in force for it, whatever has become of the antenna since. No price, no offer. */
+  async geometryOf(booking: BookedContact): Promise<PassDetail> {
+    const answer = await this.finder.find({ ...booking, bands: [], withTrack: true, booked: true });
+    return { ...detailView(answer, booking.need), reasons: [], quote: null };
+  }
+
+  /** Runs the spacecraft of each lane in that lane. When the asker hangs up, all of them stop at the next spacecraft. */
+  private async inLanes(
+    craft: readonly CraftInput[],
+    job: (some: readonly CraftInput[], cancel: SharedArrayBuffer) => SearchJob,
+    signal: AbortSignal,
+  ): Promise<SearchOutcome[]> {
+    const cancel = new SharedArrayBuffer(4);
+    const stop = (): void => {
+      Atomics.store(new Int32Array(cancel), 0, 1);
+    };
+    signal.addEventListener('abort', stop, { once: true });
+    const lanes = groupBy(craft, (each) => String(this.engine.laneOf(each.id)));
+    try {
+      return await Promise.all(
+        [...lanes.values()].map((some) => this.engine.run(job(some, cancel), some[0]?.id ?? '')),
+      );
+    } finally {
+      signal.removeEventListener('abort', stop);
+    }
+  }
+
+  private async foundStations(
+    sale: readonly SaleAntenna[],
+    antennas: readonly AntennaInput[],
+    period: Period,
+  ): Promise<FoundStation[]> {
+    const busy = new Map(antennas.map((antenna) => [antenna.id, antenna.busy]));
+    const stations = [...groupBy(sale, (antenna) => antenna.stationId).values()];
+    const sites = stations.flatMap(([first]) => (first === undefined ? [] : [first.site]));
+    const { nights } = await this.engine.run({ kind: 'nights', ...period, sites }, 'nights');
+    return stations.flatMap((some, index) => {
+      const [first] = some;
+      if (first === undefined) return [];
+      return [
+        {
+          id: first.stationId,
+          name: first.stationName,
+          ownerName: first.ownerName,
+          country: first.country,
+          timeZone: first.timeZone,
+          latitudeDeg: first.site.latitudeDeg,
+          longitudeDeg: first.site.longitudeDeg,
+          nights: (nights[index] ?? []).map(utcInterval),
+          antennas: some.map((antenna) => foundAntenna(antenna, busy.get(antenna.id) ?? [], period)),
+        },
+      ];
+    });
+  }
+}
+
+const utc = (timeMs: number): string => new Date(timeMs).toISOString();
+
+const tooMany = (): DomainError =>
+  new DomainError(
+    'too-large',
+    `That search finds more than ${MOST_PASSES.toLocaleString('en')} passes. Choose a shorter period, fewer spacecraft, or some of the stations.`,
+  );
+
+function foundOrRefused(outcome: SearchOutcome): Extract<SearchOutcome, { kind: 'found' }> {
+  if (outcome.kind === 'found') return outcome;
+  if (outcome.kind === 'too many') throw tooMany();
+  throw new DomainError('unavailable', 'The search was given up because nobody waited for it.');
+}

@@ -1,0 +1,209 @@
+/**
+ * What the market asks its pass engine and what comes back. Everything here crosses into worker threads, so it is plain
+ * data: no functions, no classes. Times are UTC milliseconds.
+ */
+import type { Interval, LadderStep, OfferBlackout, PriceCard, Quote as PriceQuote } from '@skyberth/market';
+import type { ElementSet, GeodeticSite, MaskPoint } from '@skyberth/orbit';
+import type {
+  AntennaBand,
+  BookingState,
+  Mount,
+  Need,
+  PassDetail,
+  PassGeometry,
+  Radio,
+  Reason,
+  WeeklyRule,
+} from '@skyberth/shared';
+import type { z } from 'zod';
+
+/** One element set and the passes it answers for: those whose highest point lies in `[fromMs, toMs)`. */
+export interface ElementsSpan extends Interval {
+  readonly elementSetId: string;
+  /** Names the content of the set; the same digest always gives the same passes. */
+  readonly digest: string;
+  readonly elementSet: ElementSet;
+}
+
+export interface CraftInput {
+  readonly id: string;
+  readonly name: string;
+  readonly shortName: string;
+  /** Sorted and touching; empty where the spacecraft has no elements. */
+  readonly spans: readonly ElementsSpan[];
+  readonly radios: readonly Radio[];
+  /** Contacts it already has, on whichever antenna. */
+  readonly contacts: readonly (Interval & { readonly antennaId: string; readonly antennaName: string })[];
+}
+
+/** A booking that keeps a beam of the antenna. */
+export interface BusyInput {
+  readonly beam: number;
+  readonly guardFromMs: number;
+  readonly guardToMs: number;
+  readonly aosMs: number;
+  readonly losMs: number;
+  readonly startAzimuthDeg: number | null;
+  readonly endAzimuthDeg: number | null;
+  /** Set only where the booking is the caller's own: nobody learns whom another contact serves. */
+  readonly own: { readonly bookingId: string; readonly spacecraftId: string; readonly state: BookingState } | null;
+}
+
+/** An antenna on sale with all that bounds what it can sell in the period asked for. */
+export interface AntennaInput {
+  readonly id: string;
+  /** Rises with every change that can move a pass. */
+  readonly version: number;
+  readonly name: string;
+  readonly site: GeodeticSite;
+  readonly mask: readonly MaskPoint[];
+  readonly mount: z.infer<typeof Mount>;
+  readonly tiltDeg: number;
+  readonly slewAzimuthDegPerS: number;
+  readonly slewElevationDegPerS: number;
+  readonly lowestReceiveDeg: number;
+  readonly lowestTransmitDeg: number;
+  readonly bands: readonly AntennaBand[];
+  readonly setupS: number;
+  readonly teardownS: number;
+  readonly beams: number;
+  readonly minNoticeMin: number;
+  readonly horizonDays: number;
+  readonly minContactS: number;
+  readonly maxContactS: number;
+  readonly partsAllowed: boolean;
+  readonly timeZone: string;
+  readonly weekly: readonly WeeklyRule[];
+  readonly blackouts: readonly OfferBlackout[];
+  /** The card that a purchase now would freeze. */
+  readonly price: PriceCard & { readonly ladder: readonly LadderStep[] };
+  readonly busy: readonly BusyInput[];
+  /** What the caller has bought at this station, for volume tiers. */
+  readonly bought: readonly Interval[];
+}
+
+/** What the person wants to hear or send, and within which limits. */
+export interface Wish {
+  readonly need: Need;
+  /** Names of bands; empty for whatever the radios use. */
+  readonly bands: readonly string[];
+  readonly lowestElevationDeg: number;
+  readonly shortestS: number;
+  /** In minor units of each antenna's own currency. */
+  readonly highestPriceMinor: number | null;
+}
+
+export interface SearchJob {
+  readonly kind: 'search';
+  readonly nowMs: number;
+  readonly fromMs: number;
+  readonly toMs: number;
+  readonly wish: Wish;
+  readonly spacecraft: readonly CraftInput[];
+  readonly antennas: readonly AntennaInput[];
+  /** The search stops with `tooMany` beyond so many passes. */
+  readonly maxPasses: number;
+  /** One 32-bit cell shared with the asker; anything but zero asks the search to stop. */
+  readonly cancel: SharedArrayBuffer | null;
+}
+
+export type SearchOutcome =
+  | {
+      readonly kind: 'found';
+      /** The passes as JSON, comma-separated, without the brackets around them. Objects this many would hold up the event loop. */
+      readonly json: Uint8Array;
+      readonly passes: number;
+      readonly forSale: number;
+      /** What stopped a spacecraft's elements from being used, by spacecraft; the others are complete. */
+      readonly faults: readonly { readonly spacecraftId: string; readonly sentence: string }[];
+    }
+  | { readonly kind: 'too many' }
+  | { readonly kind: 'cancelled' };
+
+/** One pass in full, or the part of it that is asked for. */
+export interface PassJob {
+  readonly kind: 'pass';
+  readonly nowMs: number;
+  readonly need: Need;
+  readonly bands: readonly string[];
+  readonly aosMs: number;
+  readonly losMs: number;
+  readonly spacecraft: CraftInput;
+  readonly antenna: AntennaInput;
+  /** Whether to work out track, links and Sun as well. */
+  readonly withTrack: boolean;
+  /** A booked contact stays what it is: its times are taken as given, and no offer is made. */
+  readonly booked: boolean;
+}
+
+export type PassOutcome =
+  | {
+      readonly kind: 'pass';
+      readonly elementSetId: string;
+      /** The whole stay above the mask. */
+      readonly pass: PassGeometry;
+      /** The stretch asked for, snapped to what is for sale; milliseconds are whole. */
+      readonly aosMs: number;
+      readonly tcaMs: number;
+      readonly losMs: number;
+      readonly part: PassGeometry;
+      /** Why it cannot be sold; empty where it can. */
+      readonly reasons: readonly Reason[];
+      /** Before VAT; null where nothing is for sale. */
+      readonly price: PriceQuote | null;
+      readonly detail: PassTrack | null;
+    }
+  | { readonly kind: 'no pass'; readonly reasons: readonly Reason[] }
+  | { readonly kind: 'elements unusable'; readonly sentence: string };
+
+/** The part of `PassDetail` that is geometry and radio. */
+export type PassTrack = Pick<PassDetail, 'track' | 'sun' | 'illumination' | 'links'> & {
+  readonly untrackable: readonly string[];
+};
+
+export const CONTACT_FILES = ['pointing.csv', 'frequency.csv', 'ephemeris.oem', 'elements.omm'] as const;
+export type ContactFileName = (typeof CONTACT_FILES)[number];
+
+/** One file for flying a contact. */
+export interface FileJob {
+  readonly kind: 'file';
+  readonly file: ContactFileName;
+  readonly createdMs: number;
+  readonly need: Need;
+  readonly aosMs: number;
+  readonly tcaMs: number;
+  readonly losMs: number;
+  readonly spacecraft: CraftInput;
+  readonly antenna: AntennaInput;
+  readonly stationName: string;
+  readonly operatorName: string;
+}
+
+export type FileOutcome =
+  | { readonly kind: 'file'; readonly text: string }
+  | { readonly kind: 'elements unusable'; readonly sentence: string };
+
+/** Hours of night at places, for the board's paper. */
+export interface NightsJob {
+  readonly kind: 'nights';
+  readonly fromMs: number;
+  readonly toMs: number;
+  readonly sites: readonly GeodeticSite[];
+}
+
+export interface NightsOutcome {
+  readonly kind: 'nights';
+  /** In the order of the sites. */
+  readonly nights: readonly (readonly Interval[])[];
+}
+
+export type EngineJob = SearchJob | PassJob | FileJob | NightsJob;
+
+/** The answer that belongs to a job. */
+export type OutcomeOf<J extends EngineJob> = J extends SearchJob
+  ? SearchOutcome
+  : J extends PassJob
+    ? PassOutcome
+    : J extends FileJob
+      ? FileOutcome
+      : NightsOutcome;
