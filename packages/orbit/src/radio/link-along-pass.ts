@@ -1,7 +1,7 @@
 /** The link over a whole pass: the margin at each instant and the volume that comes down while it is enough. */
 import type { LookAngles } from '../types.js';
 import { type Polarisation, polarisationTiltDeg } from './antenna.js';
-import { gasColumn } from './atmosphere.js';
+import { type GasColumn, gasColumn } from './atmosphere.js';
 import { type LinkBudget, type LinkInputs, linkBudget } from './link-budget.js';
 import { gOverTUnderSky } from './noise.js';
 import { type RainClimate, rainAttenuationDb } from './rain.js';
@@ -28,6 +28,8 @@ export interface PassLink {
   readonly site: { readonly latitudeDeg: number; readonly altitudeM: number };
   /** Rain of the place and the share of the year to be prepared for; none given means clear sky. */
   readonly rain?: RainClimate & { readonly exceedancePercent: number };
+  /** The shells above this site at this frequency, where the caller keeps them for many passes. */
+  readonly gas?: GasColumn;
   /** Margin that counts as received, dB; 0 if left out. */
   readonly thresholdDb?: number;
 }
@@ -59,9 +61,15 @@ export function linkAlongPass(question: PassLink): PassLinkResult {
   };
 }
 
-/** One function for a pass: the shells of the atmosphere are prepared once. */
-function linkInputsAlong({ radio, antenna, site, rain }: Omit<PassLink, 'track'>): (look: LookAngles) => LinkInputs {
-  const column = gasColumn({ frequencyMhz: radio.centreFrequencyMhz, altitudeM: site.altitudeM });
+/** One function for a pass: the shells of the atmosphere are prepared once, or given. */
+function linkInputsAlong({
+  radio,
+  antenna,
+  site,
+  rain,
+  gas,
+}: Omit<PassLink, 'track'>): (look: LookAngles) => LinkInputs {
+  const column = gas ?? gasColumn({ frequencyMhz: radio.centreFrequencyMhz, altitudeM: site.altitudeM });
   const clearZenithDb = column.slantDb(90);
   const sources = {
     gas: 'ITU-R P.676-12 in the reference atmosphere of P.835, straight ray',

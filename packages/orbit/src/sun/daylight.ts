@@ -1,6 +1,6 @@
 /** Day, twilight and night of a station, for the paper that a tide board is drawn on. */
 import type { GeodeticSite } from '../types.js';
-import { sunDirection } from './sun-position.js';
+import { type SunPath, sunPath } from './sun-path.js';
 
 export type DaylightPhase = 'day' | 'civil' | 'nautical' | 'astronomical' | 'night';
 
@@ -23,8 +23,8 @@ export interface DaylightInterval {
 }
 
 /** The phase at an instant. */
-export function daylightPhase(site: GeodeticSite, timeMs: number): DaylightPhase {
-  const { elevationDeg } = sunDirection(site, timeMs);
+export function daylightPhase(site: GeodeticSite, timeMs: number, sun: SunPath = sunPath()): DaylightPhase {
+  const { elevationDeg } = sun.direction(site, timeMs);
   return PHASES.find(([, lowestDeg]) => elevationDeg >= lowestDeg)?.[0] ?? 'night';
 }
 
@@ -32,15 +32,20 @@ const STEP_MS = 10 * 60_000;
 const TOLERANCE_MS = 500;
 
 /** Phases over a period, unbroken and in order; changes to half a second of the model, which is good to some seconds. */
-export function daylightIntervals(site: GeodeticSite, fromMs: number, toMs: number): DaylightInterval[] {
+export function daylightIntervals(
+  site: GeodeticSite,
+  fromMs: number,
+  toMs: number,
+  sun: SunPath = sunPath(),
+): DaylightInterval[] {
   const intervals: DaylightInterval[] = [];
   let startMs = fromMs;
-  let phase = daylightPhase(site, fromMs);
+  let phase = daylightPhase(site, fromMs, sun);
   const visit = (atMs: number, nextMs: number, before: DaylightPhase, after: DaylightPhase): void => {
     if (before === after) return;
     if (nextMs - atMs > TOLERANCE_MS) {
       const middleMs = (atMs + nextMs) / 2;
-      const middle = daylightPhase(site, middleMs);
+      const middle = daylightPhase(site, middleMs, sun);
       visit(atMs, middleMs, before, middle);
       visit(middleMs, nextMs, middle, after);
       return;
@@ -51,7 +56,7 @@ export function daylightIntervals(site: GeodeticSite, fromMs: number, toMs: numb
   };
   for (let atMs = fromMs; atMs < toMs; atMs += STEP_MS) {
     const nextMs = Math.min(toMs, atMs + STEP_MS);
-    visit(atMs, nextMs, phase, daylightPhase(site, nextMs));
+    visit(atMs, nextMs, phase, daylightPhase(site, nextMs, sun));
   }
   intervals.push({ fromMs: startMs, toMs, phase });
   return intervals;

@@ -4,7 +4,8 @@
  * crossing by seconds in low orbit, are left out.
  */
 import type { TrajectorySource } from '../types.js';
-import { SUN_RADIUS_KM, sunPositionTemeKm } from './sun-position.js';
+import { type SunPath, sunPath } from './sun-path.js';
+import { SUN_RADIUS_KM } from './sun-position.js';
 
 /** WGS84. */
 const EARTH_RADIUS_KM = 6378.137;
@@ -55,10 +56,12 @@ function lensArea(earthRad: number, sunRad: number, apartRad: number): number {
 }
 
 /** Light at an instant of a trajectory. */
-export function illuminationAt(source: TrajectorySource, timeMs: number): Illumination {
+export function illuminationAt(source: TrajectorySource, timeMs: number, sun: SunPath = sunPath()): Illumination {
   const state = new Float64Array(6);
+  const place = new Float64Array(3);
   source.stateTeme(timeMs, state);
-  return illumination(state, sunPositionTemeKm(timeMs));
+  sun.positionTemeKm(timeMs, place);
+  return illumination(state, place);
 }
 
 export interface LightInterval {
@@ -74,8 +77,13 @@ const CROSSING_TOLERANCE_MS = 1;
  * Light and shadow over a period, unbroken from `fromMs` to `toMs`. Crossings are found to the millisecond; a shadow or
  * a penumbra shorter than the 20 s step between samples can be missed where a spacecraft just grazes it.
  */
-export function lightIntervals(source: TrajectorySource, fromMs: number, toMs: number): LightInterval[] {
-  const stateAt = (timeMs: number) => illuminationAt(source, timeMs).state;
+export function lightIntervals(
+  source: TrajectorySource,
+  fromMs: number,
+  toMs: number,
+  sun: SunPath = sunPath(),
+): LightInterval[] {
+  const stateAt = (timeMs: number) => illuminationAt(source, timeMs, sun).state;
   const intervals: LightInterval[] = [];
   let startMs = fromMs;
   let state = stateAt(fromMs);

@@ -3,7 +3,8 @@ import type { LookAngles } from '../types.js';
 import { daylightIntervals, daylightPhase } from './daylight.js';
 import { illumination, sunlitShare } from './illumination.js';
 import { sunInterference, sunOutageAngleDeg } from './sun-interference.js';
-import { separationDeg, sunDirection } from './sun-position.js';
+import { sunPath } from './sun-path.js';
+import { separationDeg, sunDirection, sunPositionTemeKm } from './sun-position.js';
 
 const site = { latitudeDeg: 40, longitudeDeg: 0, altitudeM: 0 };
 const NOON_MS = Date.UTC(2026, 5, 21, 12);
@@ -55,6 +56,28 @@ describe('the Sun beside the beam', () => {
     const a = { azimuthDeg: 10, elevationDeg: 40 };
     expect(separationDeg(a, { azimuthDeg: 10, elevationDeg: 40 + 1e-9 })).toBeCloseTo(1e-9, 12);
     expect(separationDeg({ azimuthDeg: 0, elevationDeg: 0 }, { azimuthDeg: 180, elevationDeg: 0 })).toBeCloseTo(180, 6);
+  });
+});
+
+describe('the path of the Sun', () => {
+  it('stays within a ten-thousandth of a degree of the theory all year', () => {
+    const path = sunPath();
+    const got = new Float64Array(3);
+    for (let hour = 0; hour < 8766; hour += 37) {
+      const timeMs = NOON_MS + hour * HOUR_MS + 1_234_567;
+      path.positionTemeKm(timeMs, got);
+      const theory = sunPositionTemeKm(timeMs);
+      const apart = Math.hypot(got[0]! - theory[0]!, got[1]! - theory[1]!, got[2]! - theory[2]!);
+      expect((apart / 149_597_870.7) * (180 / Math.PI)).toBeLessThan(1e-4);
+    }
+  });
+
+  it('leads to the direction that the library gives, less the parallax', () => {
+    const path = sunPath();
+    for (let hour = 0; hour < 48; hour += 0.7) {
+      const timeMs = NOON_MS + hour * HOUR_MS;
+      expect(separationDeg(path.direction(site, timeMs), sunDirection(site, timeMs))).toBeLessThan(0.003);
+    }
   });
 });
 

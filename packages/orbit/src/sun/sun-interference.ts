@@ -1,7 +1,8 @@
 /** The Sun near the beam: as noise that drowns the link, and as heat that a receive chain may not survive. */
 import { halfPowerBeamwidthDeg } from '../radio/antenna.js';
 import type { GeodeticSite, LookAngles } from '../types.js';
-import { type Direction, separationDeg, sunDirection } from './sun-position.js';
+import { type SunPath, sunPath } from './sun-path.js';
+import { type Direction, separationDeg } from './sun-position.js';
 
 /** Half the width of the Sun's disc that interference reckons with, degrees (sun-outage practice of satellite operators). */
 const SOLAR_RADIUS_DEG = 0.25;
@@ -31,9 +32,14 @@ export interface SunInterference {
  * Follows the angle between beam and Sun along a pass. Between two samples the angle is taken as a straight line, so a
  * track of a few seconds' step is good to a tenth of a degree at the fastest.
  */
-export function sunInterference(track: readonly LookAngles[], site: GeodeticSite, keepOffDeg: number): SunInterference {
+export function sunInterference(
+  track: readonly LookAngles[],
+  site: GeodeticSite,
+  keepOffDeg: number,
+  path: SunPath = sunPath(),
+): SunInterference {
   const angles = track.map((look) => {
-    const sun = sunDirection(site, look.timeMs);
+    const sun = path.direction(site, look.timeMs);
     return { timeMs: look.timeMs, sun, apartDeg: sun.elevationDeg > SUN_GONE_DEG ? separationDeg(look, sun) : 180 };
   });
   const seen = angles.filter(({ sun }) => sun.elevationDeg > SUN_GONE_DEG);
