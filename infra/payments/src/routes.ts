@@ -2,6 +2,7 @@ import type { Route } from './http/call.js';
 import { accountRoutes } from './objects/accounts.js';
 import { balanceRoutes } from './objects/balances.js';
 import { chargeRoutes } from './objects/charges.js';
+import { checkoutSessionRoutes } from './objects/checkout-sessions.js';
 import { customerRoutes } from './objects/customers.js';
 import { disputeRoutes } from './objects/disputes.js';
 import { eventRoutes } from './objects/events.js';
@@ -19,6 +20,7 @@ export const ROUTES: readonly Route[] = [
   ...paymentMethodRoutes,
   ...paymentIntentRoutes,
   ...setupIntentRoutes,
+  ...checkoutSessionRoutes,
   ...chargeRoutes,
   ...refundRoutes,
   ...disputeRoutes,

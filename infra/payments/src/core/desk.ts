@@ -14,7 +14,7 @@ export interface Cause {
 /** Told of each new event inside the transaction that wrote it, so that a delivery is never lost or invented. */
 export type EventListener = (event: StoredEvent, account: string) => void;
 
-export type Task = 'expire_authorisation' | 'funds_available' | 'payout_arrives' | 'refund_fails';
+export type Task = 'expire_authorisation' | 'funds_available' | 'payout_arrives' | 'refund_fails' | 'expire_session';
 
 /** Store, clock, settings and events in one hand: what every operation of the service needs. */
 export class Desk {

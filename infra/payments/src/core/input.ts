@@ -116,6 +116,17 @@ export class Input {
     return group;
   }
 
+  /** A list of groups, such as `line_items[0][quantity]`. */
+  groups(field: string): Input[] | undefined {
+    const value = this.#take(field);
+    if (value === undefined) return undefined;
+    if (!Array.isArray(value) || !value.every(isRecord))
+      throw badParameter(this.name(field), `Invalid array: ${this.name(field)}`);
+    const groups = value.map((item, index) => new Input(item, `${this.name(field)}[${index}]`));
+    this.#groups.push(...groups);
+    return groups;
+  }
+
   /** The stored metadata with the request's changes: an empty value unsets a key, an empty whole unsets all. */
   metadata(current: Stripe.Metadata = {}): Stripe.Metadata {
     const value = this.#take('metadata');

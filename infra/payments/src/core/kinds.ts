@@ -5,6 +5,7 @@ export interface Kinds {
   account: Stripe.Account;
   balance_transaction: Stripe.BalanceTransaction;
   charge: Stripe.Charge;
+  'checkout.session': Stripe.Checkout.Session;
   customer: Stripe.Customer;
   dispute: Stripe.Dispute;
   event: StoredEvent;
@@ -42,6 +43,7 @@ const KIND_OF_PREFIX: Readonly<Record<string, Kind>> = {
   txn: 'balance_transaction',
   ch: 'charge',
   py: 'charge',
+  cs: 'checkout.session',
   cus: 'customer',
   dp: 'dispute',
   evt: 'event',

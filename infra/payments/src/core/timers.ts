@@ -1,3 +1,4 @@
+import { expireSession } from '../objects/checkout-sessions.js';
 import { cancelIntent } from '../objects/intent-life.js';
 import { arrivePayout } from '../objects/payout-life.js';
 import { failRefund, settlePendingRefunds } from '../objects/refund-life.js';
@@ -35,6 +36,11 @@ function runTask(desk: Desk, timer: Timer): void {
     case 'expire_authorisation': {
       const intent = desk.store.find('payment_intent', timer.ref, account);
       if (intent?.status === 'requires_capture') cancelIntent({ desk, account }, intent, 'automatic');
+      return;
+    }
+    case 'expire_session': {
+      const session = desk.store.find('checkout.session', timer.ref, account);
+      if (session?.status === 'open') expireSession({ desk, account }, session);
       return;
     }
     case 'funds_available':

@@ -5,6 +5,7 @@ import { declined, refused } from '../core/errors.js';
 import type { Call, Work } from '../http/call.js';
 import { attachMethod } from './attach.js';
 import { attemptCharge, captureCharge, refundableMinor, releaseCharge } from './charge-life.js';
+import { completeSession } from './checkout-life.js';
 import { idOf } from './common.js';
 import { openDispute } from './dispute-life.js';
 import { type CardMemory, cardMemory, testCardOf } from './payment-method-source.js';
@@ -145,6 +146,7 @@ function charge(
   call.desk.store.save<'payment_intent'>(paid);
   call.desk.emit(held ? 'payment_intent.amount_capturable_updated' : 'payment_intent.succeeded', paid, call.account);
   keepOrUseUp(call, paid, method);
+  completeSession(call, paid);
   if (!held) disputeIfAsked(call, made);
   return paid;
 }

@@ -4,6 +4,7 @@ import { PLATFORM } from '../core/store.js';
 import type { Api } from '../http/api.js';
 import type { Courier } from '../webhooks/courier.js';
 import type { Outbox } from '../webhooks/outbox.js';
+import { showCheckout, submitCheckout } from './checkout.js';
 import { showConfirm, submitConfirm } from './confirm.js';
 import { sendStyle } from './html.js';
 import { showOnboarding, submitOnboarding } from './onboarding.js';
@@ -27,6 +28,8 @@ export function mountPages(app: Express, tools: PageTools): void {
   app.get('/', show(showOverview));
   app.get('/pay/:clientSecret', show(showPay));
   app.post('/pay/:clientSecret', form, show(submitPay));
+  app.get('/checkout/:session', show(showCheckout));
+  app.post('/checkout/:session', form, show(submitCheckout));
   app.get('/confirm/:clientSecret', show(showConfirm));
   app.post('/confirm/:clientSecret', form, show(submitConfirm));
   app.get('/onboarding/:account/:token', show(showOnboarding));

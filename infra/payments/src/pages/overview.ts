@@ -40,6 +40,15 @@ ${table(
   ),
 )}
 ${table(
+  'Checkout pages',
+  ['Id', 'Status', 'Amount', 'Payment intent', 'Made'],
+  store
+    .list('checkout.session', newest)
+    .items.map((s) =>
+      row([s.id, s.status, money(s.amount_total ?? 0, s.currency ?? ''), idOf(s.payment_intent), utc(s.created)]),
+    ),
+)}
+${table(
   'Charges',
   ['Id', 'Status', 'Amount', 'Taken', 'Given back', 'Disputed', 'Made'],
   charges.map((c) =>

@@ -51,7 +51,7 @@ function tryCard(call: Call, intent: Intent, returnUrl: string | null): object {
 }
 
 /** The form's fields in the API's own shape, so that one set of checks serves both. */
-function cardFields(fields: Record<string, string>): Record<string, unknown> {
+export function cardFields(fields: Record<string, string>): Record<string, unknown> {
   if (fields.token) return { token: fields.token };
   const [month = '', year = ''] = (fields.expiry ?? '').split('/').map((part) => part.trim());
   const card = {
@@ -72,26 +72,31 @@ function sendForm(
 ): void {
   const action = `/pay/${intent.client_secret}${suffix(returnUrl)}`;
   const what = intent.object === 'payment_intent' ? `Pay ${money(intent.amount, intent.currency)}` : 'Save a card';
-  const buttons = TEST_CARDS.map(
-    (card) => html`<button name="token" value="pm_card_${card.names[0]}">${card.label}</button>`,
-  );
   const body = html`<main class="narrow">
 <h1>${what}</h1>
 <p>${intent.description}</p>
-${problemOf(problem)}
-<form method="post" action="${action}" autocomplete="off">
+${cardForm({ action, what, problem })}
+</main>`;
+  sendPage(response, { title: what, formTargets: formTargets(returnUrl, trustedHosts) }, body);
+}
+
+/** Takes a typed card, or a button for what the bank shall say. */
+export function cardForm(form: { action: string; what: string; problem: string | null }): Markup {
+  const buttons = TEST_CARDS.map(
+    (card) => html`<button name="token" value="pm_card_${card.names[0]}">${card.label}</button>`,
+  );
+  return html`${problemOf(form.problem)}
+<form method="post" action="${form.action}" autocomplete="off">
 <label>Card number <input name="number" inputmode="numeric" required placeholder="4242 4242 4242 4242"></label>
 <div class="row">
 <label>Expires (MM/YY) <input name="expiry" inputmode="numeric" required placeholder="12/34"></label>
 <label>Security code <input name="cvc" inputmode="numeric" required placeholder="123"></label>
 </div>
 <label>Name on the card <input name="name"></label>
-<button class="main">${what}</button>
+<button class="main">${form.what}</button>
 </form>
 <h2>Or choose what the bank shall say</h2>
-<form method="post" action="${action}" class="buttons">${buttons}</form>
-</main>`;
-  sendPage(response, { title: what, formTargets: formTargets(returnUrl, trustedHosts) }, body);
+<form method="post" action="${form.action}" class="buttons">${buttons}</form>`;
 }
 
 function problemOf(problem: string | null): Markup {
