@@ -55,6 +55,7 @@ export async function startSkyberth(options: Options = {}): Promise<Skyberth> {
     STRIPE_WEBHOOK_SECRET: 'whsec_harness',
     SMTP_URL: mail.url,
     JOBS: 'off',
+    PASS_WORKERS: '0',
     SKYBERTH_ADMIN_EMAIL: ADMIN_EMAIL,
     SKYBERTH_FINANCE_EMAIL: FINANCE_EMAIL,
     ...options.environment,
