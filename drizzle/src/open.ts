@@ -1,4 +1,5 @@
 /** Opening the database file with the settings that its guarantees rest on, and migrating it. */
+import { readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import Database from 'better-sqlite3';
 import { type BetterSQLite3Database, drizzle } from 'drizzle-orm/better-sqlite3';
@@ -26,4 +27,11 @@ export function openDatabase(file: string): SkyberthDatabase {
 /** Applies the migrations that are missing, in order, each in a transaction. */
 export function migrateDatabase(db: SkyberthDatabase): void {
   migrate(db, { migrationsFolder: MIGRATIONS_FOLDER });
+}
+
+/** How many migrations this database has had, and how many this version of the application knows. */
+export function migrationState(db: SkyberthDatabase): { readonly applied: number; readonly known: number } {
+  const row = db.$client.prepare('SELECT count(*) AS applied FROM __drizzle_migrations').get() as { applied: number };
+  const journal = JSON.parse(readFileSync(`${MIGRATIONS_FOLDER}/meta/_journal.json`, 'utf8')) as { entries: unknown[] };
+  return { applied: row.applied, known: journal.entries.length };
 }

@@ -30,6 +30,7 @@ export type Radio = z.infer<typeof Radio>;
 
 /** `fresh`, `ageing` (warns) or `stale` (buying needs an acknowledgement); the page says the estimated error beside it. */
 export const ElementFreshness = z.enum(['none', 'fresh', 'ageing', 'stale']);
+export type ElementFreshness = z.infer<typeof ElementFreshness>;
 
 export const ElementSummary = z.object({
   id: Id,

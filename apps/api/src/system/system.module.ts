@@ -1,6 +1,19 @@
-/** Health, the API's description of itself, and what staff watch. */
+/** Health, the API's description of itself, what waits for each person, and what staff watch. */
 import { Module } from '@nestjs/common';
+import { JobsModule } from '../jobs/jobs.module.js';
+import { OutboxModule } from '../outbox/outbox.module.js';
+import { SpacecraftModule } from '../spacecraft/spacecraft.module.js';
+import { HomeRepository } from './home.repository.js';
+import { HomeService } from './home.service.js';
+import { Housekeeping } from './housekeeping.js';
+import { ServicesWatch } from './services-watch.js';
 import { SystemController } from './system.controller.js';
+import { SystemRepository } from './system.repository.js';
+import { SystemService } from './system.service.js';
 
-@Module({ controllers: [SystemController] })
+@Module({
+  imports: [JobsModule, OutboxModule, SpacecraftModule],
+  controllers: [SystemController],
+  providers: [Housekeeping, HomeRepository, HomeService, ServicesWatch, SystemRepository, SystemService],
+})
 export class SystemModule {}

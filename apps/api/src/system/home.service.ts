@@ -1,0 +1,152 @@
+/** What needs the caller now: one sentence each, the pressing ones first. */
+import { Inject, Injectable } from '@nestjs/common';
+import { can, type HomeView, type Principal } from '@skyberth/shared';
+import { CLOCK, type ClockPort } from '../platform/clock.js';
+import { ElementsService } from '../spacecraft/elements.service.js';
+import { freshnessOf } from '../spacecraft/freshness.js';
+import { HomeRepository, type WaitingBooking } from './home.repository.js';
+
+type Waiting = HomeView['waiting'][number];
+
+const HOUR_MS = 3_600_000;
+const DAY_MS = 24 * HOUR_MS;
+/** A contact stands on the home page a day ahead, and presses an hour ahead. */
+const AHEAD_MS = DAY_MS;
+const PRESSING_MS = HOUR_MS;
+const FAILED_SHOWN_MS = 30 * DAY_MS;
+
+const utc = (timeMs: number): string => new Date(timeMs).toISOString();
+
+@Injectable()
+export class HomeService {
+  constructor(
+    private readonly repository: HomeRepository,
+    private readonly elements: ElementsService,
+    @Inject(CLOCK) private readonly clock: ClockPort,
+  ) {}
+
+  view(caller: Principal): HomeView {
+    const waiting = this.waitingFor(caller).sort((a, b) => Number(b.urgent) - Number(a.urgent) || dueMs(a) - dueMs(b));
+    return { waiting, counts: this.countsFor(caller) };
+  }
+
+  private waitingFor(caller: Principal): Waiting[] {
+    if (caller.organisationKind === 'operator') return this.forOperator(caller);
+    if (caller.organisationKind === 'owner') return this.forOwner(caller);
+    return can(caller, 'stations.approve') ? this.forAdmin() : this.forFinance();
+  }
+
+  private countsFor(caller: Principal): Record<string, number> {
+    if (caller.organisationKind === 'owner') {
+      return { requests: this.repository.countBookings('owner', caller.organisationId, ['awaiting owner']) };
+    }
+    return can(caller, 'stations.approve') ? { approvals: this.repository.countStations('waiting') } : {};
+  }
+
+  private forOperator({ organisationId }: Principal): Waiting[] {
+    const nowMs = this.clock.nowMs();
+    const held = this.repository.bookings('operator', organisationId, ['held'], Number.MAX_SAFE_INTEGER);
+    const soon = this.repository.bookings('operator', organisationId, ['confirmed', 'under way'], nowMs + AHEAD_MS);
+    const open = held.filter(({ holdEndsMs }) => holdEndsMs !== null && holdEndsMs > nowMs);
+    return [
+      ...open.map((each) => booking('hold', `Pay for the held contact ${titleOf(each)}.`, each, true, each.holdEndsMs)),
+      ...soon.map((each) => this.contact(each, nowMs)),
+      ...this.oldElements(organisationId, nowMs),
+    ];
+  }
+
+  private oldElements(organisationId: string, nowMs: number): Waiting[] {
+    return this.repository.spacecraft(organisationId).flatMap(({ id, name }): Waiting[] => {
+      const inForce = this.elements.inForce(id, nowMs);
+      const common = { path: `/spacecraft/${id}`, urgent: false, dueUtc: null };
+      if (!inForce) {
+        const detail = 'Without them no pass can be found.';
+        return [{ kind: 'elements', sentence: `${name} has no orbital elements.`, detail, ...common }];
+      }
+      const { meanMotionRevPerDay } = inForce.elementSet;
+      const { freshness, ageH, timingErrorS } = freshnessOf(inForce.epochMs, meanMotionRevPerDay, nowMs);
+      if (freshness === 'fresh') return [];
+      const sentence = `The elements of ${name} are ${(ageH / 24).toFixed(1)} days old.`;
+      const detail = `AOS may be off by about ${timingErrorS.toFixed(timingErrorS < 10 ? 1 : 0)} s (common practice).`;
+      return [{ kind: 'elements', sentence, detail, ...common, urgent: freshness === 'stale' }];
+    });
+  }
+
+  private forOwner({ organisationId }: Principal): Waiting[] {
+    const nowMs = this.clock.nowMs();
+    const read = (states: WaitingBooking['state'][], untilMs = Number.MAX_SAFE_INTEGER) =>
+      this.repository.bookings('owner', organisationId, states, untilMs);
+    const stations = this.repository.stations(organisationId, ['refused', 'suspended', 'draft']);
+    return [
+      ...read(['awaiting owner']).map((each) => {
+        const pressing = (each.answerByMs ?? 0) - nowMs < PRESSING_MS;
+        return booking('request', `Accept or decline ${titleOf(each)}.`, each, pressing, each.answerByMs);
+      }),
+      ...read(['reporting']).map((each) => booking('report', `Report how ${titleOf(each)} went.`, each, false, null)),
+      ...read(['confirmed', 'under way'], nowMs + AHEAD_MS).map((each) => this.contact(each, nowMs)),
+      ...stations.map(({ id, name, state, stateNote }) => ({
+        kind: 'station',
+        sentence: state === 'draft' ? `${name} is a draft: ask for its approval.` : `${name} is ${state}.`,
+        detail: stateNote,
+        path: `/stations/${id}`,
+        urgent: state === 'suspended',
+        dueUtc: null,
+      })),
+    ];
+  }
+
+  private contact(each: WaitingBooking, nowMs: number): Waiting {
+    const underWay = each.state === 'under way';
+    const sentence = underWay ? `The contact ${titleOf(each)} is under way.` : `The contact ${titleOf(each)} is next.`;
+    const pressing = underWay || each.aosMs - nowMs < PRESSING_MS;
+    return booking('contact', sentence, each, pressing, underWay ? each.losMs : each.aosMs);
+  }
+
+  private forAdmin(): Waiting[] {
+    const stations = this.repository.stations(null, ['waiting']).map(({ name, ownerName }) => ({
+      kind: 'approval',
+      sentence: `${name} of ${ownerName} waits for approval.`,
+      detail: 'Check position, horizon and licence papers.',
+      path: '/approvals',
+      urgent: false,
+      dueUtc: null,
+    }));
+    return [...stations, ...this.failures('/system')];
+  }
+
+  private forFinance(): Waiting[] {
+    return this.failures('/ledger').filter((each) => each.detail !== 'mail');
+  }
+
+  private failures(path: string): Waiting[] {
+    return this.repository.failedOutbox(this.clock.nowMs() - FAILED_SHOWN_MS).map(({ kind, rows }) => ({
+      kind: 'failure',
+      sentence: `${rows} ${rows === 1 ? 'task' : 'tasks'} of kind ${kind} could not be carried out.`,
+      detail: kind,
+      path,
+      urgent: kind !== 'mail',
+      dueUtc: null,
+    }));
+  }
+}
+
+const dueMs = (waiting: Waiting): number =>
+  waiting.dueUtc === null ? Number.MAX_SAFE_INTEGER : Date.parse(waiting.dueUtc);
+
+const titleOf = (each: WaitingBooking): string =>
+  `${each.number}, ${each.spacecraftName} over ${each.antennaName} at ${each.stationName}`;
+
+const booking = (
+  kind: string,
+  sentence: string,
+  each: WaitingBooking,
+  urgent: boolean,
+  due: number | null,
+): Waiting => ({
+  kind,
+  sentence,
+  detail: `AOS ${utc(each.aosMs).replace('T', ' ').slice(0, 19)} UTC`,
+  path: `/bookings/${each.id}`,
+  urgent,
+  dueUtc: due === null ? null : utc(due),
+});
