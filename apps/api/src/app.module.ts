@@ -1,12 +1,19 @@
 /** The application: the platform and one module for each feature. */
 import { type DynamicModule, Module } from '@nestjs/common';
 import { AccountsModule } from './accounts/accounts.module.js';
+import { BookingsModule } from './bookings/bookings.module.js';
+import { InvoicesModule } from './invoices/invoices.module.js';
 import { JobsModule } from './jobs/jobs.module.js';
+import { LedgerModule } from './ledger/ledger.module.js';
 import { MailModule } from './mail/mail.module.js';
+import { MarketModule } from './market/market.module.js';
 import { OutboxModule } from './outbox/outbox.module.js';
 import type { ClockPort } from './platform/clock.js';
 import type { Config } from './platform/config.js';
+import { PaymentsModule } from './payments/payments.module.js';
 import { PlatformModule } from './platform/platform.module.js';
+import { SpacecraftModule } from './spacecraft/spacecraft.module.js';
+import { StationsModule } from './stations/stations.module.js';
 import { SystemModule } from './system/system.module.js';
 
 @Module({})
@@ -14,7 +21,21 @@ export class AppModule {
   static forRoot(config: Config, clock: ClockPort): DynamicModule {
     return {
       module: AppModule,
-      imports: [PlatformModule.forRoot(config, clock), JobsModule, OutboxModule, MailModule, AccountsModule, SystemModule],
+      imports: [
+        PlatformModule.forRoot(config, clock),
+        JobsModule,
+        OutboxModule,
+        MailModule,
+        AccountsModule,
+        SpacecraftModule,
+        StationsModule,
+        BookingsModule,
+        PaymentsModule,
+        InvoicesModule,
+        LedgerModule,
+        MarketModule,
+        SystemModule,
+      ],
     };
   }
 }

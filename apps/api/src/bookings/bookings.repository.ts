@@ -188,7 +188,8 @@ export class BookingRepository {
   }
 
   /** Beams of the antenna that nobody has in this guarded interval, lowest first. */
-  freeBeams(tx: Db, antennaId: string, beams: number, guardFromMs: number, guardToMs: number): number[] {
+  freeBeams(tx: Db, wish: { antennaId: string; beams: number; guardFromMs: number; guardToMs: number }): number[] {
+    const { antennaId, beams, guardFromMs, guardToMs } = wish;
     const taken = new Set(
       tx
         .select({ beam: bookings.beam })

@@ -1,0 +1,19 @@
+/** Bookings as people and the clock move them. */
+import { Module } from '@nestjs/common';
+import { JobsModule } from '../jobs/jobs.module.js';
+import { MarketModule } from '../market/market.module.js';
+import { BookingClock } from './booking-clock.js';
+import { BookingFlowModule } from './booking-flow.module.js';
+import { BookingGeometry } from './booking-geometry.js';
+import { BookingListRepository } from './booking-list.repository.js';
+import { BookingViews } from './booking-views.js';
+import { BookingsController } from './bookings.controller.js';
+import { BookingsService } from './bookings.service.js';
+import { HoldService } from './hold.service.js';
+
+@Module({
+  imports: [BookingFlowModule, MarketModule, JobsModule],
+  controllers: [BookingsController],
+  providers: [BookingListRepository, BookingViews, BookingGeometry, BookingsService, HoldService, BookingClock],
+})
+export class BookingsModule {}

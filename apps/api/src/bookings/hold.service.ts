@@ -1,0 +1,121 @@
+/** Holding: ten minutes at a frozen price. The database decides who was first. */
+import { Inject, Injectable } from '@nestjs/common';
+import type { SkyberthDatabase } from '@skyberth/drizzle';
+import type { BodyOf, Principal, Quote, routes } from '@skyberth/shared';
+import { type BerthOffer, OfferService } from '../market/offer.service.js';
+import { CLOCK, type ClockPort } from '../platform/clock.js';
+import { DATABASE } from '../platform/database.module.js';
+import { DomainError } from '../platform/domain-error.js';
+import { newId } from '../platform/ids.js';
+import { type Db, write } from '../platform/transaction.js';
+import { checkInvoiceable } from './booking-money.js';
+import { BookingSale } from './booking-sale.service.js';
+import { BookingTransitions, berthTaken } from './booking-transitions.js';
+import { moneyText, utcText } from './booking-words.js';
+import { BookingRepository, type BookingRow } from './bookings.repository.js';
+
+export const HOLD_MS = 10 * 60_000;
+/** More would let one organisation keep a market from the others without paying. */
+export const MOST_HOLDS = 20;
+
+type Sellable = BerthOffer & { readonly quote: Quote };
+type HoldWish = BodyOf<typeof routes.holdBerth>;
+
+@Injectable()
+export class HoldService {
+  constructor(
+    @Inject(DATABASE) private readonly db: SkyberthDatabase,
+    @Inject(CLOCK) private readonly clock: ClockPort,
+    private readonly offers: OfferService,
+    private readonly repository: BookingRepository,
+    private readonly transitions: BookingTransitions,
+    private readonly sale: BookingSale,
+  ) {}
+
+  /**
+   * Computes the offer anew and holds it. Throws `berth-taken`, `spacecraft-busy`, `not-for-sale`, `price-changed`,
+   * `elements-too-old`, `too-many`, and what the offer throws.
+   */
+  async hold(caller: Principal, wish: HoldWish): Promise<BookingRow> {
+    const offer = forSale(await this.offers.evaluate(caller.organisationId, wish));
+    if (offer.freshness.freshness === 'stale' && !wish.oldElementsAcknowledged) {
+      throw new DomainError(
+        'elements-too-old',
+        'The orbital elements are too old for this pass to be sure. Load newer ones, or say that you know.',
+      );
+    }
+    if (offer.quote.toPayMinor !== wish.expectedToPayMinor) {
+      const { toPayMinor, currency } = offer.quote;
+      throw new DomainError(
+        'price-changed',
+        `The price is now ${moneyText(toPayMinor, currency)}. Look at it and hold again if it suits you.`,
+      );
+    }
+    checkInvoiceable(offer.quote);
+    return write(this.db, (tx) => this.insert(tx, caller, { wish, offer }));
+  }
+
+  private insert(tx: Db, caller: Principal, { wish, offer }: { wish: HoldWish; offer: Sellable }): BookingRow {
+    const nowMs = this.clock.nowMs();
+    const { antennaId, spacecraftId, guardFromMs, guardToMs, quote } = offer;
+    for (const ended of this.repository.endedHolds(tx, nowMs, { antennaId, spacecraftId }))
+      this.sale.lapseHold(tx, ended);
+    if (this.repository.openHolds(tx, caller.organisationId, nowMs) >= MOST_HOLDS) {
+      throw new DomainError(
+        'too-many',
+        `Your organisation holds ${MOST_HOLDS} passes already. Pay for some, or let some go.`,
+      );
+    }
+    if (!this.repository.stillOnSale(tx, antennaId)) {
+      throw new DomainError('not-for-sale', 'The station has just taken this antenna off sale.');
+    }
+    const beam = this.repository.freeBeams(tx, { antennaId, beams: offer.beams, guardFromMs, guardToMs })[0];
+    if (beam === undefined) throw berthTaken();
+    const holdEndsMs = nowMs + HOLD_MS;
+    return this.transitions.hold(
+      tx,
+      {
+        id: newId(),
+        number: this.repository.nextNumber(tx),
+        operatorId: caller.organisationId,
+        ownerId: offer.ownerId,
+        spacecraftId,
+        antennaId,
+        beam,
+        elementSetId: offer.elementSetId,
+        need: wish.need,
+        state: 'held',
+        aosMs: offer.aosMs,
+        tcaMs: offer.tcaMs,
+        losMs: offer.losMs,
+        guardFromMs,
+        guardToMs,
+        pass: offer.pass,
+        quote,
+        currency: quote.currency,
+        netMinor: quote.totalMinor,
+        vatMinor: quote.vat.amountMinor,
+        toPayMinor: quote.toPayMinor,
+        holdEndsMs,
+        answerByMs: offer.answerByMs,
+        createdBy: caller.personId,
+        createdMs: nowMs,
+        changedMs: nowMs,
+      },
+      {
+        mover: { actor: 'operator', person: caller },
+        sentence: `Held until ${utcText(holdEndsMs)} at ${moneyText(quote.toPayMinor, quote.currency)}.`,
+      },
+    );
+  }
+}
+
+/** The offer, where it can be sold. Reasons about someone's contact have codes of their own; the rest is not for sale. */
+function forSale(offer: BerthOffer): Sellable {
+  const [reason] = offer.reasons;
+  if (!reason && offer.quote) return { ...offer, quote: offer.quote };
+  const sentence = [reason?.sentence ?? 'That time has no price.', reason?.remedy].filter(Boolean).join(' ');
+  if (reason?.code === 'taken') throw new DomainError('berth-taken', sentence);
+  if (reason?.code === 'spacecraft busy') throw new DomainError('spacecraft-busy', sentence);
+  throw new DomainError('not-for-sale', sentence);
+}
