@@ -1,7 +1,7 @@
 /** Reads an OEM in KVN, the form of keywords and lines. Source: CCSDS 502.0-B section 5 and 7. */
 import { parseCcsdsTime } from './ccsds-time.js';
 import { toUtcMs } from './leap-seconds.js';
-import type { FaultList, Oem, OemCovariance, OemSegment } from './oem.js';
+import { type FaultList, LONGEST_QUOTE, type Oem, type OemCovariance, type OemSegment } from './oem.js';
 import {
   type Field,
   HEADER_KEYWORDS,
@@ -109,7 +109,7 @@ class KvnReader {
   }
 
   private unexpected(found: string, line: number, expected: string): void {
-    const word = found.split(/[\s=]/, 1)[0]!;
+    const word = found.split(/[\s=]/, 1)[0]!.slice(0, LONGEST_QUOTE);
     this.faults.add({
       line,
       field: word,

@@ -58,6 +58,9 @@ export interface OemFault {
 /** More than this is more than anybody reads; the list ends with a line that says so. */
 export const MOST_FAULTS = 200;
 
+/** A line of a binary file can be megabytes long; a fault quotes its beginning. */
+export const LONGEST_QUOTE = 60;
+
 /** Collects faults, each with a sentence made of its own parts. */
 export class FaultList {
   readonly faults: OemFault[] = [];
@@ -69,9 +72,10 @@ export class FaultList {
       this.faults.push({ line: fault.line, field: '', found: '', expected: '', message });
       return;
     }
-    const found = fault.found === '' ? 'found nothing' : `found ${JSON.stringify(fault.found.slice(0, 60))}`;
+    const short = fault.found.slice(0, LONGEST_QUOTE);
+    const found = short === '' ? 'found nothing' : `found ${JSON.stringify(short)}`;
     const message = fault.message ?? `Line ${fault.line}, ${fault.field}: ${found}, expected ${fault.expected}.`;
-    this.faults.push({ ...fault, message });
+    this.faults.push({ ...fault, found: short, message });
   }
 
   get any(): boolean {

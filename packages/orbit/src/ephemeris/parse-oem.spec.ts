@@ -79,6 +79,12 @@ describe('reading an ephemeris', () => {
     expect(parseOem('').faults.length).toBeGreaterThan(0);
   });
 
+  it('quotes no more than the beginning of what it does not understand', () => {
+    for (const text of ['x'.repeat(1e6), `META_START\n${'y'.repeat(1e6)}`]) {
+      for (const fault of parseOem(text).faults) expect(fault.message.length + fault.found.length).toBeLessThan(300);
+    }
+  });
+
   it('ends the list of a wholly damaged file', () => {
     const { faults } = parseOem(kvn((text) => text.replace('META_STOP\n', `META_STOP\n${'nonsense\n'.repeat(5000)}`)));
     expect(faults).toHaveLength(201);
