@@ -37,10 +37,21 @@ export function formatDayTime(atMs: number): string {
   return `${formatDay(atMs)} ${formatTime(atMs)}`;
 }
 
+/** Formats are costly to make and are asked for in every frame of a drawing. */
+const formats = new Map<string, Intl.DateTimeFormat>();
+
+function zonedFormat(timeZone: string, options: Intl.DateTimeFormatOptions): Intl.DateTimeFormat {
+  const key = `${timeZone} ${Object.keys(options).join()}`;
+  const known = formats.get(key);
+  if (known) return known;
+  const made = new Intl.DateTimeFormat('en-GB', { timeZone, ...options });
+  formats.set(key, made);
+  return made;
+}
+
 /** `Tue 1 Dec 2026`, of the UTC day or of the day in `timeZone`. */
 export function formatCalendarDay(atMs: number, timeZone = 'UTC'): string {
-  const parts = new Intl.DateTimeFormat('en-GB', {
-    timeZone,
+  const parts = zonedFormat(timeZone, {
     weekday: 'short',
     day: 'numeric',
     month: 'short',
@@ -52,13 +63,8 @@ export function formatCalendarDay(atMs: number, timeZone = 'UTC'): string {
 
 /** `15:05` on the clocks of a place; with seconds `15:05:09`. */
 export function formatLocalTime(atMs: number, timeZone: string, withSeconds = false): string {
-  return new Intl.DateTimeFormat('en-GB', {
-    timeZone,
-    hour: '2-digit',
-    minute: '2-digit',
-    hourCycle: 'h23',
-    ...(withSeconds ? { second: '2-digit' } : {}),
-  }).format(atMs);
+  const clock = { hour: '2-digit', minute: '2-digit', hourCycle: 'h23' } as const;
+  return zonedFormat(timeZone, withSeconds ? { ...clock, second: '2-digit' } : clock).format(atMs);
 }
 
 /** `45 s`, `9 min 42 s`, `2 h 32 min`, `3 d 4 h`: two units at most, rounded to the smaller one. */

@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import { type Glyph, StateGlyph } from './state-glyph.js';
 import classes from './tide-board.module.css';
 import type { Interval } from './tide-board-types.js';
@@ -16,7 +17,7 @@ const ENTRIES: readonly (readonly [Glyph, string])[] = [
 ];
 
 /** What the signs mean, and the zoom. */
-export function BoardLegend() {
+export const BoardLegend = memo(function BoardLegend() {
   return (
     <>
       <ul className={classes.legend} aria-label="Signs on the board">
@@ -32,7 +33,7 @@ export function BoardLegend() {
       </p>
     </>
   );
-}
+});
 
 /** Minus, how much is in view, plus. */
 export function BoardZoom({ view, onZoom }: { readonly view: Interval; readonly onZoom: (factor: number) => void }) {

@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import { formatLocalTime } from '../../ui/format.js';
 import type { RowLayout } from './rows.js';
 import classes from './tide-board.module.css';
@@ -11,7 +12,7 @@ interface BoardNamesProps {
 }
 
 /** Names of stations and rows at the left; on the phone each row's name lies over its top edge. */
-export function BoardNames({ layout, range, nowMs, variant }: BoardNamesProps) {
+export const BoardNames = memo(function BoardNames({ layout, range, nowMs, variant }: BoardNamesProps) {
   const rows = layout.rows.slice(range[0], range[1]);
   const inSight = new Set(rows.map((row) => row.station.id));
   const stations = variant === 'wide' ? layout.stations.filter(({ station }) => inSight.has(station.id)) : [];
@@ -40,4 +41,4 @@ export function BoardNames({ layout, range, nowMs, variant }: BoardNamesProps) {
       ))}
     </div>
   );
-}
+});

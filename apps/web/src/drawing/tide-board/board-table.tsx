@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import { formatDayTime, formatDegrees, formatDuration } from '../../ui/format.js';
 import { type HumpIndex, humpsBetween } from './hump-index.js';
 import type { RowLayout } from './rows.js';
@@ -16,7 +17,7 @@ interface BoardTableProps {
 }
 
 /** The same content as the drawing, for a screen reader: every pass in view by antenna and time, then the blackouts. */
-export function BoardTable({ label, layout, index, blackouts, view }: BoardTableProps) {
+export const BoardTable = memo(function BoardTable({ label, layout, index, blackouts, view }: BoardTableProps) {
   const humps = humpsInView(layout, index, view);
   const shown = humps.slice(0, MOST_ROWS);
   const closed = blackouts.filter((one) => one.toMs > view.fromMs && one.fromMs < view.toMs);
@@ -63,7 +64,7 @@ export function BoardTable({ label, layout, index, blackouts, view }: BoardTable
       )}
     </div>
   );
-}
+});
 
 /** Passes in view, row by row and in order of time. */
 export function humpsInView(layout: RowLayout, index: HumpIndex, view: Interval): BoardHump[] {

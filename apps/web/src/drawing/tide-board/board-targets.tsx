@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import { targetColumn } from './hit-test.js';
 import type { RowLayout } from './rows.js';
 import classes from './tide-board.module.css';
@@ -15,7 +16,14 @@ interface BoardTargetsProps {
 }
 
 /** Real buttons over the drawn humps, for keyboard, screen reader and speech. Only one takes Tab; arrows move on. */
-export function BoardTargets({ humps, layout, view, widthPx, pickedIds, tabId }: BoardTargetsProps) {
+export const BoardTargets = memo(function BoardTargets({
+  humps,
+  layout,
+  view,
+  widthPx,
+  pickedIds,
+  tabId,
+}: BoardTargetsProps) {
   const { measures } = layout;
   return humps.map((hump) => {
     const row = layout.rowById.get(hump.rowId);
@@ -35,4 +43,4 @@ export function BoardTargets({ humps, layout, view, widthPx, pickedIds, tabId }:
       />
     );
   });
-}
+});

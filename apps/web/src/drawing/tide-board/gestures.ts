@@ -33,7 +33,11 @@ export function attachGestures(element: HTMLElement, target: GestureTarget): () 
   let isDragging = false;
   let settleTimer = 0;
 
-  const localX = (clientX: number) => clientX - element.getBoundingClientRect().left;
+  let leftPx = 0;
+  const localX = (clientX: number) => clientX - leftPx;
+  const locate = () => {
+    leftPx = element.getBoundingClientRect().left;
+  };
   const middle = () => {
     const all = [...fingers.values()];
     return {
@@ -57,6 +61,7 @@ export function attachGestures(element: HTMLElement, target: GestureTarget): () 
 
   const down = (event: PointerEvent) => {
     if (event.button !== 0) return;
+    locate();
     fingers.set(event.pointerId, { x: localX(event.clientX), y: event.clientY });
     begin();
   };
@@ -96,6 +101,7 @@ export function attachGestures(element: HTMLElement, target: GestureTarget): () 
   };
   const wheel = (event: WheelEvent) => {
     event.preventDefault();
+    locate();
     const unit = event.deltaMode === WheelEvent.DOM_DELTA_LINE ? LINE_WHEEL_PX : 1;
     const isSideways = event.shiftKey || Math.abs(event.deltaX) > Math.abs(event.deltaY);
     const view = target.view();

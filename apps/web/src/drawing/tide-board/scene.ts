@@ -116,10 +116,10 @@ export class BoardScene {
     const ctx = this.prepare(input);
     if (!ctx) return;
     this.patterns ??= makePatterns(ctx, input.palette, window.devicePixelRatio || 1);
-    const brush = this.brush(ctx, input);
-    this.paintRows(brush, input, this.patterns);
+    const brush = this.brush(ctx, input, this.patterns);
+    this.paintRows(brush, input);
     const axisCtx = sized(this.axis, widthPx, AXIS_PX);
-    if (axisCtx) paintAxis(this.brush(axisCtx, input), this.marks(input));
+    if (axisCtx) paintAxis(this.brush(axisCtx, input, this.patterns), this.marks(input));
     this.afterDraw?.();
   }
 
@@ -128,10 +128,10 @@ export class BoardScene {
     this.afterDraw = null;
   }
 
-  private brush(ctx: CanvasRenderingContext2D, input: SceneInput): Brush {
+  private brush(ctx: CanvasRenderingContext2D, input: SceneInput, patterns: Patterns): Brush {
     const { view, widthPx } = this;
     const { palette, layout, nowMs } = input;
-    return { ctx, palette, layout, nowMs, view, widthPx, x: (atMs) => timeToX(view, widthPx, atMs) };
+    return { ctx, palette, patterns, layout, nowMs, view, widthPx, x: (atMs) => timeToX(view, widthPx, atMs) };
   }
 
   private prepare(input: SceneInput): CanvasRenderingContext2D | null {
@@ -147,7 +147,7 @@ export class BoardScene {
     return ctx;
   }
 
-  private paintRows(brush: Brush, input: SceneInput, patterns: Patterns): void {
+  private paintRows(brush: Brush, input: SceneInput): void {
     const top = this.canvasTopPx;
     const bottom = top + this.canvasPx;
     const [first, end] = rowsBetween(input.layout, top, bottom);
@@ -160,21 +160,21 @@ export class BoardScene {
       paintSunMarks(brush, station);
       this.paintDayMinutes(brush, input, station);
     }
-    for (const row of rows) this.paintRow(brush, input, patterns, row);
+    for (const row of rows) this.paintRow(brush, input, row);
     paintNow(brush, top, bottom);
   }
 
-  private paintRow(brush: Brush, input: SceneInput, patterns: Patterns, row: PlacedRow): void {
+  private paintRow(brush: Brush, input: SceneInput, row: PlacedRow): void {
     const { view, nowMs } = brush;
     const inView = <T extends Interval>(list: readonly T[] = []) =>
       list.filter((one) => one.toMs > view.fromMs && one.fromMs < view.toMs);
     const blackouts = inView(input.blackoutsByRow.get(row.row.id));
     const others = inView(input.othersByRow.get(row.row.id));
-    for (const blackout of blackouts) paintBlackout(brush, patterns, row, blackout);
+    for (const blackout of blackouts) paintBlackout(brush, row, blackout);
     const { humps, ticks } = this.humpsOf(brush, input, row);
     for (const hump of humps) if (input.pickedIds.has(hump.id)) paintPosts(brush, row, hump);
     for (const hump of humps) paintLand(brush, row, hump);
-    for (const block of others) paintOthersBlock(brush, patterns, row, block);
+    for (const block of others) paintOthersBlock(brush, row, block);
     const taken: Box[] = [];
     for (const block of others) {
       const y0 = othersTopPx(row, brush);

@@ -1,5 +1,14 @@
 /** Joins the scene to React: gives it sizes, data and gestures, and tells React only when the view has come to rest. */
-import { type RefObject, useCallback, useEffect, useLayoutEffect, useMemo, useRef, useState } from 'react';
+import {
+  type RefObject,
+  startTransition,
+  useCallback,
+  useEffect,
+  useLayoutEffect,
+  useMemo,
+  useRef,
+  useState,
+} from 'react';
 import { readPalette, useRepaintCount } from '../common/palette.js';
 import { attachGestures } from './gestures.js';
 import { indexHumps } from './hump-index.js';
@@ -53,8 +62,10 @@ export function useBoardScene(props: TideBoardProps, elements: BoardElements) {
 
   const settle = useCallback(() => {
     if (!scene) return;
-    setSettled(scene.view);
-    latest.current.onViewChange(scene.view);
+    // The picture is there already; buttons and table may follow a little later, without holding up a frame.
+    const { view } = scene;
+    startTransition(() => setSettled(view));
+    startTransition(() => latest.current.onViewChange(view));
   }, [scene]);
 
   const show = useCallback((view: Interval) => scene?.setView(view), [scene]);

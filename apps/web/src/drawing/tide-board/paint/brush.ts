@@ -3,11 +3,13 @@ import type { Tokens } from '../../../theme/tokens.js';
 import { canvasFont } from '../../common/palette.js';
 import type { RowLayout } from '../rows.js';
 import type { Interval } from '../tide-board-types.js';
+import type { Patterns } from './patterns.js';
 
 /** A canvas ready to be painted on; its y is the field's own y, whatever part of the field it shows. */
 export interface Brush {
   readonly ctx: CanvasRenderingContext2D;
   readonly palette: Tokens;
+  readonly patterns: Patterns;
   readonly view: Interval;
   readonly widthPx: number;
   readonly layout: RowLayout;

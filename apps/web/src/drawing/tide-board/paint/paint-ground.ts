@@ -4,7 +4,6 @@ import { baseLinePx, type PlacedRow, type PlacedStation } from '../rows.js';
 import type { BoardBlackout, OthersBlock } from '../tide-board-types.js';
 import { axisStep, multiplesInView } from '../view.js';
 import { type Brush, FONT, plate, STROKE, textWidth } from './brush.js';
-import type { Patterns } from './patterns.js';
 
 const OTHERS_PX = 15;
 
@@ -68,12 +67,12 @@ export function paintRules(brush: Brush, stations: readonly PlacedStation[], row
 }
 
 /** A flat block of slanted lines: taken, by somebody whose curve is nobody's business. */
-export function paintOthersBlock(brush: Brush, patterns: Patterns, row: PlacedRow, block: OthersBlock): void {
+export function paintOthersBlock(brush: Brush, row: PlacedRow, block: OthersBlock): void {
   const { ctx, palette, layout } = brush;
   const x0 = brush.x(block.fromMs);
   const width = Math.max(2, brush.x(block.toMs) - x0);
   const y = baseLinePx(row, layout.measures) - OTHERS_PX;
-  fillPattern(ctx, patterns.slant, x0, y, width, OTHERS_PX);
+  fillPattern(ctx, brush.patterns.slant, x0, y, width, OTHERS_PX);
   ctx.strokeStyle = palette.ink3;
   ctx.lineWidth = 1;
   ctx.strokeRect(x0 + 0.5, y + 0.5, Math.max(1, width - 1), OTHERS_PX - 1);
@@ -85,14 +84,14 @@ export function othersTopPx(row: PlacedRow, brush: Brush): number {
 }
 
 /** Woven ground over a row. */
-export function paintBlackout(brush: Brush, patterns: Patterns, row: PlacedRow, blackout: BoardBlackout): void {
+export function paintBlackout(brush: Brush, row: PlacedRow, blackout: BoardBlackout): void {
   const { ctx, palette, layout } = brush;
   const x0 = Math.max(-2, brush.x(blackout.fromMs));
   const x1 = Math.min(brush.widthPx + 2, brush.x(blackout.toMs));
   const y = row.topPx + layout.measures.headroomPx + 6;
   const height = baseLinePx(row, layout.measures) - y;
   // The weave is fixed to the row and to the blackout's own start, so that it moves along when panned.
-  fillPattern(ctx, patterns.weave, x0, y, x1 - x0, height, brush.x(blackout.fromMs) % 12);
+  fillPattern(ctx, brush.patterns.weave, x0, y, x1 - x0, height, brush.x(blackout.fromMs) % 12);
   ctx.strokeStyle = palette.weave;
   ctx.lineWidth = 1;
   ctx.strokeRect(x0 + 0.5, y + 0.5, Math.max(1, x1 - x0 - 1), height - 1);

@@ -3,8 +3,8 @@ import { type CurveFrame, type CurvePoints, curveBetween, statedPart } from '../
 import { baseLinePx, type PlacedRow } from '../rows.js';
 import type { BoardHump } from '../tide-board-types.js';
 import { type Brush, STROKE } from './brush.js';
+import { LAND_FADE_PX } from './patterns.js';
 
-const FADE_PX = 16;
 const BAR_GAP_PX = 5;
 const BOLLARD = { width: 4.4, height: 7.5 } as const;
 
@@ -15,27 +15,24 @@ export function frameOf(brush: Brush, row: PlacedRow): CurveFrame {
 
 /** The antenna's horizon under a pass, as land that fades out at both ends. */
 export function paintLand(brush: Brush, row: PlacedRow, hump: BoardHump): void {
-  const { ctx, palette } = brush;
+  const { ctx, palette, patterns } = brush;
   const { profile } = hump;
   const frame = frameOf(brush, row);
   const points = curveBetween(profile, frame, profile.fromMs, profile.toMs);
-  const left = Math.min(points.xs[0] as number, frame.x(hump.aosMs) - FADE_PX);
-  const right = Math.max(points.xs.at(-1) as number, frame.x(hump.losMs) + FADE_PX);
-  const fade = Math.min(0.45, FADE_PX / Math.max(1, right - left));
-  const gradient = ctx.createLinearGradient(left, 0, right, 0);
-  const clear = `${palette.land}00`;
-  gradient.addColorStop(0, clear);
-  gradient.addColorStop(fade, palette.land);
-  gradient.addColorStop(1 - fade, palette.land);
-  gradient.addColorStop(1, clear);
-  ctx.fillStyle = gradient;
-  ctx.beginPath();
-  ctx.moveTo(left, frame.baseY);
-  ctx.lineTo(left, points.lands[0] as number);
-  for (let at = 0; at < points.xs.length; at += 1) ctx.lineTo(points.xs[at] as number, points.lands[at] as number);
-  ctx.lineTo(right, points.lands.at(-1) as number);
-  ctx.lineTo(right, frame.baseY);
+  traceDown(ctx, points, points.lands, frame.baseY);
+  ctx.fillStyle = palette.land;
   ctx.fill();
+  ctx.fillStyle = patterns.landFade;
+  for (const [x, y, turn] of [
+    [points.xs[0], points.lands[0], 1],
+    [points.xs.at(-1), points.lands.at(-1), -1],
+  ] as [number, number, 1 | -1][]) {
+    ctx.save();
+    ctx.translate(x, 0);
+    ctx.scale(turn, 1);
+    ctx.fillRect(-LAND_FADE_PX, y, LAND_FADE_PX, frame.baseY - y);
+    ctx.restore();
+  }
 }
 
 /** Warm paper and two posts with pennants, under a picked pass. */

@@ -5,14 +5,22 @@ import type { Tokens } from '../../../theme/tokens.js';
 export interface Patterns {
   readonly weave: CanvasPattern;
   readonly slant: CanvasPattern;
+  /** From nothing to land, ending at x = 0: made once, since a gradient for each hump and frame would be waste. */
+  readonly landFade: CanvasGradient;
 }
 
 const WEAVE_PX = 12;
 const SLANT_PX = 7;
+/** Length of the land's fade. */
+export const LAND_FADE_PX = 13;
 
 /** Draws the tiles. */
 export function makePatterns(ctx: CanvasRenderingContext2D, palette: Tokens, density: number): Patterns {
+  const landFade = ctx.createLinearGradient(-LAND_FADE_PX, 0, 0, 0);
+  landFade.addColorStop(0, `${palette.land}00`);
+  landFade.addColorStop(1, palette.land);
   return {
+    landFade,
     weave: tile(ctx, WEAVE_PX, density, (t) => {
       t.strokeStyle = palette.weave;
       t.lineWidth = 1.2;

@@ -1,0 +1,115 @@
+/** What pointer and keys do on the board: hover, pick, open, and the focus that moves from pass to pass. */
+import { type KeyboardEvent, type MouseEvent, type PointerEvent, useEffect, useMemo, useRef, useState } from 'react';
+import { humpAt } from './hit-test.js';
+import { entryHump, isMoveKey, neighbour } from './keyboard.js';
+import type { RowLayout } from './rows.js';
+import type { BoardHump, Interval, TideBoardProps } from './tide-board-types.js';
+import type { BoardElements, useBoardScene } from './use-board-scene.js';
+import { panView } from './view.js';
+
+/** Zoom of one press of a button or key. */
+export const ZOOM_STEP = 1.6;
+const PAGE_SHARE = 0.9;
+
+type Board = ReturnType<typeof useBoardScene>;
+
+/** Handlers for the field, the pass under the pointer, and the pass that Tab reaches. */
+export function useBoardActs(props: TideBoardProps, elements: BoardElements, board: Board) {
+  const { scene, layout, index, pickedIds, widthPx } = board;
+  const [hoverId, setHoverId] = useState<string | null>(null);
+  const { entry, setFocusId, moveTo } = useRovingFocus(props, elements, board);
+
+  const humpUnder = (event: MouseEvent): BoardHump | null => {
+    if (!scene) return null;
+    const box = elements.field.current?.getBoundingClientRect();
+    const place = { xPx: event.clientX - (box?.left ?? 0), yPx: event.clientY - (box?.top ?? 0) };
+    return humpAt(index, layout, scene.view, widthPx, place);
+  };
+  const hover = (event: PointerEvent) => {
+    // Nothing is rendered while the board is being dragged.
+    const isLooking = event.pointerType === 'mouse' && event.buttons === 0;
+    setHoverId(isLooking ? (humpUnder(event)?.id ?? null) : null);
+  };
+  const click = (event: MouseEvent) => {
+    const named = humpIdOf(event.target);
+    // A click without a place comes from a screen reader or from speech: its button says which pass is meant.
+    const hump = event.detail === 0 ? index.byId.get(named ?? '') : humpUnder(event);
+    if (!hump) return;
+    setFocusId(hump.id);
+    if (pickedIds.has(hump.id) && !isAdditive(event)) props.onOpen(hump.id);
+    else props.onPick(hump.id, isAdditive(event));
+  };
+  const key = (event: KeyboardEvent) => {
+    const id = humpIdOf(event.target);
+    const next = id && isMoveKey(event.key) ? neighbour(index, layout, id, event.key) : null;
+    if (next) moveTo(next);
+    else if (id && event.key === 'Enter') props.onOpen(id);
+    else if (id && event.key === ' ') props.onPick(id, isAdditive(event));
+    else if (event.key === 'Escape') props.onClear?.();
+    else if (!keyView(event.key, board, props.limits) && !isMoveKey(event.key)) return;
+    event.preventDefault();
+  };
+  return { entry, hoverId, hover, leave: () => setHoverId(null), click, key };
+}
+
+function useRovingFocus(props: TideBoardProps, elements: BoardElements, board: Board) {
+  const { scene, layout, index, settled } = board;
+  const { pickedIds = NOTHING, nowMs, limits } = props;
+  const [focusId, setFocusId] = useState<string | null>(null);
+  const wantsFocus = useRef(false);
+  const entry = useMemo(
+    () => index.byId.get(focusId ?? '') ?? entryHump(index, layout, settled, pickedIds, nowMs),
+    [index, layout, settled, pickedIds, focusId, nowMs],
+  );
+  // After each render: the button of a pass that was out of sight appears only once its row and time are shown.
+  useEffect(() => {
+    if (!wantsFocus.current || !focusId) return;
+    const button = elements.moving.current?.querySelector<HTMLElement>(`[data-hump="${CSS.escape(focusId)}"]`);
+    if (!button) return;
+    wantsFocus.current = false;
+    button.focus({ preventScroll: true });
+  });
+  const moveTo = (hump: BoardHump) => {
+    wantsFocus.current = true;
+    setFocusId(hump.id);
+    scrollToRow(elements.scroller.current, layout, hump.rowId);
+    if (!scene || (hump.aosMs >= scene.view.fromMs && hump.losMs <= scene.view.toMs)) return;
+    const middleMs = (hump.aosMs + hump.losMs) / 2;
+    board.show(panView(scene.view, middleMs - (scene.view.fromMs + scene.view.toMs) / 2, limits));
+    board.settle();
+  };
+  return { entry, setFocusId, moveTo };
+}
+
+const NOTHING: readonly string[] = [];
+
+/** Keys that change the view; false when the key isn't one of them. */
+function keyView(key: string, board: Board, limits: Interval | undefined): boolean {
+  const { settled } = board;
+  if (key === '+' || key === '=') board.zoomBy(1 / ZOOM_STEP);
+  else if (key === '-') board.zoomBy(ZOOM_STEP);
+  else if (key === 'PageUp' || key === 'PageDown') {
+    const byMs = (settled.toMs - settled.fromMs) * (key === 'PageUp' ? -PAGE_SHARE : PAGE_SHARE);
+    board.show(panView(settled, byMs, limits));
+    board.settle();
+  } else return false;
+  return true;
+}
+
+function humpIdOf(target: EventTarget): string | undefined {
+  return (target as HTMLElement).closest<HTMLElement>('[data-hump]')?.dataset['hump'];
+}
+
+function isAdditive(event: { shiftKey: boolean; ctrlKey: boolean; metaKey: boolean }): boolean {
+  return event.shiftKey || event.ctrlKey || event.metaKey;
+}
+
+function scrollToRow(scroller: HTMLElement | null, layout: RowLayout, rowId: string): void {
+  const row = layout.rowById.get(rowId);
+  if (!scroller || !row) return;
+  const { rowPx, stripPx } = layout.measures;
+  if (row.topPx - stripPx < scroller.scrollTop) scroller.scrollTop = row.topPx - stripPx;
+  else if (row.topPx + rowPx > scroller.scrollTop + scroller.clientHeight) {
+    scroller.scrollTop = row.topPx + rowPx - scroller.clientHeight;
+  }
+}
