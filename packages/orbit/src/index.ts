@@ -1,5 +1,7 @@
 /** Where spacecraft are, when a station sees them, and what the link between them carries. */
 
+export * from './elements/element-set.js';
+export * from './elements/sgp4-source.js';
 export { formatCcsdsTime, parseCcsdsTime } from './ephemeris/ccsds-time.js';
 export * from './ephemeris/hybrid-source.js';
 export { fromUtcMs, TIME_SYSTEMS, type TimeSystem, taiMinusUtcS, toUtcMs } from './ephemeris/leap-seconds.js';
@@ -13,6 +15,9 @@ export * from './export/oem-writer.js';
 export * from './export/omm-xml.js';
 export * from './export/pointing-csv.js';
 export * from './export/sample-oem.js';
+export * from './frames/ellipsoid.js';
+export * from './frames/look-angles.js';
+export * from './frames/sidereal.js';
 export * from './mount/mount.js';
 export * from './mount/mount-coverage.js';
 export * from './orbit-error.js';
