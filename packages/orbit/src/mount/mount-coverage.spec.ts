@@ -63,6 +63,21 @@ describe('the part of a pass that a mount can follow', () => {
     expect(mountCoverage(flyOver(2), tilted).gaps).toEqual([]);
   });
 
+  it('names the axis and the limit that it is about', () => {
+    const lazy: Mount = { kind: 'az-el', first: { rateDegPerS: 60 }, second: { rateDegPerS: 0.3 } };
+    expect(mountCoverage(flyOver(300), lazy).gaps[0]?.sentence).toMatch(
+      /^The elevation would have to turn at 0\.\d degrees\/s; the mount turns at 0\.3, so the dish loses/,
+    );
+    const heavy: Mount = {
+      kind: 'az-el',
+      first: { rateDegPerS: 60, accelerationDegPerS2: 0.5 },
+      second: { rateDegPerS: 5 },
+    };
+    expect(mountCoverage(flyOver(20), heavy).gaps[0]?.sentence).toContain(
+      "The azimuth would have to change its rate faster than the mount's 0.5 degrees/s2",
+    );
+  });
+
   it('ends at a stop of the elevation', () => {
     const low: Mount = { ...slow, second: { rateDegPerS: 5, minDeg: 30, maxDeg: 85 } };
     const { gaps } = mountCoverage(flyOver(100), low);

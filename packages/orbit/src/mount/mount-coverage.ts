@@ -155,46 +155,65 @@ function unwound(samples: readonly Sample[], mount: Mount, from: number, until: 
   return samples.length - 1;
 }
 
+type AxisName = 'first' | 'second';
+
 /** Stretches where a rate or an acceleration is beyond an axis, widened to what the axes can bridge in the time. */
 function tooFast(samples: readonly Sample[], mount: Mount): Lost[] {
   const lost: Lost[] = [];
   for (let i = 0; i + 1 < samples.length; i += 1) {
-    if (possible(samples, i, mount)) continue;
+    const limit = beyondAxis(samples, i, mount);
+    if (limit === undefined) continue;
     const bridge = shortestBridge(samples, i, i + 1, mount);
-    const fastest = steepest(samples, bridge.from, bridge.to);
-    const axis = mount.kind === 'x-y' ? 'X axis' : 'azimuth';
-    const where = mount.kind === 'x-y' ? 'Near the end of the X axis' : 'Near the zenith of the mount';
-    const lengthS = (samples[bridge.to]!.timeMs - samples[bridge.from]!.timeMs) / 1000;
-    lost.push({
-      ...bridge,
-      code: 'keyhole',
-      sentence: `${where} the ${axis} would have to turn at ${fastest.toFixed(1)} degrees/s; the mount turns at ${mount.first.rateDegPerS}, so it loses the spacecraft for ${lengthS.toFixed(0)} s.`,
-    });
+    lost.push({ ...bridge, code: 'keyhole', sentence: keyholeSentence(samples, bridge, limit, mount) });
     i = Math.max(i, bridge.to - 1);
   }
   return lost;
 }
 
-function possible(samples: readonly Sample[], i: number, mount: Mount): boolean {
-  const [before, from, to] = [samples[i - 1], samples[i]!, samples[i + 1]!];
-  return (['first', 'second'] as const).every((name) => {
-    const axis = mount[name];
-    const rate = slope(from, to, name);
-    if (Math.abs(rate) > axis.rateDegPerS) return false;
-    if (before === undefined || axis.accelerationDegPerS2 === undefined) return true;
-    const spanS = (to.timeMs - before.timeMs) / 2000;
-    return Math.abs(rate - slope(before, from, name)) / spanS <= axis.accelerationDegPerS2;
-  });
+function keyholeSentence(
+  samples: readonly Sample[],
+  { from, to }: { from: number; to: number },
+  limit: { axis: AxisName; of: 'rate' | 'acceleration' },
+  mount: Mount,
+): string {
+  const { rateDegPerS, accelerationDegPerS2 } = mount[limit.axis];
+  const names =
+    mount.kind === 'x-y' ? { first: 'X axis', second: 'Y axis' } : { first: 'azimuth', second: 'elevation' };
+  const lengthS = ((samples[to]!.timeMs - samples[from]!.timeMs) / 1000).toFixed(0);
+  const must =
+    limit.of === 'rate'
+      ? `turn at ${steepest(samples, from, to, limit.axis).toFixed(1)} degrees/s; the mount turns at ${rateDegPerS}`
+      : `change its rate faster than the mount's ${accelerationDegPerS2} degrees/s2`;
+  return `The ${names[limit.axis]} would have to ${must}, so the dish loses the spacecraft for ${lengthS} s.`;
 }
 
-function slope(from: Sample, to: Sample, name: 'first' | 'second'): number {
+/** Which limit the step after a sample breaks, the rate before the acceleration; undefined if none. */
+function beyondAxis(
+  samples: readonly Sample[],
+  i: number,
+  mount: Mount,
+): { axis: AxisName; of: 'rate' | 'acceleration' } | undefined {
+  const [before, from, to] = [samples[i - 1], samples[i]!, samples[i + 1]!];
+  for (const axis of ['first', 'second'] as const) {
+    if (Math.abs(slope(from, to, axis)) > mount[axis].rateDegPerS) return { axis, of: 'rate' };
+  }
+  if (before === undefined) return undefined;
+  const spanS = (to.timeMs - before.timeMs) / 2000;
+  return (['first', 'second'] as const)
+    .filter((axis) => {
+      const change = Math.abs(slope(from, to, axis) - slope(before, from, axis)) / spanS;
+      return change > (mount[axis].accelerationDegPerS2 ?? Number.POSITIVE_INFINITY);
+    })
+    .map((axis) => ({ axis, of: 'acceleration' as const }))[0];
+}
+
+function slope(from: Sample, to: Sample, name: AxisName): number {
   return ((to[name] - from[name]) * 1000) / (to.timeMs - from.timeMs);
 }
 
-function steepest(samples: readonly Sample[], from: number, to: number): number {
+function steepest(samples: readonly Sample[], from: number, to: number, axis: AxisName): number {
   let fastest = 0;
-  for (let i = from; i < to; i += 1)
-    fastest = Math.max(fastest, Math.abs(slope(samples[i]!, samples[i + 1]!, 'first')));
+  for (let i = from; i < to; i += 1) fastest = Math.max(fastest, Math.abs(slope(samples[i]!, samples[i + 1]!, axis)));
   return fastest;
 }
 
