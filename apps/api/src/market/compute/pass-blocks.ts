@@ -122,10 +122,10 @@ export class PassBlocks {
 }
 
 const reachesBack = (first: Stay | undefined, dayStartMs: number, fromMs: number): boolean =>
-  first !== undefined && first.clippedStart && first.aosMs <= dayStartMs + 1 && first.losMs > fromMs;
+  first?.clippedStart === true && first.aosMs <= dayStartMs + 1 && first.losMs > fromMs;
 
 const reachesOn = (last: Stay | undefined, dayEndMs: number, toMs: number): boolean =>
-  last !== undefined && last.clippedEnd && last.losMs >= dayEndMs - 1 && last.aosMs < toMs;
+  last?.clippedEnd === true && last.losMs >= dayEndMs - 1 && last.aosMs < toMs;
 
 function stayOf(pass: Pass, elementSetId: string): Stay {
   return {

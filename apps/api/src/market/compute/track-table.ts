@@ -2,16 +2,13 @@
  * Where a spacecraft is, read off a table instead of propagated anew: for drawing only. Positions a minute apart with their
  * velocities are joined by cubics; from 300 km up the error stays below 2 m, far under what a picture shows.
  */
-import { gmstRad, sgp4Source, type TrajectorySource } from '@skyberth/orbit';
+import { type SiteFrame, sgp4Source, type TrajectorySource, temeToEcef } from '@skyberth/orbit';
 import type { ElementsSpan } from '../workers/job-types.js';
-import type { SiteAxes } from './horizons.js';
 import { WeightedCache } from './weighted-cache.js';
 
 const STEP_MS = 60_000;
 const DAY_MS = 86_400_000;
 const NODES = DAY_MS / STEP_MS + 1;
-/** WGS84 rotation rate of the Earth. */
-const EARTH_ROTATION_RAD_PER_S = 7.292115e-5;
 const DEG = 180 / Math.PI;
 /** Days of tables kept; each is 69 kB. */
 const MAX_DAYS = 400;
@@ -38,23 +35,23 @@ export class TrackTables {
     return source;
   }
 
-  look(span: ElementsSpan, site: SiteAxes, timeMs: number): Look {
+  look(span: ElementsSpan, { positionKm, east, north, up }: SiteFrame, timeMs: number): Look {
     const day = Math.floor(timeMs / DAY_MS);
     const table = this.day(span, day);
     const at = (timeMs - day * DAY_MS) / STEP_MS;
     const node = Math.min(NODES - 2, Math.floor(at));
     const share = at - node;
     const base = node * 6;
-    const dx = cubic(table, base, share) - site.x;
-    const dy = cubic(table, base + 1, share) - site.y;
-    const dz = cubic(table, base + 2, share) - site.z;
-    const east = dx * site.eastX + dy * site.eastY;
-    const north = dx * site.northX + dy * site.northY + dz * site.northZ;
-    const up = dx * site.upX + dy * site.upY + dz * site.upZ;
-    const azimuth = Math.atan2(east, north) * DEG;
+    const x = cubic(table, base, share) - positionKm[0];
+    const y = cubic(table, base + 1, share) - positionKm[1];
+    const z = cubic(table, base + 2, share) - positionKm[2];
+    const eastKm = x * east[0] + y * east[1] + z * east[2];
+    const northKm = x * north[0] + y * north[1] + z * north[2];
+    const upKm = x * up[0] + y * up[1] + z * up[2];
+    const azimuth = Math.atan2(eastKm, northKm) * DEG;
     return {
       azimuthDeg: azimuth < 0 ? azimuth + 360 : azimuth,
-      elevationDeg: Math.atan2(up, Math.sqrt(east * east + north * north)) * DEG,
+      elevationDeg: Math.atan2(upKm, Math.sqrt(eastKm * eastKm + northKm * northKm)) * DEG,
     };
   }
 
@@ -78,21 +75,8 @@ function tabulate(source: TrajectorySource, day: number): Float64Array {
   for (let node = 0; node < NODES; node += 1) {
     const timeMs = day * DAY_MS + node * STEP_MS;
     if (timeMs >= source.startMs && timeMs <= source.stopMs && usable(source, timeMs, state)) {
-      const angle = gmstRad(timeMs);
-      const [cos, sin] = [Math.cos(angle), Math.sin(angle)];
-      const [x = 0, y = 0, z = 0, vx = 0, vy = 0, vz = 0] = state;
-      const [ex, ey] = [cos * x + sin * y, cos * y - sin * x];
-      table.set(
-        [
-          ex,
-          ey,
-          z,
-          cos * vx + sin * vy + EARTH_ROTATION_RAD_PER_S * ey,
-          cos * vy - sin * vx - EARTH_ROTATION_RAD_PER_S * ex,
-          vz,
-        ],
-        node * 6,
-      );
+      temeToEcef(timeMs, state);
+      table.set(state, node * 6);
     } else if (node > 0) {
       table.copyWithin(node * 6, (node - 1) * 6, node * 6);
     }
