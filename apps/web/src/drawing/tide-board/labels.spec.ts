@@ -38,8 +38,12 @@ describe('words on the board', () => {
   });
 
   it('fall back to the line that matters most, then to none', () => {
-    const roof = { x0: 0, y0: 0, x1: 900, y1: 20 };
-    expect(placeLabels([wish('a', 100, 36)], BOUNDS, [roof]).map((line) => line.text)).not.toContain('a name');
+    const walls = [
+      { x0: 0, y0: 0, x1: 900, y1: 20 },
+      { x0: 0, y0: 25, x1: 80, y1: 68 },
+      { x0: 120, y0: 25, x1: 300, y1: 68 },
+    ];
+    expect(placeLabels([wish('a', 100, 36)], BOUNDS, walls).map((line) => line.text)).toEqual(['a price']);
     expect(placeLabels([wish('a', 100, 40)], BOUNDS, [BOUNDS])).toEqual([]);
   });
 

@@ -8,7 +8,7 @@ import { formatNumber } from '../../ui/format.js';
 import { statedPart } from './curve.js';
 import { type HumpIndex, humpsBetween, sellableMinutesByDay } from './hump-index.js';
 import type { Box } from './labels.js';
-import { type Brush, FONT, forgetTextWidths } from './paint/brush.js';
+import { type Brush, FONT, forgetTextWidths, textWidth } from './paint/brush.js';
 import { AXIS_PX, paintAxis } from './paint/paint-axis.js';
 import { CLOSE_UP_FROM_PX, paintCloseUp } from './paint/paint-close-up.js';
 import {
@@ -230,7 +230,10 @@ export class BoardScene {
     for (const day of multiplesInView(view, DAY_MS)) {
       const count = Math.round(minutes.get(day) ?? 0);
       const text = dayPx > 90 ? `${formatNumber(count)} min for sale` : `${formatNumber(count)} min`;
-      ctx.fillText(text, brush.x(day + DAY_MS / 2), placed.topPx + layout.measures.stripPx / 2 + 1);
+      const x = brush.x(day + DAY_MS / 2);
+      const half = textWidth(ctx, FONT.short, text) / 2;
+      if (x - half < 2 || x + half > brush.widthPx - 2) continue;
+      ctx.fillText(text, x, placed.topPx + layout.measures.stripPx / 2 + 1);
     }
   }
 

@@ -82,6 +82,7 @@ function BoardField({ props, elements, board }: BoardFieldProps) {
       aria-label="Passes. Arrow keys move from pass to pass, Enter opens, Space picks, plus and minus zoom."
       onClick={acts.click}
       onKeyDown={acts.key}
+      onKeyUp={acts.keyUp}
       onPointerMove={acts.hover}
       onPointerLeave={acts.leave}
       data-over={hovered ? true : undefined}

@@ -49,7 +49,11 @@ export function useBoardActs(props: TideBoardProps, elements: BoardElements, boa
     else if (!keyView(event.key, board, props.limits) && !isMoveKey(event.key)) return;
     event.preventDefault();
   };
-  return { entry, hoverId, hover, leave: () => setHoverId(null), click, key };
+  // Some browsers click a button when Space is let go, though the key itself has been dealt with.
+  const keyUp = (event: KeyboardEvent) => {
+    if (event.key === ' ' && humpIdOf(event.target)) event.preventDefault();
+  };
+  return { entry, hoverId, keyUp, hover, leave: () => setHoverId(null), click, key };
 }
 
 function useRovingFocus(props: TideBoardProps, elements: BoardElements, board: Board) {

@@ -121,7 +121,8 @@ function carryAlong(moving: HTMLElement | null, scene: BoardScene, settled: Inte
   const sameSpan = Math.abs(scene.view.toMs - scene.view.fromMs - (settled.toMs - settled.fromMs)) < 1;
   const shiftPx = sameSpan ? timeToX(scene.view, scene.widthPx, settled.fromMs) : 0;
   moving.style.transform = shiftPx === 0 ? '' : `translateX(${shiftPx}px)`;
-  moving.style.visibility = sameSpan ? '' : 'hidden';
+  // Not hidden: that would take the focus away from the pass that zooms by keys.
+  moving.style.opacity = sameSpan ? '' : '0';
 }
 
 function useSizes(

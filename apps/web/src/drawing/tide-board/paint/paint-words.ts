@@ -44,7 +44,7 @@ export function paintWords(brush: Brush, row: PlacedRow, drawn: readonly DrawnHu
     x1: widthPx - 2,
     y1: row.topPx + layout.measures.rowPx,
   };
-  const wishes = drawn.map((one) => wishOf(brush, row, one));
+  const wishes = drawn.map((one) => wishOf(brush, row, { ...one, points: seenPoints(one.points, widthPx) }));
   const byId = new Map(drawn.map((one) => [one.hump.id, one]));
   ctx.textAlign = 'left';
   for (const line of placeLabels(wishes, bounds, taken)) {
@@ -61,6 +61,17 @@ export function paintWords(brush: Brush, row: PlacedRow, drawn: readonly DrawnHu
     ctx.fillStyle = colourOf(brush, one, line.isInside, isName);
     ctx.fillText(line.text, line.x, line.y + 0.5);
   }
+}
+
+/** The points in view, so that a pass wider than the view still has its words where they can be read. */
+function seenPoints(points: CurvePoints, widthPx: number): CurvePoints {
+  const { xs } = points;
+  if ((xs[0] as number) >= 0 && (xs.at(-1) as number) <= widthPx) return points;
+  const first = xs.findIndex((x) => x >= 0);
+  const last = xs.findLastIndex((x) => x <= widthPx);
+  if (first < 0 || last <= first) return points;
+  const cut = (values: readonly number[]) => values.slice(first, last + 1);
+  return { xs: cut(xs), tops: cut(points.tops), lands: cut(points.lands) };
 }
 
 function isSolid({ state }: BoardHump): boolean {
