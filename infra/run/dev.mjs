@@ -22,7 +22,9 @@ watch(bin('vite'), ['--port', String(pagePort), '--strictPort'], {
   cwd: join(ROOT, 'apps/web'),
   env: { ...environment, SKYBERTH_API_ORIGIN: `http://127.0.0.1:${apiPort}` },
 });
-console.log(`\nSkyberth (development) at http://127.0.0.1:${pagePort}; mail at ${stack.urls.mail}; payments at ${stack.urls.payments}`);
+console.log(
+  `\nSkyberth (development) at http://127.0.0.1:${pagePort}; mail at ${stack.urls.mail}; payments at ${stack.urls.payments}`,
+);
 
 let stopping = false;
 for (const signal of ['SIGINT', 'SIGTERM']) {

@@ -11,7 +11,12 @@ function secretsIn(dataDir) {
   const file = join(dataDir, 'secrets.json');
   if (existsSync(file)) return JSON.parse(readFileSync(file, 'utf8'));
   const secret = () => randomBytes(32).toString('hex');
-  const made = { tokenSecret: secret(), paymentKey: `sk_test_${secret()}`, paymentPublicKey: `pk_test_${secret()}`, webhookSecret: `whsec_${secret()}` };
+  const made = {
+    tokenSecret: secret(),
+    paymentKey: `sk_test_${secret()}`,
+    paymentPublicKey: `pk_test_${secret()}`,
+    webhookSecret: `whsec_${secret()}`,
+  };
   writeFileSync(file, JSON.stringify(made, null, 2), { mode: 0o600 });
   return made;
 }
@@ -39,7 +44,12 @@ export async function startStack({ port, dataDir: given, api = true, demo = true
   const dataDir = resolve(ROOT, given);
   mkdirSync(dataDir, { recursive: true });
   const secrets = secretsIn(dataDir);
-  const [payments, smtpPort, mailPort, elementsPort] = [await freePort(), await freePort(), await freePort(), await freePort()];
+  const [payments, smtpPort, mailPort, elementsPort] = [
+    await freePort(),
+    await freePort(),
+    await freePort(),
+    await freePort(),
+  ];
   const children = [];
   const environment = serverEnvironment({ dataDir, port, payments, smtpPort, mailPort, elementsPort, secrets });
   const standIns = {
@@ -64,7 +74,9 @@ export async function startStack({ port, dataDir: given, api = true, demo = true
       ['elements', 'infra/elements', elementsPort],
     ];
     for (const [name, room] of parts) children.push(startNode(name, script(room), standIns, { quiet: true }));
-    await Promise.all(parts.map(([, , at], index) => waitFor(`http://127.0.0.1:${at}/health`, children[index], 20_000)));
+    await Promise.all(
+      parts.map(([, , at], index) => waitFor(`http://127.0.0.1:${at}/health`, children[index], 20_000)),
+    );
     if (api) {
       const server = startNode('skyberth', script('apps/api'), environment, { quiet: true });
       children.push(server);
@@ -75,7 +87,12 @@ export async function startStack({ port, dataDir: given, api = true, demo = true
     throw error;
   }
   const address = (at) => `http://127.0.0.1:${at}`;
-  return { children, environment, stop, urls: { app: address(port), payments: address(payments), mail: address(mailPort), elements: address(elementsPort) } };
+  return {
+    children,
+    environment,
+    stop,
+    urls: { app: address(port), payments: address(payments), mail: address(mailPort), elements: address(elementsPort) },
+  };
 }
 
 /** Plays the invented scenario into the empty data folder; interrupted, it begins again from nothing. */

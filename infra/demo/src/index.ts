@@ -1,0 +1,2 @@
+/** Plays the invented scenario through the real server, so that every figure of the demo is one the product made itself. */
+export { type DemoSettings, type DemoSignIn, loadDemo } from './play/load-demo.js';
