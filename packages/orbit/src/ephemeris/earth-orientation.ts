@@ -7,6 +7,7 @@
  * the small print of TEME says. UT1 is taken as UTC and the pole as standing still, as everywhere in this package.
  */
 
+import { gmstRad } from '../frames/sidereal.js';
 import { ttCenturies } from './leap-seconds.js';
 import { NUTATION_TERMS } from './nutation-terms.js';
 
@@ -84,22 +85,10 @@ export function apparentSiderealRad(ut1Ms: number, t: number): number {
   return (rotation + precession + equinoxes) % TURN_RAD;
 }
 
-/**
- * Greenwich mean sidereal time of 1982 in radians (Aoki et al. 1982), UT1 taken as UTC: the angle that SGP4's axes are
- * tied to the Earth by.
- */
-export function meanSidereal1982Rad(utcMs: number): number {
-  const days = (utcMs - 946_728_000_000) / 86_400_000;
-  const centuries = days / 36_525;
-  const seconds = 67_310.54841 + (8_640_184.812866 + (0.093104 - 6.2e-6 * centuries) * centuries) * centuries;
-  // 876,600 h a century are whole turns a day; only the fraction of the day matters.
-  return (TURN_RAD * (((seconds / 86_400 + ((utcMs / 86_400_000) % 1) + 0.5) % 1) + 1)) % TURN_RAD;
-}
-
-/** GCRF to TEME at a UTC instant, given the sidereal time of 1982 that takes TEME to Earth axes at that instant. */
-export function gcrfToTeme(utcMs: number, meanSidereal1982Rad: number): Rotation {
+/** GCRF to TEME at a UTC instant: to Earth axes by the apparent sidereal time, and back by that of 1982. */
+export function gcrfToTeme(utcMs: number): Rotation {
   const t = ttCenturies(utcMs);
-  return multiply(aboutZ(apparentSiderealRad(utcMs, t) - meanSidereal1982Rad), gcrfToTrueOfDate(t));
+  return multiply(aboutZ(apparentSiderealRad(utcMs, t) - gmstRad(utcMs)), gcrfToTrueOfDate(t));
 }
 
 /** Axes turned by an angle about one of them, as in the Explanatory Supplement: R1 and R3. */

@@ -1,19 +1,11 @@
 /** A spacecraft's path from its operator's own ephemeris, inside the spans that the message says can be used. */
+import { temeToEcef } from '../frames/look-angles.js';
+import { EARTH_TURN_RAD_PER_S, gmstRad } from '../frames/sidereal.js';
 import { OrbitError } from '../orbit-error.js';
 import type { TrajectorySource } from '../types.js';
-import {
-  aboutZ,
-  gcrfToTeme,
-  meanSidereal1982Rad,
-  type Rotation,
-  rotateInPlace,
-  transpose,
-} from './earth-orientation.js';
+import { aboutZ, gcrfToTeme, rotateInPlace, transpose } from './earth-orientation.js';
 import { interpolateState } from './interpolate.js';
 import type { Oem, OemSegment } from './oem.js';
-
-/** Rotation of the Earth in rad/s, the rate of change of the sidereal time of 1982 (WGS84 prints 7.292115e-5). */
-const EARTH_RATE_RAD_PER_S = 7.29211585530066e-5;
 
 export interface EphemerisSpan {
   readonly startMs: number;
@@ -86,29 +78,25 @@ function segmentPart(segment: OemSegment): TrajectorySource {
   return { startMs, stopMs, stateTeme: (timeMs, out) => interpolateState(segment, states, timeMs, out) };
 }
 
+/**
+ * ICRF, GCRF and EME2000 are taken as the same axes. EME2000 stands 0.023 arc seconds beside the other two: 0.8 m in low
+ * orbit, 5 m in a geostationary one.
+ */
 function statesInTeme(segment: OemSegment): Float64Array {
   const states = segment.states.slice();
   segment.timesMs.forEach((timeMs, row) => {
-    const rotation = celestialToTeme(timeMs);
+    const rotation = gcrfToTeme(timeMs);
     rotateInPlace(rotation, states, 6 * row);
     rotateInPlace(rotation, states, 6 * row + 3);
   });
   return states;
 }
 
-/**
- * ICRF, GCRF and EME2000 are taken as the same axes. EME2000 stands 0.023 arc seconds beside the other two: 0.8 m in low
- * orbit, 5 m in a geostationary one, and less than makers of ephemerides agree on when they write the name.
- */
-function celestialToTeme(timeMs: number): Rotation {
-  return gcrfToTeme(timeMs, meanSidereal1982Rad(timeMs));
-}
-
 /** Position and velocity in Earth axes to TEME, in place; the velocity gains what the Earth's turning carries along. */
 function earthFixedToTeme(timeMs: number, state: Float64Array): void {
-  state[3]! -= EARTH_RATE_RAD_PER_S * state[1]!;
-  state[4]! += EARTH_RATE_RAD_PER_S * state[0]!;
-  const rotation = aboutZ(-meanSidereal1982Rad(timeMs));
+  state[3]! -= EARTH_TURN_RAD_PER_S * state[1]!;
+  state[4]! += EARTH_TURN_RAD_PER_S * state[0]!;
+  const rotation = aboutZ(-gmstRad(timeMs));
   rotateInPlace(rotation, state, 0);
   rotateInPlace(rotation, state, 3);
 }
@@ -130,14 +118,10 @@ function joinSpans(parts: readonly EphemerisSpan[]): EphemerisSpan[] {
 export function temeStateToFrame(frame: OemSegment['frame'], timeMs: number, state: Float64Array): void {
   if (frame === 'TEME') return;
   if (frame === 'ITRF') {
-    const rotation = aboutZ(meanSidereal1982Rad(timeMs));
-    rotateInPlace(rotation, state, 0);
-    rotateInPlace(rotation, state, 3);
-    state[3]! += EARTH_RATE_RAD_PER_S * state[1]!;
-    state[4]! -= EARTH_RATE_RAD_PER_S * state[0]!;
+    temeToEcef(timeMs, state);
     return;
   }
-  const rotation = transpose(celestialToTeme(timeMs));
+  const rotation = transpose(gcrfToTeme(timeMs));
   rotateInPlace(rotation, state, 0);
   rotateInPlace(rotation, state, 3);
 }

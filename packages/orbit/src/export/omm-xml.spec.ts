@@ -17,6 +17,8 @@ const set: OmmFields = {
   meanMotionDot: -0.00000113,
   meanMotionDdot: 0,
   elementSetNumber: 999,
+  revolutionAtEpoch: 100,
+  classification: 'U',
 };
 
 function find(element: XmlElement, name: string): XmlElement | undefined {
@@ -44,7 +46,7 @@ describe('an OMM in XML', () => {
     expect(Number(text('BSTAR'))).toBe(set.bstarPerEarthRadius);
   });
 
-  it('keeps the order of the schema and leaves out what is not known', () => {
+  it('keeps the order of the schema', () => {
     // NDM/XML 2.0.0: metadata order; EPHEMERIS_TYPE to MEAN_MOTION_DDOT.
     expect(find(root!, 'metadata')?.children.map(({ name }) => name)).toEqual([
       'OBJECT_NAME',
@@ -56,8 +58,10 @@ describe('an OMM in XML', () => {
     ]);
     expect(find(root!, 'tleParameters')?.children.map(({ name }) => name)).toEqual([
       'EPHEMERIS_TYPE',
+      'CLASSIFICATION_TYPE',
       'NORAD_CAT_ID',
       'ELEMENT_SET_NO',
+      'REV_AT_EPOCH',
       'BSTAR',
       'MEAN_MOTION_DOT',
       'MEAN_MOTION_DDOT',

@@ -1,26 +1,9 @@
 /** Writes mean elements as a CCSDS OMM in XML (502.0-B, schema NDM/XML of 505.0-B). */
+import type { ElementSet } from '../elements/element-set.js';
 import { escapeXml } from '../ephemeris/xml-tree.js';
 
-/** Mean elements for SGP4 as the element reader gives them; any set of these fields will do. */
-export interface OmmFields {
-  readonly objectName: string;
-  readonly objectId: string;
-  readonly catalogNumber: number;
-  /** UTC, all the digits there are, without Z. */
-  readonly epochUtc: string;
-  readonly meanMotionRevPerDay: number;
-  readonly eccentricity: number;
-  readonly inclinationDeg: number;
-  readonly raanDeg: number;
-  readonly argPerigeeDeg: number;
-  readonly meanAnomalyDeg: number;
-  readonly bstarPerEarthRadius: number;
-  readonly meanMotionDot: number;
-  readonly meanMotionDdot: number;
-  readonly elementSetNumber?: number | undefined;
-  readonly revolutionAtEpoch?: number | undefined;
-  readonly classification?: string | undefined;
-}
+/** What the message carries of an element set. */
+export type OmmFields = Omit<ElementSet, 'format' | 'epochMs' | 'tle' | 'sourceLine'>;
 
 /** The message, every number with the shortest digits that read back as the same one. */
 export function toOmmXml(set: OmmFields, head: { creationUtc: string; originator: string }): string {
@@ -69,10 +52,10 @@ function tleParameters(set: OmmFields): string[] {
   return [
     '<tleParameters>',
     element('EPHEMERIS_TYPE', 0),
-    ...(set.classification === undefined ? [] : [element('CLASSIFICATION_TYPE', set.classification)]),
+    element('CLASSIFICATION_TYPE', set.classification),
     element('NORAD_CAT_ID', set.catalogNumber),
-    ...(set.elementSetNumber === undefined ? [] : [element('ELEMENT_SET_NO', set.elementSetNumber)]),
-    ...(set.revolutionAtEpoch === undefined ? [] : [element('REV_AT_EPOCH', set.revolutionAtEpoch)]),
+    element('ELEMENT_SET_NO', set.elementSetNumber),
+    element('REV_AT_EPOCH', set.revolutionAtEpoch),
     element('BSTAR', set.bstarPerEarthRadius),
     element('MEAN_MOTION_DOT', set.meanMotionDot),
     element('MEAN_MOTION_DDOT', set.meanMotionDdot),

@@ -3,12 +3,10 @@
  * discs in the sky; the model of Montenbruck and Gill 3.4.2). The flattening and the atmosphere, which both shift the
  * crossing by seconds in low orbit, are left out.
  */
+import { WGS84_RADIUS_KM } from '../frames/ellipsoid.js';
 import type { TrajectorySource } from '../types.js';
 import { type SunPath, sunPath } from './sun-path.js';
 import { SUN_RADIUS_KM } from './sun-position.js';
-
-/** WGS84. */
-const EARTH_RADIUS_KM = 6378.137;
 
 export type LightState = 'sunlit' | 'penumbra' | 'umbra';
 
@@ -28,7 +26,7 @@ function shadowAnglesRad(position: Vector, sun: Vector): { earthRad: number; sun
   const sunDistanceKm = Math.hypot(dx, dy, dz);
   const cosine = -(x * dx + y * dy + z * dz) / (radiusKm * sunDistanceKm);
   return {
-    earthRad: Math.asin(Math.min(1, EARTH_RADIUS_KM / radiusKm)),
+    earthRad: Math.asin(Math.min(1, WGS84_RADIUS_KM / radiusKm)),
     sunRad: Math.asin(SUN_RADIUS_KM / sunDistanceKm),
     apartRad: Math.acos(Math.max(-1, Math.min(1, cosine))),
   };

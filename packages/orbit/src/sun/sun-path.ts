@@ -1,17 +1,17 @@
 /** The Sun over a period, cheap enough to be asked at every sample of every pass. */
-import { meanSidereal1982Rad } from '../ephemeris/earth-orientation.js';
+import { type SiteFrame, siteFrame } from '../frames/ellipsoid.js';
+import { lookAt, temeToEcef } from '../frames/look-angles.js';
 import type { GeodeticSite } from '../types.js';
 import { type Direction, sunPositionTemeKm } from './sun-position.js';
 
 export interface SunPath {
   /** Writes x y z, TEME, km. */
   positionTemeKm(timeMs: number, out: Float64Array): void;
-  /** Direction of the Sun's centre seen along the station's horizon, without refraction and without its parallax of 9". */
-  direction(site: GeodeticSite, timeMs: number): Direction;
+  /** Direction of the Sun's centre from a station, without refraction. */
+  direction(site: GeodeticSite | SiteFrame, timeMs: number): Direction;
 }
 
 const KNOT_MS = 86_400_000;
-const RAD = Math.PI / 180;
 
 /**
  * Computes the Sun's place once a day and puts a cubic through four days, which stays within a ten-thousandth of a degree
@@ -41,29 +41,14 @@ export function sunPath(): SunPath {
       for (let axis = 0; axis < 3; axis += 1) out[axis]! += weight * place[axis]!;
     });
   };
-  const place = new Float64Array(3);
+  const state = new Float64Array(6);
   return {
     positionTemeKm,
     direction(site, timeMs) {
-      positionTemeKm(timeMs, place);
-      return horizonDirection(site, timeMs, place);
+      state.fill(0);
+      positionTemeKm(timeMs, state);
+      temeToEcef(timeMs, state);
+      return lookAt('positionKm' in site ? site : siteFrame(site), timeMs, state);
     },
-  };
-}
-
-function horizonDirection(
-  site: GeodeticSite,
-  timeMs: number,
-  [x = 0, y = 0, z = 0]: ArrayLike<number> & Iterable<number>,
-): Direction {
-  const hourRad = meanSidereal1982Rad(timeMs) + site.longitudeDeg * RAD;
-  const latitudeRad = site.latitudeDeg * RAD;
-  const meridian = Math.cos(hourRad) * x + Math.sin(hourRad) * y;
-  const east = -Math.sin(hourRad) * x + Math.cos(hourRad) * y;
-  const north = -Math.sin(latitudeRad) * meridian + Math.cos(latitudeRad) * z;
-  const up = Math.cos(latitudeRad) * meridian + Math.sin(latitudeRad) * z;
-  return {
-    azimuthDeg: (Math.atan2(east, north) / RAD + 360) % 360,
-    elevationDeg: Math.atan2(up, Math.hypot(east, north)) / RAD,
   };
 }

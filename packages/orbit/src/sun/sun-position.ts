@@ -1,6 +1,6 @@
 /** Where the Sun is: as seen from the Earth's centre in our axes, and from a station. */
 import { AstroTime, Body, Equator, GeoVector, Horizon, Observer } from 'astronomy-engine';
-import { gcrfToTeme, meanSidereal1982Rad, rotateInPlace } from '../ephemeris/earth-orientation.js';
+import { gcrfToTeme, rotateInPlace } from '../ephemeris/earth-orientation.js';
 import type { GeodeticSite } from '../types.js';
 
 /** IAU 2012, exact. */
@@ -20,7 +20,7 @@ export function astroTime(timeMs: number): AstroTime {
 export function sunPositionTemeKm(timeMs: number): Float64Array {
   const { x, y, z } = GeoVector(Body.Sun, astroTime(timeMs), true);
   const position = Float64Array.of(x, y, z).map((au) => au * ASTRONOMICAL_UNIT_KM);
-  rotateInPlace(gcrfToTeme(timeMs, meanSidereal1982Rad(timeMs)), position, 0);
+  rotateInPlace(gcrfToTeme(timeMs), position, 0);
   return position;
 }
 
