@@ -1,5 +1,5 @@
 /** An operator's ephemeris where it reaches, the element set everywhere else, and a plain answer which one it was. */
-import type { TrajectorySource } from '../types.js';
+import type { AosHighestLos, Pass, TrajectorySource } from '../types.js';
 import type { OemSource } from './oem-source.js';
 
 export type TrajectoryOrigin = 'ephemeris' | 'elements';
@@ -15,7 +15,7 @@ export interface HybridSource extends TrajectorySource {
   originAt(timeMs: number): TrajectoryOrigin;
   /**
    * A period cut where the origin changes. The path jumps there by what the two disagree, so a search for passes runs on
-   * each piece by itself and joins what touches (`joinAtSeams`).
+   * each piece by itself and joins what touches (`passesAcross`).
    */
   spans(fromMs: number, toMs: number): OriginSpan[];
 }
@@ -48,27 +48,60 @@ export function hybridSource(ephemeris: OemSource, elements: TrajectorySource): 
   };
 }
 
-/** What two pieces of one pass have in common when the search was cut at a seam. */
-export interface SeamPass {
-  readonly aosMs: number;
-  readonly losMs: number;
-  readonly clippedStart: boolean;
-  readonly clippedEnd: boolean;
+/** The part of a period that an ephemeris alone answers for, gaps left out. */
+export function ephemerisSpans(ephemeris: OemSource, fromMs: number, toMs: number): OriginSpan[] {
+  return ephemeris.spans
+    .map(({ startMs, stopMs }) => ({ fromMs: Math.max(fromMs, startMs), toMs: Math.min(toMs, stopMs) }))
+    .filter((span) => span.toMs > span.fromMs)
+    .map((span) => ({ ...span, origin: 'ephemeris' as const, source: ephemeris }));
+}
+
+/** A pass with what it was made from: `both` where a seam lies inside. */
+export interface OriginPass extends Pass {
+  readonly origin: TrajectoryOrigin | 'both';
 }
 
 /**
- * Joins passes that a seam cut in two: one clipped at its end where the next is clipped at its start, at the same
- * instant. `join` makes one of the two; order and everything else stay.
+ * Searches each piece by itself with the given finder and joins the halves of a pass that a seam cut: one clipped at its
+ * end where the next is clipped at its start, at the same instant.
  */
-export function joinAtSeams<P extends SeamPass>(passes: readonly P[], join: (earlier: P, later: P) => P): P[] {
-  const joined: P[] = [];
-  for (const pass of passes) {
-    const last = joined.at(-1);
-    if (last?.clippedEnd && pass.clippedStart && last.losMs === pass.aosMs) {
-      joined[joined.length - 1] = join(last, pass);
-    } else {
-      joined.push(pass);
+export function passesAcross(
+  pieces: readonly OriginSpan[],
+  find: (source: TrajectorySource, fromMs: number, toMs: number) => readonly Pass[],
+): OriginPass[] {
+  const passes: OriginPass[] = [];
+  for (const { source, fromMs, toMs, origin } of pieces) {
+    for (const pass of find(source, fromMs, toMs)) {
+      const last = passes.at(-1);
+      if (last?.clippedEnd && pass.clippedStart && last.losMs === pass.aosMs) {
+        passes[passes.length - 1] = joined(last, { ...pass, origin });
+      } else {
+        passes.push({ ...pass, origin });
+      }
     }
   }
-  return joined;
+  return passes;
+}
+
+/** AOS of the earlier half, LOS of the later, and whichever highest point is higher. */
+function joined(earlier: OriginPass, later: OriginPass): OriginPass {
+  const top = earlier.maxElevationDeg >= later.maxElevationDeg ? earlier : later;
+  const three = (name: 'azimuthDeg' | 'elevationDeg' | 'rangeKm' | 'rangeRateKmPerS'): AosHighestLos<number> => [
+    earlier[name][0],
+    top[name][1],
+    later[name][2],
+  ];
+  return {
+    aosMs: earlier.aosMs,
+    tcaMs: top.tcaMs,
+    losMs: later.losMs,
+    clippedStart: earlier.clippedStart,
+    clippedEnd: later.clippedEnd,
+    maxElevationDeg: top.maxElevationDeg,
+    azimuthDeg: three('azimuthDeg'),
+    elevationDeg: three('elevationDeg'),
+    rangeKm: three('rangeKm'),
+    rangeRateKmPerS: three('rangeRateKmPerS'),
+    origin: earlier.origin === later.origin ? later.origin : 'both',
+  };
 }

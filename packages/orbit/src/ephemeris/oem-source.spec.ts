@@ -2,8 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { oemToKvn } from '../export/oem-writer.js';
 import { sampleOem } from '../export/sample-oem.js';
 import { OrbitError } from '../orbit-error.js';
-import type { TrajectorySource } from '../types.js';
-import { hybridSource, joinAtSeams } from './hybrid-source.js';
+import type { Pass, TrajectorySource } from '../types.js';
+import { ephemerisSpans, hybridSource, passesAcross } from './hybrid-source.js';
 import { interpolateState } from './interpolate.js';
 import type { Oem, OemFrame } from './oem.js';
 import { oemSource } from './oem-source.js';
@@ -142,16 +142,43 @@ describe('an ephemeris with elements around it', () => {
     expect(hybrid.spans(START_MS - 2000, START_MS - 1000).map(({ origin }) => origin)).toEqual(['elements']);
   });
 
-  it('joins a pass that the seam cut in two, and only that', () => {
-    const pass = (aosMs: number, losMs: number, clippedStart: boolean, clippedEnd: boolean) => ({
-      aosMs,
-      losMs,
+  it('joins a pass that the seam cut in two, with the higher of the two highest points', () => {
+    const pass = (aosMs: number, losMs: number, top: number, clippedStart: boolean, clippedEnd: boolean): Pass => ({
+      aosMs: START_MS + aosMs,
+      tcaMs: START_MS + (aosMs + losMs) / 2,
+      losMs: START_MS + losMs,
       clippedStart,
       clippedEnd,
+      maxElevationDeg: top,
+      azimuthDeg: [aosMs, top, losMs],
+      elevationDeg: [5, top, 5],
+      rangeKm: [2000, 600, 2000],
+      rangeRateKmPerS: [-7, 0, 7],
     });
-    const passes = [pass(0, 10, false, true), pass(10, 20, true, false), pass(30, 40, false, false)];
-    const joined = joinAtSeams(passes, (a, b) => ({ ...b, aosMs: a.aosMs, clippedStart: a.clippedStart }));
-    expect(joined).toEqual([pass(0, 20, false, false), pass(30, 40, false, false)]);
+    const found = new Map([
+      ['elements', [pass(-500, -400, 20, false, false), pass(-60, 0, 30, false, true)]],
+      ['ephemeris', [pass(0, 90, 40, true, false)]],
+    ]);
+    const pieces = hybrid.spans(START_MS - 1000, START_MS + 1000);
+    const passes = passesAcross(pieces, (_, fromMs) => found.get(fromMs < START_MS ? 'elements' : 'ephemeris')!);
+    expect(passes.map(({ origin }) => origin)).toEqual(['elements', 'both']);
+    expect(passes[1]).toMatchObject({
+      aosMs: START_MS - 60,
+      tcaMs: START_MS + 45,
+      losMs: START_MS + 90,
+      clippedStart: false,
+      clippedEnd: false,
+      maxElevationDeg: 40,
+      azimuthDeg: [-60, 40, 90],
+    });
+  });
+
+  it('has nothing to search in a gap of the ephemeris alone', () => {
+    const ephemeris = oemSource(sampled('TEME'));
+    expect(ephemerisSpans(ephemeris, START_MS - 2000, START_MS - 1000)).toEqual([]);
+    expect(ephemerisSpans(ephemeris, START_MS - 1000, START_MS + 1000)).toMatchObject([
+      { fromMs: START_MS, toMs: START_MS + 1000, origin: 'ephemeris' },
+    ]);
   });
 });
 
