@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { MINUTE_MS, pass, T0, threeRows } from './board-fixture.js';
 import { indexHumps } from './hump-index.js';
-import { entryHump, isMoveKey, neighbour } from './keyboard.js';
+import { afterPaging, entryHump, isMoveKey, neighbour } from './keyboard.js';
 
 const layout = threeRows();
 const index = indexHumps([
@@ -32,6 +32,12 @@ describe('arrow keys on the board', () => {
     expect(neighbour(index, layout, 'middle', 'ArrowDown')?.id).toBe('below');
     expect(neighbour(index, layout, 'late', 'ArrowDown')?.id).toBe('belowFar');
     expect(neighbour(index, layout, 'below', 'ArrowUp')?.id).toBe('middle');
+  });
+
+  it('keep to the row when a page of time is turned', () => {
+    expect(afterPaging(index, 'early', 32 * MINUTE_MS)?.id).toBe('middle');
+    expect(afterPaging(index, 'early', 500 * MINUTE_MS)?.id).toBe('late');
+    expect(afterPaging(index, 'nobody', 0)).toBeNull();
   });
 
   it('are told from other keys', () => {

@@ -48,6 +48,13 @@ export function entryHump(
   );
 }
 
+/** The pass of the same row nearest to where the given one would stand after paging by a time. */
+export function afterPaging(index: HumpIndex, fromId: string, byMs: number): BoardHump | null {
+  const from = index.byId.get(fromId);
+  if (!from) return null;
+  return nearestInTime(index.byRow.get(from.rowId) ?? [], (from.aosMs + from.losMs) / 2 + byMs);
+}
+
 function acrossRows(index: HumpIndex, layout: RowLayout, from: BoardHump, step: 1 | -1): BoardHump | null {
   const start = layout.rowById.get(from.rowId)?.index;
   if (start === undefined) return null;

@@ -83,6 +83,7 @@ function BoardField({ props, elements, board }: BoardFieldProps) {
       onClick={acts.click}
       onKeyDown={acts.key}
       onKeyUp={acts.keyUp}
+      onFocus={acts.focus}
       onPointerMove={acts.hover}
       onPointerLeave={acts.leave}
       data-over={hovered ? true : undefined}

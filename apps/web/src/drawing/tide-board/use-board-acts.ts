@@ -1,9 +1,18 @@
 /** What pointer and keys do on the board: hover, pick, open, and the focus that moves from pass to pass. */
-import { type KeyboardEvent, type MouseEvent, type PointerEvent, useEffect, useMemo, useRef, useState } from 'react';
+import {
+  type FocusEvent,
+  type KeyboardEvent,
+  type MouseEvent,
+  type PointerEvent,
+  useEffect,
+  useMemo,
+  useRef,
+  useState,
+} from 'react';
 import { humpAt } from './hit-test.js';
-import { entryHump, isMoveKey, neighbour } from './keyboard.js';
+import { afterPaging, entryHump, isMoveKey, neighbour } from './keyboard.js';
 import type { RowLayout } from './rows.js';
-import type { BoardHump, Interval, TideBoardProps } from './tide-board-types.js';
+import type { BoardHump, TideBoardProps } from './tide-board-types.js';
 import type { BoardElements, useBoardScene } from './use-board-scene.js';
 import { panView } from './view.js';
 
@@ -39,6 +48,14 @@ export function useBoardActs(props: TideBoardProps, elements: BoardElements, boa
     if (pickedIds.has(hump.id) && !isAdditive(event)) props.onOpen(hump.id);
     else props.onPick(hump.id, isAdditive(event));
   };
+  const turnPage = (way: 1 | -1, fromId: string | undefined) => {
+    const { settled } = board;
+    const byMs = way * PAGE_SHARE * (settled.toMs - settled.fromMs);
+    const next = fromId ? afterPaging(index, fromId, byMs) : null;
+    board.show(panView(settled, byMs, props.limits));
+    board.settle();
+    if (next) moveTo(next);
+  };
   const key = (event: KeyboardEvent) => {
     const id = humpIdOf(event.target);
     const next = id && isMoveKey(event.key) ? neighbour(index, layout, id, event.key) : null;
@@ -46,14 +63,19 @@ export function useBoardActs(props: TideBoardProps, elements: BoardElements, boa
     else if (id && event.key === 'Enter') props.onOpen(id);
     else if (id && event.key === ' ') props.onPick(id, isAdditive(event));
     else if (event.key === 'Escape') props.onClear?.();
-    else if (!keyView(event.key, board, props.limits) && !isMoveKey(event.key)) return;
+    else if (event.key === 'PageUp' || event.key === 'PageDown') turnPage(event.key === 'PageUp' ? -1 : 1, id);
+    else if (!zoomByKey(event.key, board) && !isMoveKey(event.key)) return;
     event.preventDefault();
   };
   // Some browsers click a button when Space is let go, though the key itself has been dealt with.
   const keyUp = (event: KeyboardEvent) => {
     if (event.key === ' ' && humpIdOf(event.target)) event.preventDefault();
   };
-  return { entry, hoverId, keyUp, hover, leave: () => setHoverId(null), click, key };
+  const focus = (event: FocusEvent) => {
+    const id = humpIdOf(event.target);
+    if (id) setFocusId(id);
+  };
+  return { entry, hoverId, focus, keyUp, hover, leave: () => setHoverId(null), click, key };
 }
 
 function useRovingFocus(props: TideBoardProps, elements: BoardElements, board: Board) {
@@ -87,16 +109,11 @@ function useRovingFocus(props: TideBoardProps, elements: BoardElements, board: B
 
 const NOTHING: readonly string[] = [];
 
-/** Keys that change the view; false when the key isn't one of them. */
-function keyView(key: string, board: Board, limits: Interval | undefined): boolean {
-  const { settled } = board;
+/** Plus and minus; false when the key is another. */
+function zoomByKey(key: string, board: Board): boolean {
   if (key === '+' || key === '=') board.zoomBy(1 / ZOOM_STEP);
   else if (key === '-') board.zoomBy(ZOOM_STEP);
-  else if (key === 'PageUp' || key === 'PageDown') {
-    const byMs = (settled.toMs - settled.fromMs) * (key === 'PageUp' ? -PAGE_SHARE : PAGE_SHARE);
-    board.show(panView(settled, byMs, limits));
-    board.settle();
-  } else return false;
+  else return false;
   return true;
 }
 
