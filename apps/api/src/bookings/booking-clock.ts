@@ -9,12 +9,9 @@ import { type Db, write } from '../platform/transaction.js';
 import { BookingEnding } from './booking-ending.service.js';
 import { BookingSale } from './booking-sale.service.js';
 import { BookingRepository, type BookingRow } from './bookings.repository.js';
+import { CLOSE_AFTER_MS, REMIND_AFTER_MS } from './report-terms.js';
 
 const EVERY_MS = 5_000;
-const HOUR_MS = 3_600_000;
-/** After LOS the station is reminded, and later the contact is closed by rule. */
-export const REMIND_AFTER_MS = 2 * HOUR_MS;
-export const CLOSE_AFTER_MS = 24 * HOUR_MS;
 
 @Injectable()
 export class BookingClock implements OnModuleInit {

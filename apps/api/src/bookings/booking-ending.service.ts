@@ -73,6 +73,14 @@ export class BookingEnding {
     return lapsed;
   }
 
+  /** The card was refused for a new reservation; the buyer is warned while there is time. */
+  renewalRefused(tx: Db, booking: BookingRow, refusal: string): void {
+    const sentence = `The price could not be reserved again: ${refusal} Without it the contact lapses when the reservation ends.`;
+    this.transitions.note(tx, booking, { kind: 'payment refused', sentence, mover: BY_PAYMENT });
+    const subject = `Your card was refused: ${contactName(this.notices.names(tx, booking))}`;
+    this.notices.toBuyer(tx, booking, { kind: 'renewal refused', subject, sentences: [sentence] });
+  }
+
   begin(tx: Db, booking: BookingRow): void {
     this.transitions.apply(tx, booking.id, {
       cause: 'contact begins',

@@ -11,6 +11,7 @@ import { BookingSale } from '../bookings/booking-sale.service.js';
 import { utcText } from '../bookings/booking-words.js';
 import { BookingRepository, type BookingRow } from '../bookings/bookings.repository.js';
 import { PartiesRepository } from '../bookings/parties.repository.js';
+import { CLOSE_AFTER_MS } from '../bookings/report-terms.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { CONFIG, type Config } from '../platform/config.js';
 import { DATABASE } from '../platform/database.module.js';
@@ -23,6 +24,9 @@ import { type PaymentChange, PaymentRepository, type PaymentRow } from './paymen
 
 type Wish = BodyOf<typeof routes.checkout>;
 type Result = ResponseOf<typeof routes.checkout>;
+
+/** Reservations last seven days where the buyer was present (published-values, section j); a day is kept in hand. */
+const SURELY_RESERVED_MS = 6 * 24 * 3_600_000;
 
 const PROCESSING: Result = { kind: 'processing' };
 
@@ -47,7 +51,7 @@ export class CheckoutService {
     const booking = this.bookings.forViewer(caller, bookingId);
     const order = await this.orderFor(booking);
     return wish.savedCardId === null
-      ? this.onPage(booking, payment, { ...order, saveCard: wish.saveCard })
+      ? this.onPage(booking, payment, { ...order, saveCard: wish.saveCard || this.outlivesReservation(booking) })
       : this.withCard(booking, payment, order, wish.savedCardId);
   }
 
@@ -86,6 +90,11 @@ export class CheckoutService {
       changedMs: nowMs,
     });
     return this.payments.ofBooking(booking.id, tx) ?? null;
+  }
+
+  /** Whether the contact is reported only after a reservation of today has ended, so that the card is needed again. */
+  private outlivesReservation(booking: BookingRow): boolean {
+    return booking.losMs + CLOSE_AFTER_MS > this.clock.nowMs() + SURELY_RESERVED_MS;
   }
 
   private requireHold(booking: BookingRow): void {

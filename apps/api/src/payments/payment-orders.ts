@@ -9,10 +9,12 @@ import { PaymentRepository, type PaymentRow } from './payments.repository.js';
 export const CAPTURE = 'payment.capture';
 export const RELEASE = 'payment.release';
 export const READ = 'payment.read';
+export const RENEW = 'payment.renew';
 
 export const CaptureOrder = z.object({ intentId: z.string(), amountMinor: z.int().positive() });
 export const ReleaseOrder = z.object({ intentId: z.string().nullable(), checkoutId: z.string().nullable() });
 export const ReadOrder = z.object({ intentId: z.string() });
+export const RenewOrder = z.object({ intentId: z.string(), bookingId: z.string() });
 
 @Injectable()
 export class PaymentOrders {
@@ -65,6 +67,16 @@ export class PaymentOrders {
       kind: RELEASE,
       dedupeKey: `${RELEASE}:page:${checkoutId}`,
       payload: { intentId: null, checkoutId } satisfies z.input<typeof ReleaseOrder>,
+    });
+  }
+
+  /** Reserves again before a reservation ends; once for each reservation. */
+  renew(tx: Db, payment: { intentId: string; bookingId: string }): void {
+    const { intentId, bookingId } = payment;
+    this.outbox.enqueue(tx, {
+      kind: RENEW,
+      dedupeKey: `${RENEW}:${intentId}`,
+      payload: { intentId, bookingId } satisfies z.input<typeof RenewOrder>,
     });
   }
 

@@ -85,6 +85,11 @@ export class PaymentOutcomes {
   /** A reservation when none is waited for: known already, a second one, or one for a booking that is over. */
   private authorisedAgain(tx: Db, booking: BookingRow, payment: PaymentRow, facts: IntentFacts): string {
     const mine = payment.intentId === facts.intentId;
+    if (payment.state === 'authorised' && facts.renews === payment.intentId && facts.renews !== null) {
+      this.orders.releaseIntent(tx, facts.renews);
+      this.secure(tx, payment, facts);
+      return 'reservation renewed';
+    }
     const over = payment.state === 'releasing' || payment.state === 'released';
     if (mine && !over) return 'known';
     const neverSecured = payment.card === null && payment.captureBeforeMs === null;
@@ -143,6 +148,12 @@ export class PaymentOutcomes {
     return 'refusal noted';
   }
 
+  /** The bank does not reserve again; the contact stands until the present reservation ends. */
+  renewalRefused(tx: Db, bookingId: string, refusal: string): void {
+    const booking = this.bookings.byId(tx, bookingId);
+    if (booking) this.ending.renewalRefused(tx, booking, refusal);
+  }
+
   private wrongAmount(tx: Db, booking: BookingRow, payment: PaymentRow, facts: IntentFacts): string {
     const failure = `${moneyText(facts.capturableMinor, facts.currency)} were reserved instead of the price.`;
     this.change(tx, payment, { state: 'failed', failure });
@@ -163,7 +174,7 @@ export class PaymentOutcomes {
       checkoutUrl: null,
       failure: null,
       ...(facts.card === null ? {} : { card: facts.card }),
-      ...(facts.captureBeforeMs === null ? {} : { captureBeforeMs: facts.captureBeforeMs }),
+      captureBeforeMs: facts.captureBeforeMs,
     });
     if (facts.card === null) this.orders.read(tx, facts.intentId);
   }

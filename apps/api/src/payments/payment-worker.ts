@@ -6,9 +6,20 @@ import { OutboxRunner } from '../outbox/outbox.runner.js';
 import { PermanentFailure } from '../outbox/permanent-failure.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
+import { DomainError } from '../platform/domain-error.js';
 import { write } from '../platform/transaction.js';
 import { PAYMENT_PORT, type PaymentPort } from './payment.port.js';
-import { CAPTURE, CaptureOrder, READ, RELEASE, ReadOrder, ReleaseOrder } from './payment-orders.js';
+import {
+  CAPTURE,
+  CaptureOrder,
+  PaymentOrders,
+  READ,
+  RELEASE,
+  RENEW,
+  ReadOrder,
+  ReleaseOrder,
+  RenewOrder,
+} from './payment-orders.js';
 import { PaymentOutcomes } from './payment-outcomes.js';
 import { PaymentRepository, type PaymentRow } from './payments.repository.js';
 
@@ -18,6 +29,9 @@ const EVENT_LATE_MS = 90_000;
 /** A reservation is asked about once in a while, since its end also comes as an event. */
 const RESERVED_ASK_MS = 3_600_000;
 const SWEEP_LIMIT = 100;
+const RENEW_EVERY_MS = 300_000;
+/** Early enough for a buyer whose card is refused to do something about it. */
+const RENEW_BEFORE_MS = 24 * 3_600_000;
 
 @Injectable()
 export class PaymentWorker implements OnModuleInit {
@@ -29,6 +43,7 @@ export class PaymentWorker implements OnModuleInit {
     @Inject(PAYMENT_PORT) private readonly port: PaymentPort,
     private readonly payments: PaymentRepository,
     private readonly outcomes: PaymentOutcomes,
+    private readonly orders: PaymentOrders,
     private readonly runner: OutboxRunner,
     private readonly jobs: JobsService,
   ) {}
@@ -37,7 +52,18 @@ export class PaymentWorker implements OnModuleInit {
     this.runner.register(CAPTURE, (payload) => this.capture(payload));
     this.runner.register(RELEASE, (payload) => this.release(payload));
     this.runner.register(READ, (payload) => this.read(payload));
+    this.runner.register(RENEW, (payload) => this.renew(payload));
     this.jobs.every('payments sweep', SWEEP_EVERY_MS, () => this.sweep());
+    this.jobs.every('payments renewal', RENEW_EVERY_MS, () => this.orderRenewals());
+  }
+
+  /** Orders a new reservation for every one that would end too soon for its contact. */
+  orderRenewals(): void {
+    const ending = this.payments.endingReservations(this.clock.nowMs() + RENEW_BEFORE_MS);
+    if (ending.length === 0) return;
+    write(this.db, (tx) => {
+      for (const payment of ending) this.orders.renew(tx, payment);
+    });
   }
 
   /** Asks the provider about every payment that has waited too long for an event. One that fails is asked again later. */
@@ -82,6 +108,18 @@ export class PaymentWorker implements OnModuleInit {
         throw new PermanentFailure(`The intent ${intentId} was charged and cannot be let go.`);
       if (facts.status !== 'released')
         throw new Error(`The intent ${intentId} is ${facts.status} instead of released.`);
+    }
+  }
+
+  /** The new reservation takes over when its event comes; a refusal is told to the buyer, who has a day left. */
+  private async renew(payload: unknown): Promise<void> {
+    const { intentId, bookingId } = RenewOrder.parse(payload);
+    try {
+      await this.port.renew(intentId);
+    } catch (error) {
+      if (!(error instanceof DomainError) || error.code !== 'card-declined') throw error;
+      write(this.db, (tx) => this.outcomes.renewalRefused(tx, bookingId, error.message));
+      throw new PermanentFailure(error.message);
     }
   }
 

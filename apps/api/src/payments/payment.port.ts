@@ -9,6 +9,8 @@ export interface IntentFacts {
   readonly intentId: string;
   /** Our booking, from the metadata that we gave; null for an intent that is not ours. */
   readonly bookingId: string | null;
+  /** The intent whose reservation this one takes over; null for a first one. */
+  readonly renews: string | null;
   readonly status: 'unpaid' | 'waiting for the bank' | 'authorised' | 'captured' | 'released' | 'other';
   readonly amountMinor: number;
   /** What is reserved and can still be taken. */
@@ -93,6 +95,11 @@ export interface PaymentPort {
   /** Reserves the amount on a saved card; the buyer is present, so the bank may ask them. */
   confirmIntent(intentId: string, confirm: { cardId: string; returnUrl: string }): Promise<IntentFacts>;
   readIntent(intentId: string): Promise<IntentFacts>;
+  /**
+   * Reserves the same again on the same card, without the buyer, before the reservation ends; the old one stays until it is
+   * released. The new intent says which one it renews.
+   */
+  renew(intentId: string): Promise<IntentFacts>;
   /** Takes `amountMinor` of what is reserved and lets the rest go. */
   capture(intentId: string, amountMinor: number): Promise<IntentFacts>;
   /** Lets a reservation, or an unpaid intent, go. */

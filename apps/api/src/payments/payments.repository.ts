@@ -1,6 +1,6 @@
 /** Payments, and the provider's events, in the database. */
 import { Inject, Injectable } from '@nestjs/common';
-import { organisations, payments, providerEvents, type SkyberthDatabase } from '@skyberth/drizzle';
+import { bookings, organisations, payments, providerEvents, type SkyberthDatabase } from '@skyberth/drizzle';
 import { and, asc, eq, inArray, lte, or } from 'drizzle-orm';
 import { DATABASE } from '../platform/database.module.js';
 import type { Db } from '../platform/transaction.js';
@@ -58,6 +58,23 @@ export class PaymentRepository {
       .orderBy(asc(payments.changedMs))
       .limit(limit)
       .all();
+  }
+
+  /** Reservations that end before `endsBeforeMs` while their booking still needs them. */
+  endingReservations(endsBeforeMs: number): { intentId: string; bookingId: string }[] {
+    return this.db
+      .select({ intentId: payments.intentId, bookingId: payments.bookingId })
+      .from(payments)
+      .innerJoin(bookings, eq(bookings.id, payments.bookingId))
+      .where(
+        and(
+          eq(payments.state, 'authorised'),
+          lte(payments.captureBeforeMs, endsBeforeMs),
+          inArray(bookings.state, ['awaiting owner', 'confirmed', 'under way', 'reporting']),
+        ),
+      )
+      .all()
+      .flatMap(({ intentId, bookingId }) => (intentId === null ? [] : [{ intentId, bookingId }]));
   }
 
   /** Stores an event; false where it was stored before. */

@@ -3,6 +3,7 @@ import type Stripe from 'stripe';
 import type { CardFacts, IntentFacts, PageFacts, ProviderEvent } from '../../payments/payment.port.js';
 
 export const BOOKING_KEY = 'skyberth_booking';
+export const RENEWS_KEY = 'skyberth_renews';
 export const SAVES_CARD_KEY = 'skyberth_saves_card';
 
 const STATUS: Readonly<Record<Stripe.PaymentIntent.Status, IntentFacts['status']>> = {
@@ -21,6 +22,7 @@ export function intentFacts(intent: Stripe.PaymentIntent): IntentFacts {
   return {
     intentId: intent.id,
     bookingId: intent.metadata?.[BOOKING_KEY] ?? null,
+    renews: intent.metadata?.[RENEWS_KEY] ?? null,
     status: STATUS[intent.status] ?? 'other',
     amountMinor: intent.amount,
     capturableMinor: intent.amount_capturable,
@@ -108,7 +110,7 @@ export function refusalSentence(refusal: { code?: string | undefined; decline_co
   return known ?? 'The bank refused the card without giving a reason.';
 }
 
-const idOf = (reference: string | { id: string } | null): string | null =>
+export const idOf = (reference: string | { id: string } | null): string | null =>
   typeof reference === 'string' ? reference : (reference?.id ?? null);
 
 const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

@@ -16,8 +16,10 @@ import {
   BOOKING_KEY,
   cardFacts,
   eventFacts,
+  idOf,
   intentFacts,
   pageFacts,
+  RENEWS_KEY,
   refusalSentence,
   SAVES_CARD_KEY,
 } from './stripe-facts.js';
@@ -135,6 +137,30 @@ export class StripeAdapter implements PaymentPort {
       expand: ['latest_charge'],
     });
     return await ask(confirmed.then(intentFacts), () => this.readIntent(intentId));
+  }
+
+  async renew(intentId: string): Promise<IntentFacts> {
+    const old = await ask(this.stripe.paymentIntents.retrieve(intentId));
+    const [customer, card] = [idOf(old.customer), idOf(old.payment_method)];
+    if (customer === null || card === null) throw new Error(`The intent ${intentId} has no card to reserve on again.`);
+    const intent = await ask(
+      this.stripe.paymentIntents.create(
+        {
+          amount: old.amount,
+          currency: old.currency,
+          customer,
+          payment_method: card,
+          capture_method: 'manual',
+          off_session: true,
+          confirm: true,
+          ...(old.description === null ? {} : { description: old.description }),
+          metadata: { ...old.metadata, [RENEWS_KEY]: intentId },
+          expand: ['latest_charge'],
+        },
+        { idempotencyKey: `skyberth:renew:${intentId}` },
+      ),
+    );
+    return intentFacts(intent);
   }
 
   async readIntent(intentId: string): Promise<IntentFacts> {
