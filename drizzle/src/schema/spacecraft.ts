@@ -64,7 +64,7 @@ export const elementSets = sqliteTable(
     /** Exact text of the epoch; epochMs is its rounding for sorting. */
     epochUtc: text('epoch_utc').notNull(),
     epochMs: real('epoch_ms').notNull(),
-    format: text('format').$type<'tle' | 'omm-kvn' | 'omm-xml' | 'omm-json'>().notNull(),
+    format: text('format').$type<'tle' | 'omm-kvn' | 'omm-xml' | 'omm-json' | 'omm-csv'>().notNull(),
     /** The parsed set as canonical JSON, without loss. */
     elements: text('elements').notNull(),
     digest: text('digest').notNull(),

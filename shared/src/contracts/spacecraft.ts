@@ -37,7 +37,7 @@ export const ElementSummary = z.object({
   epochUtc: UtcTime,
   ageH: z.number().describe('hours between the epoch and now'),
   timingErrorS: z.number().describe('estimated error of AOS and LOS now, one sigma, common practice'),
-  format: z.enum(['tle', 'omm-kvn', 'omm-xml', 'omm-json']),
+  format: z.enum(['tle', 'omm-kvn', 'omm-xml', 'omm-json', 'omm-csv']),
   source: z.string().describe('pasted, uploaded with its file name, or the feed'),
   addedByName: z.string().nullable(),
   addedUtc: UtcTime,

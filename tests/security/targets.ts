@@ -1,0 +1,38 @@
+/** Things of two organisations that nobody else may reach: made through the API, a sold contact straight in the database. */
+import { randomUUID } from 'node:crypto';
+import { routes } from '@skyberth/shared';
+import { addSoldContact } from '../api/harness/sold-contact.js';
+import { antennaOnSale } from '../api/harness/stations.js';
+import { tleText } from '../api/harness/tle.js';
+import { must, type Skyberth } from '../api/harness.js';
+import type { Targets } from './wishes.js';
+
+export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
+  const { call, people, clock } = skyberth;
+  const [operator, owner] = [await people.operator(), await people.owner()];
+  const { station, antenna } = await antennaOnSale(skyberth, owner);
+  const text = tleText({ name: 'WHIMBREL 4', catalogNumber: 90_004, epochMs: clock.nowMs() - 3_600_000 });
+  const saved = await must(call(routes.saveElements, { body: { text }, as: operator }));
+  const spacecraft = saved.spacecraft[0]?.id ?? '';
+  const fromUtc = new Date(clock.nowMs() + 86_400_000).toISOString();
+  const toUtc = new Date(clock.nowMs() + 90_000_000).toISOString();
+  const body = { fromUtc, toUtc, reason: 'weather' } as const;
+  const { blackout } = await must(call(routes.addBlackout, { params: { id: antenna.id }, body, as: owner }));
+  const { booking, invoice } = addSoldContact(skyberth, {
+    id: randomUUID(),
+    operator,
+    owner,
+    antennaId: antenna.id,
+    spacecraftId: spacecraft,
+    aosMs: clock.nowMs() + 100_000_000,
+  });
+  return {
+    spacecraft,
+    station: station.id,
+    antenna: antenna.id,
+    blackout: blackout.id,
+    booking,
+    invoice,
+    member: operator.personId,
+  };
+}

@@ -1,0 +1,116 @@
+/** One well-formed call of every route that takes parameters or a body: what a careful stranger would send. */
+import { randomUUID } from 'node:crypto';
+import type { RouteName } from '@skyberth/shared';
+import { PASSWORD } from '../api/harness/people.js';
+import { ALWAYS, ANTENNA, BANDS, PRICE, STATION } from '../api/harness/stations.js';
+
+export interface Wish {
+  readonly params?: Record<string, string>;
+  readonly body?: unknown;
+}
+
+/** The things that routes address; each must belong to somebody else where a test asks for a refusal. */
+export interface Targets {
+  readonly spacecraft: string;
+  readonly station: string;
+  readonly antenna: string;
+  readonly blackout: string;
+  readonly booking: string;
+  readonly invoice: string;
+  readonly member: string;
+}
+
+/** Targets that do not exist. */
+export const nowhere = (): Targets => ({
+  spacecraft: randomUUID(),
+  station: randomUUID(),
+  antenna: randomUUID(),
+  blackout: randomUUID(),
+  booking: randomUUID(),
+  invoice: randomUUID(),
+  member: randomUUID(),
+});
+
+const ADDRESS = { line1: 'Quay 1', postalCode: '1', city: 'Porto Novo', country: 'DE' };
+const SPACECRAFT = { name: 'Curlew 9', shortName: 'C9' };
+const FROM = '2026-12-20T10:00:00Z';
+const TO = '2026-12-20T10:08:00Z';
+const REPORT = {
+  outcome: 'good',
+  cause: 'none',
+  acquiredUtc: null,
+  lostUtc: null,
+  receivedBytes: 1,
+  ebN0Db: null,
+  note: '',
+};
+
+/** Only routes without parameters and without a body may be left out; a test holds that. */
+export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
+  const berth = { antennaId: to.antenna, spacecraftId: to.spacecraft, aosUtc: FROM, losUtc: TO };
+  const spacecraft = { id: to.spacecraft };
+  const station = { id: to.station };
+  const antenna = { id: to.antenna };
+  const booking = { id: to.booking };
+  return {
+    signUp: {
+      body: {
+        name: 'Kim',
+        email: `${randomUUID()}@people.example`,
+        password: PASSWORD,
+        organisation: { name: randomUUID(), kind: 'operator', address: ADDRESS },
+      },
+    },
+    signIn: { body: { email: 'nobody@people.example', password: PASSWORD } },
+    switchOrganisation: { body: { organisationId: randomUUID() } },
+    verifyEmail: { body: { token: 'made-up' } },
+    requestPasswordReset: { body: { email: `${randomUUID()}@people.example` } },
+    setPassword: { body: { token: 'made-up', password: PASSWORD } },
+    updateOrganisation: { body: { billingEmail: 'bills@people.example' } },
+    inviteMember: { body: { name: 'Kim', email: `${randomUUID()}@people.example`, role: 'viewer' } },
+    changeMember: { params: { personId: to.member }, body: { role: 'viewer' } },
+    removeMember: { params: { personId: to.member } },
+    listSpacecraft: {},
+    createSpacecraft: { body: { ...SPACECRAFT, name: randomUUID() } },
+    getSpacecraft: { params: spacecraft },
+    updateSpacecraft: { params: spacecraft, body: SPACECRAFT },
+    retireSpacecraft: { params: spacecraft },
+    listElements: { params: spacecraft },
+    readElements: { body: { text: 'x', spacecraftId: to.spacecraft } },
+    saveElements: { body: { text: 'x', spacecraftId: to.spacecraft } },
+    listStations: {},
+    createStation: { body: { ...STATION, name: randomUUID() } },
+    getStation: { params: station },
+    updateStation: { params: station, body: STATION },
+    submitStation: { params: station },
+    decideStation: { params: station, body: { decision: 'approve', note: 'fine' } },
+    createAntenna: { params: station, body: ANTENNA },
+    getAntenna: { params: antenna },
+    updateAntenna: { params: antenna, body: ANTENNA },
+    setBands: { params: antenna, body: { bands: BANDS } },
+    setMask: { params: antenna, body: { points: [[0, 5]] } },
+    readMaskCsv: { body: { text: '0,5' } },
+    setAvailability: { params: antenna, body: { rules: ALWAYS } },
+    setPrice: { params: antenna, body: PRICE },
+    addBlackout: { params: antenna, body: { fromUtc: FROM, toUtc: TO, reason: 'weather' } },
+    removeBlackout: { params: { id: to.blackout } },
+    putOnSale: { params: antenna, body: { onSale: true } },
+    searchPasses: { body: { spacecraftIds: [to.spacecraft], fromUtc: FROM, toUtc: TO } },
+    passDetail: { body: berth },
+    listBookings: {},
+    getBooking: { params: booking },
+    bookingGeometry: { params: booking },
+    bookingFile: { params: { ...booking, file: 'pointing.csv' } },
+    holdBerth: { body: { ...berth, expectedToPayMinor: 1 } },
+    letGo: { params: booking },
+    checkout: { params: booking, body: {} },
+    cancelBooking: { params: booking, body: { expectedRefundMinor: 0 } },
+    acceptBooking: { params: booking },
+    declineBooking: { params: booking, body: { reason: 'no' } },
+    reportContact: { params: booking, body: REPORT },
+    listInvoices: {},
+    getInvoice: { params: { id: to.invoice } },
+    invoicePdf: { params: { id: to.invoice } },
+    journal: {},
+  };
+}
