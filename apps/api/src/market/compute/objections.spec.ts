@@ -48,9 +48,19 @@ describe('fitOf', () => {
   });
 
   it('clears no transmission, and lets a contact in both directions begin with the lower one', () => {
-    const transmit = { ...band, direction: 'transmit', fromMhz: 2025, toMhz: 2110, gOverTDbK: null, eirpDbw: 50 } as const;
+    const transmit = {
+      ...band,
+      direction: 'transmit',
+      fromMhz: 2025,
+      toMhz: 2110,
+      gOverTDbK: null,
+      eirpDbw: 50,
+    } as const;
     const antenna = sampleAntenna({ bands: band ? [band, { ...band, ...transmit }] : [] });
-    const radios = [sampleRadio(), sampleRadio({ direction: 'uplink', centreFrequencyMhz: 2_067, requiredEirpDbw: 40 })];
+    const radios = [
+      sampleRadio(),
+      sampleRadio({ direction: 'uplink', centreFrequencyMhz: 2_067, requiredEirpDbw: 40 }),
+    ];
     const fit = fitOf(sampleCraft({ radios }), antenna, { need: 'both', bands: [] });
     expect(fit.objections).toEqual([]);
     expect(fit.clearance?.valid).toEqual([]);

@@ -1,7 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { joinDays, type Stay } from './stay.js';
 
-const stay = (aosMs: number, losMs: number, maxElevationDeg: number, cut: { start?: boolean; end?: boolean } = {}): Stay => ({
+const stay = (
+  aosMs: number,
+  losMs: number,
+  maxElevationDeg: number,
+  cut: { start?: boolean; end?: boolean } = {},
+): Stay => ({
   elementSetId: 'e',
   aosMs,
   tcaMs: (aosMs + losMs) / 2,
@@ -19,7 +24,14 @@ describe('joinDays', () => {
   it('joins two pieces of one pass that midnight has cut, with the higher highest point', () => {
     const [joined, ...more] = joinDays([stay(100, 200, 20, { end: true }), stay(200, 260, 35, { start: true })]);
     expect(more).toEqual([]);
-    expect(joined).toMatchObject({ aosMs: 100, losMs: 260, tcaMs: 230, maxElevationDeg: 35, clippedStart: false, clippedEnd: false });
+    expect(joined).toMatchObject({
+      aosMs: 100,
+      losMs: 260,
+      tcaMs: 230,
+      maxElevationDeg: 35,
+      clippedStart: false,
+      clippedEnd: false,
+    });
     expect(joined?.azimuthDeg).toEqual([100, 35, 260]);
   });
 

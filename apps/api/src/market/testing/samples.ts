@@ -1,6 +1,7 @@
 /** Invented antennas and spacecraft for the tests of this feature. */
+import type { ElementSet } from '@skyberth/orbit';
 import type { Radio } from '@skyberth/shared';
-import type { AntennaInput, CraftInput } from '../workers/job-types.js';
+import type { AntennaInput, CraftInput, SearchJob } from '../workers/job-types.js';
 
 export function sampleAntenna(changes: Partial<AntennaInput> = {}): AntennaInput {
   return {
@@ -86,6 +87,64 @@ export function sampleCraft(changes: Partial<CraftInput> = {}): CraftInput {
     spans: [],
     radios: [sampleRadio()],
     contacts: [],
+    ...changes,
+  };
+}
+
+/** Midday of an invented Tuesday, six hours after the epoch of the sample elements. */
+export const SAMPLE_NOW_MS = Date.UTC(2026, 11, 1, 12);
+
+/** A low near-polar orbit, unless told otherwise. */
+export function sampleElements(changes: Partial<ElementSet> = {}): ElementSet {
+  const epochMs = SAMPLE_NOW_MS - 6 * 3_600_000;
+  return {
+    format: 'omm-json',
+    objectName: 'WHIMBREL 4',
+    objectId: '2026-001D',
+    catalogNumber: 71_004,
+    epochUtc: new Date(epochMs).toISOString(),
+    epochMs,
+    meanMotionRevPerDay: 15.1,
+    eccentricity: 0.001,
+    inclinationDeg: 97.5,
+    raanDeg: 40,
+    argPerigeeDeg: 90,
+    meanAnomalyDeg: 0,
+    bstarPerEarthRadius: 0.00002,
+    meanMotionDot: 0,
+    meanMotionDdot: 0,
+    elementSetNumber: 999,
+    revolutionAtEpoch: 1,
+    classification: 'U',
+    sourceLine: 1,
+    ...changes,
+  };
+}
+
+/** A spacecraft with these elements for all time. */
+export function sampleFlying(changes: Partial<ElementSet> = {}, craft: Partial<CraftInput> = {}): CraftInput {
+  const elementSet = sampleElements(changes);
+  const span = {
+    fromMs: Number.NEGATIVE_INFINITY,
+    toMs: Number.POSITIVE_INFINITY,
+    elementSetId: '01939f7e-0000-7000-8000-0000000000e1',
+    digest: JSON.stringify(elementSet),
+    elementSet,
+  };
+  return sampleCraft({ spans: [span], ...craft });
+}
+
+export function sampleSearch(changes: Partial<SearchJob> = {}): SearchJob {
+  return {
+    kind: 'search',
+    nowMs: SAMPLE_NOW_MS,
+    fromMs: SAMPLE_NOW_MS,
+    toMs: SAMPLE_NOW_MS + 3 * 86_400_000,
+    wish: { need: 'downlink', bands: [], lowestElevationDeg: 0, shortestS: 0, highestPriceMinor: null },
+    spacecraft: [sampleFlying()],
+    antennas: [sampleAntenna()],
+    maxPasses: 1_000,
+    cancel: null,
     ...changes,
   };
 }
