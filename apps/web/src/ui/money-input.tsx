@@ -18,7 +18,9 @@ export function MoneyInput({ value, onChange, currency, ...rest }: MoneyInputPro
     <NumberInput
       {...rest}
       value={typeof value === 'number' ? value / perUnit : ''}
-      onChange={(next) => onChange?.(next === '' || !Number.isFinite(Number(next)) ? '' : Math.round(Number(next) * perUnit))}
+      onChange={(next) =>
+        onChange?.(next === '' || !Number.isFinite(Number(next)) ? '' : Math.round(Number(next) * perUnit))
+      }
       decimalScale={decimals}
       fixedDecimalScale
       min={0}

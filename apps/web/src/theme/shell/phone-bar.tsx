@@ -1,4 +1,4 @@
-import { Drawer, Menu } from '@mantine/core';
+import { CloseButton, Drawer, Menu } from '@mantine/core';
 import { useState } from 'react';
 import { Hump } from './hump.js';
 import classes from './shell.module.css';
@@ -47,39 +47,52 @@ export function PhoneBar({ items, current, link: Link, person, personMenu }: Pho
         More
         {waiting > 0 && <span className={classes.phoneNote}>{waiting} waiting</span>}
       </button>
-      <Drawer
-        opened={isOpen}
-        onClose={() => setOpen(false)}
-        position="bottom"
-        size="auto"
-        title={person ? person.organisationName : 'More'}
-        classNames={{ content: classes.sheet, title: classes.sheetTitle }}
-        closeButtonProps={{ 'aria-label': 'Close', size: 'xl' }}
-      >
-        <div className={classes.sheetItems}>
-          {far.map((item) => (
-            <Link
-              key={item.to}
-              to={item.to}
-              className={classes.sheetItem}
-              aria-current={item === current ? 'page' : undefined}
-              onClick={() => setOpen(false)}
-            >
-              {item.label}
-              <Count item={item} />
-            </Link>
-          ))}
-        </div>
-        {personMenu && (
-          <Menu opened withinPortal={false} closeOnItemClick trapFocus={false} returnFocus={false}>
-            {/* The same items as in the head's menu, laid out in the sheet. */}
-            <Menu.Dropdown className={classes.sheetMenu} style={{ position: 'static', width: 'auto' }}>
-              {personMenu}
-            </Menu.Dropdown>
-          </Menu>
-        )}
-      </Drawer>
+      <Drawer.Root opened={isOpen} onClose={() => setOpen(false)} position="bottom" size="auto">
+        <Drawer.Overlay />
+        <Drawer.Content aria-label="More pages" className={classes.sheet}>
+          <Drawer.Body>
+            <div className={classes.sheetHead}>
+              <h2>{person ? person.organisationName : 'More'}</h2>
+              <CloseButton aria-label="Close" size="xl" onClick={() => setOpen(false)} />
+            </div>
+            <div className={classes.sheetItems}>
+              {far.map((item) => (
+                <Link
+                  key={item.to}
+                  to={item.to}
+                  className={classes.sheetItem}
+                  aria-current={item === current ? 'page' : undefined}
+                  onClick={() => setOpen(false)}
+                >
+                  {item.label}
+                  <Count item={item} />
+                </Link>
+              ))}
+            </div>
+            {person && personMenu && <PersonMenu person={person} menu={personMenu} />}
+          </Drawer.Body>
+        </Drawer.Content>
+      </Drawer.Root>
     </nav>
+  );
+}
+
+/** The person's own menu, which stands in the head line on wider screens. */
+function PersonMenu({ person, menu }: { readonly person: ShellPerson; readonly menu: React.ReactNode }) {
+  return (
+    <Menu position="top-start" width={280}>
+      <Menu.Target>
+        <button type="button" className={classes.sheetItem}>
+          <span>
+            {person.name}, {person.roleText}
+          </span>
+          <span className={classes.initials} aria-hidden="true">
+            {person.initials}
+          </span>
+        </button>
+      </Menu.Target>
+      <Menu.Dropdown>{menu}</Menu.Dropdown>
+    </Menu>
   );
 }
 
