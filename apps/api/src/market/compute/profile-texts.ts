@@ -1,4 +1,4 @@
-/** The part of a pass that is the same for everybody, geometry and profile, as text; made once for each pass. */
+/** The part of a pass that is the same for everybody, geometry and profile, as it travels; made once for each pass. */
 import type { PassGeometry, Profile } from '@skyberth/shared';
 import type { AntennaInput, CraftInput } from '../workers/job-types.js';
 import type { Horizons } from './horizons.js';
@@ -10,7 +10,7 @@ const PROFILE_STEPS = 32;
 
 export class ProfileTexts {
   /** Forgotten together with the pass. */
-  private readonly made = new WeakMap<Stay, string>();
+  private readonly made = new WeakMap<Stay, Uint8Array>();
 
   constructor(
     private readonly tables: TrackTables,
@@ -18,14 +18,14 @@ export class ProfileTexts {
   ) {}
 
   /** Two members of a JSON object, without braces: `"geometry":…,"profile":…`. */
-  of(pass: { craft: CraftInput; antenna: AntennaInput; floorDeg: number; stay: Stay }): string {
+  of(pass: { craft: CraftInput; antenna: AntennaInput; floorDeg: number; stay: Stay }): Uint8Array {
     const known = this.made.get(pass.stay);
     if (known !== undefined) return known;
     const geometry: PassGeometry = geometryOf(pass.stay);
     const profile: Profile = this.profileOf(pass);
-    const text = JSON.stringify({ geometry, profile }).slice(1, -1);
-    this.made.set(pass.stay, text);
-    return text;
+    const bytes = new TextEncoder().encode(JSON.stringify({ geometry, profile }).slice(1, -1));
+    this.made.set(pass.stay, bytes);
+    return bytes;
   }
 
   private profileOf({

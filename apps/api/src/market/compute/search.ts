@@ -2,6 +2,7 @@
 import { OrbitError } from '@skyberth/orbit';
 import type { FoundPass } from '@skyberth/shared';
 import type { AntennaInput, CraftInput, SearchJob, SearchOutcome } from '../workers/job-types.js';
+import { joinObjects, type ObjectPieces } from './json-list.js';
 import { fitOf } from './objections.js';
 import type { OpeningHours } from './opening-hours.js';
 import type { PassBlocks } from './pass-blocks.js';
@@ -18,23 +19,22 @@ export interface SearchTools {
   readonly tables: TrackTables;
 }
 
-interface Found {
+interface Found extends ObjectPieces {
   readonly aosMs: number;
-  readonly text: string;
 }
 
 /** Carries a search out. Elements that cannot be used are named; the other spacecraft are searched all the same. */
 export function searchPasses(job: SearchJob, tools: SearchTools): SearchOutcome {
   const cancel = job.cancel === null ? null : new Int32Array(job.cancel);
-  const texts: string[] = [];
+  const all: Found[] = [];
   const faults: { spacecraftId: string; sentence: string }[] = [];
   let forSale = 0;
   for (const craft of job.spacecraft) {
     if (cancel !== null && Atomics.load(cancel, 0) !== 0) return { kind: 'cancelled' };
     try {
-      const { found, forSale: more, fault } = searchCraft(craft, job, tools, job.maxPasses - texts.length);
+      const { found, forSale: more, fault } = searchCraft(craft, job, tools, job.maxPasses - all.length);
       if (found === 'too many') return { kind: 'too many' };
-      for (const each of found) texts.push(each.text);
+      for (const each of found) all.push(each);
       forSale += more;
       if (fault !== null) faults.push({ spacecraftId: craft.id, sentence: fault });
     } catch (error) {
@@ -42,7 +42,7 @@ export function searchPasses(job: SearchJob, tools: SearchTools): SearchOutcome 
       faults.push({ spacecraftId: craft.id, sentence: error.message });
     }
   }
-  return { kind: 'found', json: new TextEncoder().encode(texts.join(',')), passes: texts.length, forSale, faults };
+  return { kind: 'found', json: joinObjects(all), passes: all.length, forSale, faults };
 }
 
 /** Every pass of one spacecraft, sorted by AOS. */
@@ -82,8 +82,8 @@ function searchCraft(
         currency: antenna.price.currency,
         ...sale,
       };
-      const shape = tools.profiles.of({ craft, antenna, floorDeg: fit.floorDeg, stay });
-      found.push({ aosMs: stay.aosMs, text: `${JSON.stringify(pass).slice(0, -1)},${shape}}` });
+      const members = tools.profiles.of({ craft, antenna, floorDeg: fit.floorDeg, stay });
+      found.push({ aosMs: stay.aosMs, head: JSON.stringify(pass).slice(0, -1), members });
     });
   });
   found.sort((a, b) => a.aosMs - b.aosMs);
