@@ -1,7 +1,11 @@
 /** Where spacecraft are, when a station sees them, and what the link between them carries. */
 
+export * from './elements/digest.js';
 export * from './elements/element-set.js';
+export * from './elements/parse-element-sets.js';
 export * from './elements/sgp4-source.js';
+export { tleChecksum } from './elements/tle-columns.js';
+export * from './elements/write-elements.js';
 export { formatCcsdsTime, parseCcsdsTime } from './ephemeris/ccsds-time.js';
 export * from './ephemeris/hybrid-source.js';
 export { fromUtcMs, TIME_SYSTEMS, type TimeSystem, taiMinusUtcS, toUtcMs } from './ephemeris/leap-seconds.js';
