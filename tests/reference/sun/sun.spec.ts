@@ -1,28 +1,21 @@
-import { sgp4, twoline2satrec } from 'satellite.js';
 import { describe, expect, it } from 'vitest';
+import { parseElementSets } from '../../../packages/orbit/src/elements/parse-element-sets.js';
+import { sgp4Source } from '../../../packages/orbit/src/elements/sgp4-source.js';
 import { daylightIntervals } from '../../../packages/orbit/src/sun/daylight.js';
 import { illumination, illuminationAt, lightIntervals } from '../../../packages/orbit/src/sun/illumination.js';
 import { refractionDeg } from '../../../packages/orbit/src/sun/refraction.js';
 import { sunDirection, sunPositionTemeKm } from '../../../packages/orbit/src/sun/sun-position.js';
 import type { TrajectorySource } from '../../../packages/orbit/src/types.js';
 
-/** The set of the Skyfield documentation's example pass, through the library alone. */
+/** The set of the Skyfield documentation's example pass. */
 function stationSource(): TrajectorySource {
-  const record = twoline2satrec(
-    '1 25544U 98067A   14020.93268519  .00009878  00000-0  18200-3 0  5082',
-    '2 25544  51.6498 109.4756 0003572  55.9686 274.8005 15.49815350868473',
+  const { sets } = parseElementSets(
+    [
+      '1 25544U 98067A   14020.93268519  .00009878  00000-0  18200-3 0  5082',
+      '2 25544  51.6498 109.4756 0003572  55.9686 274.8005 15.49815350868473',
+    ].join('\n'),
   );
-  const epochMs = Date.UTC(2014, 0, 1) + 19.93268519 * 86_400_000;
-  return {
-    startMs: Number.NEGATIVE_INFINITY,
-    stopMs: Number.POSITIVE_INFINITY,
-    stateTeme(timeMs, out) {
-      const state = sgp4(record, (timeMs - epochMs) / 60_000);
-      if (state === null) throw new Error('no state');
-      const { position, velocity } = state;
-      out.set([position.x, position.y, position.z, velocity.x, velocity.y, velocity.z]);
-    },
-  };
+  return sgp4Source(sets[0]!);
 }
 
 describe('the place of the Sun', () => {
