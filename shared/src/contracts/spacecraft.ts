@@ -191,7 +191,7 @@ export const spacecraftRoutes = {
     body: ElementText,
     response: z.object({ good: z.array(ReadElement), faults: z.array(ElementFault) }),
     idempotencyKey: 'none',
-    errors: ['too-large'],
+    errors: ['not-found', 'too-large', 'unavailable'],
   }),
   saveElements: defineRoute({
     name: 'saveElements',
@@ -209,6 +209,6 @@ export const spacecraftRoutes = {
       faults: z.array(ElementFault),
     }),
     status: 201,
-    errors: ['elements-unusable', 'too-large'],
+    errors: ['not-found', 'elements-unusable', 'too-large', 'unavailable'],
   }),
 } as const;

@@ -1,6 +1,7 @@
 /** The environment, read once and checked; a wrong value stops the start with a sentence. */
-import { Country, Email, type PostalAddress } from '@skyberth/shared';
+
 import { availableParallelism } from 'node:os';
+import { Country, Email, type PostalAddress } from '@skyberth/shared';
 import { z } from 'zod';
 
 /** Each worker holds a cache of passes of up to a hundred megabytes or so. */
@@ -24,6 +25,8 @@ const Environment = z.object({
   MAIL_FROM: z.string().default('Skyberth <harbour@skyberth.example>'),
   /** Health endpoints of the local stand-ins, separated by commas; empty in production. */
   STAND_IN_HEALTH_URLS: z.string().default(''),
+  /** A list of element sets to keep known spacecraft up to date with; none by default. */
+  ELEMENT_FEED_URL: z.url().optional(),
   JOBS: z.enum(['on', 'off']).default('on'),
   /** Threads that compute passes; 0 computes them in this process, which then answers nobody meanwhile. */
   PASS_WORKERS: z.coerce.number().int().min(0).max(32).optional(),
@@ -56,6 +59,7 @@ export interface Config {
   readonly smtpUrl: string;
   readonly mailFrom: string;
   readonly standInHealthUrls: readonly string[];
+  readonly elementFeedUrl: string | undefined;
   readonly jobs: boolean;
   readonly passWorkers: number;
   /** Staff who are invited at the first start. */
@@ -96,6 +100,7 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
     standInHealthUrls: env.STAND_IN_HEALTH_URLS.split(',')
       .map((url) => url.trim())
       .filter(Boolean),
+    elementFeedUrl: env.ELEMENT_FEED_URL,
     jobs: env.JOBS === 'on',
     passWorkers: env.PASS_WORKERS ?? Math.min(MOST_WORKERS_UNASKED, availableParallelism()),
     firstStaff: [

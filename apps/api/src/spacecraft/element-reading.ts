@@ -25,7 +25,7 @@ export function judge(sets: readonly ElementSet[], known: Known, attachTo: Space
   const seen = new Set<string>();
   return sets.map((set) => {
     const spacecraft = attachTo ?? index.find(set);
-    const digest = sha256(elementSetDigest(set));
+    const digest = digestOf(set);
     const key = digestKey(spacecraft?.id ?? objectKey(set), digest);
     const repeated = seen.has(key) || known.digests.has(key);
     seen.add(key);
@@ -43,6 +43,9 @@ function fateOf(
   if (!spacecraft) return 'new-spacecraft';
   return set.epochMs < (newestMs.get(spacecraft.id) ?? Number.NEGATIVE_INFINITY) ? 'older' : 'new';
 }
+
+/** SHA-256 of what moves the spacecraft: sets of one digest give the same passes. */
+export const digestOf = (set: ElementSet): string => sha256(elementSetDigest(set));
 
 /** Sets of one object share it, also before the spacecraft exists. */
 export const objectKey = (set: ElementSet): string =>

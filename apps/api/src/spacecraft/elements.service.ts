@@ -1,7 +1,7 @@
 /** Which elements are in force, and keeping new ones. */
 import { Inject, Injectable } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
-import { type ElementFault, type ElementSet, parseElementSets } from '@skyberth/orbit';
+import type { ElementFault, ElementReading, ElementSet } from '@skyberth/orbit';
 import type { BodyOf, ElementSummary, Principal, QueryOf, ReadElement, ResponseOf, routes } from '@skyberth/shared';
 import { AuditService } from '../platform/audit.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
@@ -14,6 +14,7 @@ import { type AddedElements, ElementsRepository, type ElementsRow } from './elem
 import { freshnessOf } from './freshness.js';
 import { freeName, nameOf, shortNameOf } from './naming.js';
 import { orbitShape } from './orbit-shape.js';
+import { ELEMENT_READER, type ElementReader } from './reader/element-reader.js';
 import { SpacecraftRepository, type SpacecraftRow } from './spacecraft.repository.js';
 
 /** Elements whose epoch is still to come serve passes before it no earlier than this. */
@@ -49,6 +50,7 @@ export class ElementsService {
   constructor(
     @Inject(DATABASE) private readonly db: SkyberthDatabase,
     @Inject(CLOCK) private readonly clock: ClockPort,
+    @Inject(ELEMENT_READER) private readonly reader: ElementReader,
     private readonly elements: ElementsRepository,
     private readonly spacecraft: SpacecraftRepository,
     private readonly audit: AuditService,
@@ -101,15 +103,16 @@ export class ElementsService {
   }
 
   /** Reads without saving. Throws `not-found` for a spacecraft to attach to, `bad-input` for several sets for it. */
-  read(caller: Principal, input: Text): ResponseOf<typeof routes.readElements> {
-    const { good, faults } = this.readAgainst(this.db, caller, input);
+  async read(caller: Principal, input: Text): Promise<ResponseOf<typeof routes.readElements>> {
+    const { good, faults } = this.judge(this.db, caller, input, await this.reader.read(input));
     return { good: good.map((each) => this.readView(each)), faults };
   }
 
   /** Saves all or, with consent, the good ones. Throws `elements-unusable` with what is wrong. */
-  save(caller: Principal, input: BodyOf<typeof routes.saveElements>): Saved {
+  async save(caller: Principal, input: BodyOf<typeof routes.saveElements>): Promise<Saved> {
+    const reading = await this.reader.read(input);
     return write(this.db, (tx) => {
-      const { good, faults } = this.readAgainst(tx, caller, input);
+      const { good, faults } = this.judge(tx, caller, input, reading);
       const homeless = input.addSpacecraft ? [] : good.filter((each) => !each.spacecraft).map(homelessFault);
       const all = [...faults, ...homeless];
       if (good.length === homeless.length || (all.length > 0 && !input.keepGoodOnes))
@@ -140,10 +143,14 @@ export class ElementsService {
     );
   }
 
-  private readAgainst(db: Db, caller: Principal, input: Text): { good: ReadSet[]; faults: ElementFault[] } {
+  private judge(
+    db: Db,
+    caller: Principal,
+    input: Text,
+    { sets, faults }: ElementReading,
+  ): { good: ReadSet[]; faults: ElementFault[] } {
     const attachTo = input.spacecraftId ? this.spacecraft.find(db, caller.organisationId, input.spacecraftId) : null;
     if (attachTo === undefined) throw notFound('spacecraft');
-    const { sets, faults } = parseElementSets(input.text, input.fileName ? { fileName: input.fileName } : {});
     if (attachTo && new Set(sets.map(objectKey)).size > 1) {
       const detail = `The text holds sets of several objects; give only those of ${attachTo.name}.`;
       throw new DomainError('bad-input', detail, [{ pointer: '/text', detail }]);

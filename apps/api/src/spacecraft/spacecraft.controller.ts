@@ -42,12 +42,12 @@ export class SpacecraftController {
   }
 
   @Handles(routes.readElements)
-  read(@Input() input: HandlerInput<typeof routes.readElements>): ResponseOf<typeof routes.readElements> {
+  read(@Input() input: HandlerInput<typeof routes.readElements>): Promise<ResponseOf<typeof routes.readElements>> {
     return this.elements.read(input.caller, input.body);
   }
 
   @Handles(routes.saveElements)
-  save(@Input() input: HandlerInput<typeof routes.saveElements>): ResponseOf<typeof routes.saveElements> {
+  save(@Input() input: HandlerInput<typeof routes.saveElements>): Promise<ResponseOf<typeof routes.saveElements>> {
     return this.elements.save(input.caller, input.body);
   }
 }

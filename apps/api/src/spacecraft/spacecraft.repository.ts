@@ -62,6 +62,22 @@ export class SpacecraftRepository {
     return db.select().from(spacecraft).where(eq(spacecraft.organisationId, organisationId)).all();
   }
 
+  /** Active spacecraft of every organisation that carry one of these catalogue numbers, without radios. */
+  withNumbers(db: Db, catalogNumbers: readonly number[]): SpacecraftRow[] {
+    const rows: SpacecraftRow[] = [];
+    for (let i = 0; i < catalogNumbers.length; i += CHUNK) {
+      const some = inArray(spacecraft.catalogNumber, catalogNumbers.slice(i, i + CHUNK));
+      rows.push(
+        ...db
+          .select()
+          .from(spacecraft)
+          .where(and(some, eq(spacecraft.state, 'active')))
+          .all(),
+      );
+    }
+    return rows;
+  }
+
   private select(db: Db, where: SQL | undefined): EquippedSpacecraft[] {
     const rows = db
       .select()
