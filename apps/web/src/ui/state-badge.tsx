@@ -1,3 +1,4 @@
+import type { BookingState } from '@skyberth/shared';
 import classes from './blocks.module.css';
 import { Sign, type SignShape } from './signs.js';
 
@@ -13,20 +14,21 @@ const TONE_SIGNS: Record<BadgeTone, SignShape> = {
   quiet: 'half',
 };
 
-/** Booking states in the words of the product, with their tone. Source: the booking states of product.md. */
-export const BOOKING_STATE_BADGES: Readonly<Record<string, { readonly tone: BadgeTone; readonly text: string }>> = {
-  held: { tone: 'waiting', text: 'Held' },
-  awaiting_owner: { tone: 'waiting', text: 'Owner asked' },
-  confirmed: { tone: 'good', text: 'Confirmed' },
-  under_way: { tone: 'active', text: 'Under way' },
-  reporting: { tone: 'look', text: 'Report due' },
-  settled: { tone: 'quiet', text: 'Settled' },
-  lapsed: { tone: 'quiet', text: 'Lapsed' },
-  declined: { tone: 'bad', text: 'Declined' },
-  cancelled: { tone: 'quiet', text: 'Cancelled' },
-  failed: { tone: 'bad', text: 'Failed' },
-  in_dispute: { tone: 'look', text: 'In dispute' },
-};
+/** Every booking state in the words of the page, with its tone. */
+export const BOOKING_STATE_BADGES: Readonly<Record<BookingState, { readonly tone: BadgeTone; readonly text: string }>> =
+  {
+    held: { tone: 'waiting', text: 'Held' },
+    'awaiting owner': { tone: 'waiting', text: 'Owner asked' },
+    confirmed: { tone: 'good', text: 'Confirmed' },
+    'under way': { tone: 'active', text: 'Under way' },
+    reporting: { tone: 'look', text: 'Report due' },
+    settled: { tone: 'quiet', text: 'Settled' },
+    lapsed: { tone: 'quiet', text: 'Lapsed' },
+    declined: { tone: 'bad', text: 'Declined' },
+    cancelled: { tone: 'quiet', text: 'Cancelled' },
+    failed: { tone: 'bad', text: 'Failed' },
+    'in dispute': { tone: 'look', text: 'In dispute' },
+  };
 
 /** A word with a shape: `Under way`, `Owner asked`. */
 export function StateBadge({

@@ -19,48 +19,10 @@ const TARGET_PX = 34;
 export function MaskEditor(props: MaskEditorProps) {
   const { points, before = [], pickedId = null, readOnly = false } = props;
   const svg = useRef<SVGSVGElement>(null);
-  const dragged = useRef<string | null>(null);
   const lostId = useId();
   const wordsId = useId();
   const picked = points.find((point) => point.id === pickedId);
-  const place = (event: { clientX: number; clientY: number }) => {
-    const box = svg.current?.getBoundingClientRect();
-    const scale = BOX_PX / (box?.width || BOX_PX);
-    return toDirection(ROSE, {
-      x: (event.clientX - (box?.left ?? 0)) * scale,
-      y: (event.clientY - (box?.top ?? 0)) * scale,
-    });
-  };
-  const addAt = (azimuthDeg: number) => {
-    const id = crypto.randomUUID();
-    const more = addPoint(points, azimuthDeg, id);
-    if (more === points) return;
-    props.onChange(more, true);
-    props.onPick(id);
-  };
-  const grab = (event: PointerEvent, id: string) => {
-    if (readOnly) return;
-    dragged.current = id;
-    event.currentTarget.setPointerCapture(event.pointerId);
-    props.onPick(id);
-  };
-  const drag = (event: PointerEvent) => {
-    if (dragged.current) props.onChange(movePoint(points, dragged.current, place(event)), false);
-  };
-  const drop = (event: PointerEvent) => {
-    if (!dragged.current) return;
-    props.onChange(movePoint(points, dragged.current, place(event)), true);
-    dragged.current = null;
-  };
-  const key = (event: KeyboardEvent, point: EditableMaskPoint) => {
-    const to = keyMove(event.key, event.shiftKey, point);
-    if (to) props.onChange(movePoint(points, point.id, to), true);
-    else if (event.key === 'Delete' || event.key === 'Backspace') remove(props, point.id);
-    else if (event.key === 'Insert' || event.key === 'Enter') addAt(azimuthAfter(points, point.id) ?? 0);
-    else if (event.key === 'Escape') props.onPick(null);
-    else return;
-    event.preventDefault();
-  };
+  const { place, addAt, grab, drag, drop, key } = useMaskActs(props, svg);
   return (
     // biome-ignore lint/a11y/useSemanticElements: a drawing with handles cannot be a fieldset
     <svg
@@ -108,6 +70,51 @@ export function MaskEditor(props: MaskEditorProps) {
       )}
     </svg>
   );
+}
+
+/** Dragging, keys and adding; each tells the whole new list. */
+function useMaskActs(props: MaskEditorProps, svg: React.RefObject<SVGSVGElement | null>) {
+  const { points, readOnly = false } = props;
+  const dragged = useRef<string | null>(null);
+  const place = (event: { clientX: number; clientY: number }) => {
+    const box = svg.current?.getBoundingClientRect();
+    const scale = BOX_PX / (box?.width || BOX_PX);
+    return toDirection(ROSE, {
+      x: (event.clientX - (box?.left ?? 0)) * scale,
+      y: (event.clientY - (box?.top ?? 0)) * scale,
+    });
+  };
+  const addAt = (azimuthDeg: number) => {
+    const id = crypto.randomUUID();
+    const more = addPoint(points, azimuthDeg, id);
+    if (more === points) return;
+    props.onChange(more, true);
+    props.onPick(id);
+  };
+  const grab = (event: PointerEvent, id: string) => {
+    if (readOnly) return;
+    dragged.current = id;
+    event.currentTarget.setPointerCapture(event.pointerId);
+    props.onPick(id);
+  };
+  const drag = (event: PointerEvent) => {
+    if (dragged.current) props.onChange(movePoint(points, dragged.current, place(event)), false);
+  };
+  const drop = (event: PointerEvent) => {
+    if (!dragged.current) return;
+    props.onChange(movePoint(points, dragged.current, place(event)), true);
+    dragged.current = null;
+  };
+  const key = (event: KeyboardEvent, point: EditableMaskPoint) => {
+    const to = keyMove(event.key, event.shiftKey, point);
+    if (to) props.onChange(movePoint(points, point.id, to), true);
+    else if (event.key === 'Delete' || event.key === 'Backspace') remove(props, point.id);
+    else if (event.key === 'Insert' || event.key === 'Enter') addAt(azimuthAfter(points, point.id) ?? 0);
+    else if (event.key === 'Escape') props.onPick(null);
+    else return;
+    event.preventDefault();
+  };
+  return { place, addAt, grab, drag, drop, key };
 }
 
 function remove(props: MaskEditorProps, id: string): void {

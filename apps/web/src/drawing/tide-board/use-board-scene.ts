@@ -13,7 +13,7 @@ import { readPalette, useRepaintCount } from '../common/palette.js';
 import { attachGestures } from './gestures.js';
 import { indexHumps } from './hump-index.js';
 import { layOutRows, MEASURES, rowsBetween } from './rows.js';
-import { BoardScene } from './scene.js';
+import { BoardScene, type SceneInput } from './scene.js';
 import type { Interval, TideBoardProps } from './tide-board-types.js';
 import { clampView, timeToX, zoomView } from './view.js';
 
@@ -31,14 +31,8 @@ export interface BoardElements {
 
 /** Everything the board's parts need from the scene. */
 export function useBoardScene(props: TideBoardProps, elements: BoardElements) {
-  const { stations, humps, blackouts, othersBlocks, variant = 'wide' } = props;
-  const layout = useMemo(() => layOutRows(stations, MEASURES[variant]), [stations, variant]);
-  const index = useMemo(() => indexHumps(humps), [humps]);
-  const blackoutsByRow = useMemo(() => byRow(blackouts ?? []), [blackouts]);
-  const othersByRow = useMemo(() => byRow(othersBlocks ?? []), [othersBlocks]);
-  const pickedKey = (props.pickedIds ?? []).join('\n');
-  const pickedIds = useMemo(() => new Set(pickedKey === '' ? [] : pickedKey.split('\n')), [pickedKey]);
-  const bubbleId = props.bubble?.humpId ?? null;
+  const data = useBoardData(props);
+  const { layout, index, pickedIds } = data;
   const repaints = useRepaintCount();
   const [scene, setScene] = useState<BoardScene | null>(null);
   const [settled, setSettled] = useState<Interval>(() => clampView(props.view, props.limits));
@@ -84,9 +78,8 @@ export function useBoardScene(props: TideBoardProps, elements: BoardElements) {
     return readPalette(element);
   }, [scene, repaints, elements]);
 
-  useLayoutEffect(() => {
-    scene?.setInput({ layout, index, blackoutsByRow, othersByRow, pickedIds, bubbleId, nowMs: props.nowMs, palette });
-  }, [scene, layout, index, blackoutsByRow, othersByRow, pickedIds, bubbleId, props.nowMs, palette]);
+  const { nowMs } = props;
+  useLayoutEffect(() => scene?.setInput({ ...data, nowMs, palette }), [scene, data, nowMs, palette]);
 
   useSizes(scene, elements, setWidthPx, layout, setRange);
   useGestures(scene, elements, show, settle, latest);
@@ -106,6 +99,22 @@ export function useBoardScene(props: TideBoardProps, elements: BoardElements) {
     [scene, settle],
   );
   return { scene, layout, index, pickedIds, settled, widthPx, range, show, settle, zoomBy };
+}
+
+/** What the scene draws, made anew only when its part of the props changes. */
+function useBoardData(props: TideBoardProps): Omit<SceneInput, 'nowMs' | 'palette'> {
+  const { stations, humps, blackouts, othersBlocks, variant = 'wide' } = props;
+  const layout = useMemo(() => layOutRows(stations, MEASURES[variant]), [stations, variant]);
+  const index = useMemo(() => indexHumps(humps), [humps]);
+  const blackoutsByRow = useMemo(() => byRow(blackouts ?? []), [blackouts]);
+  const othersByRow = useMemo(() => byRow(othersBlocks ?? []), [othersBlocks]);
+  const pickedKey = (props.pickedIds ?? []).join('\n');
+  const pickedIds = useMemo(() => new Set(pickedKey === '' ? [] : pickedKey.split('\n')), [pickedKey]);
+  const bubbleId = props.bubble?.humpId ?? null;
+  return useMemo(
+    () => ({ layout, index, blackoutsByRow, othersByRow, pickedIds, bubbleId }),
+    [layout, index, blackoutsByRow, othersByRow, pickedIds, bubbleId],
+  );
 }
 
 /** Buttons zoom about what is picked, else about now when it is in view, else about the middle. */

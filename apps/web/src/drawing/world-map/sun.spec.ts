@@ -8,7 +8,7 @@ describe('the point under the Sun', () => {
     expect(subsolarPoint(Date.UTC(2026, 11, 21, 20, 50)).latitudeDeg).toBeCloseTo(-23.44, 1);
   });
 
-  it('follows the equation of time: about 16 minutes fast in early November, 14 slow in mid-February (common practice)', () => {
+  it('follows the equation of time: about 16 minutes fast in early November, 14 slow in mid-February (from memory)', () => {
     const minutes = (atMs: number) => -subsolarPoint(atMs).longitudeDeg * 4;
     expect(minutes(Date.UTC(2026, 10, 3, 12))).toBeCloseTo(16.4, 0);
     expect(minutes(Date.UTC(2026, 1, 11, 12))).toBeCloseTo(-14.2, 0);

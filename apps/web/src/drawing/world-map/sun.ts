@@ -1,6 +1,6 @@
 /**
  * Where the Sun stands overhead, good to a few hundredths of a degree until 2050: enough for shading a map, never for pointing.
- * Source: the low-precision formulas for the Sun of The Astronomical Almanac, section C.
+ * Source: the low-precision formulas for the Sun of The Astronomical Almanac, from memory.
  */
 
 const RADIAN = Math.PI / 180;

@@ -47,9 +47,15 @@ export function PhoneBar({ items, current, link: Link, person, personMenu }: Pho
         More
         {waiting > 0 && <span className={classes.phoneNote}>{waiting} waiting</span>}
       </button>
-      <Drawer.Root opened={isOpen} onClose={() => setOpen(false)} position="bottom" size="auto">
+      <Drawer.Root
+        opened={isOpen}
+        onClose={() => setOpen(false)}
+        position="bottom"
+        size="auto"
+        classNames={{ content: classes.sheet ?? '' }}
+      >
         <Drawer.Overlay />
-        <Drawer.Content aria-label="More pages" className={classes.sheet}>
+        <Drawer.Content aria-label="More pages">
           <Drawer.Body>
             <div className={classes.sheetHead}>
               <h2>{person ? person.organisationName : 'More'}</h2>
