@@ -65,6 +65,7 @@ export async function startStack({ port, dataDir: given, api = true, demo = true
     ELEMENTS_PORT: String(elementsPort),
     ELEMENTS_DATA_DIR: join(dataDir, 'elements'),
   };
+  keepFeedFile(standIns.ELEMENTS_DATA_DIR);
   const stop = () => stopAll(children);
   try {
     if (demo && !existsSync(join(dataDir, 'demo-loaded.json'))) await loadDemo({ dataDir, environment, standIns, log });
@@ -93,6 +94,13 @@ export async function startStack({ port, dataDir: given, api = true, demo = true
     stop,
     urls: { app: address(port), payments: address(payments), mail: address(mailPort), elements: address(elementsPort) },
   };
+}
+
+/** The element feed serves what stands in its file; without the demo that is nothing yet. */
+function keepFeedFile(folder) {
+  mkdirSync(folder, { recursive: true });
+  const file = join(folder, 'elements.json');
+  if (!existsSync(file)) writeFileSync(file, '[]');
 }
 
 /** Plays the invented scenario into the empty data folder; interrupted, it begins again from nothing. */

@@ -6,7 +6,7 @@ import { loadDemo } from './index.js';
 const dataDir = process.env['SKYBERTH_DATA_DIR'];
 if (!dataDir) throw new Error('SKYBERTH_DATA_DIR is not set; the demo is loaded by npm start.');
 // An earlier attempt that was interrupted leaves half a scenario; it begins again from nothing.
-for (const name of ['skyberth.sqlite', 'skyberth.sqlite-wal', 'skyberth.sqlite-shm', 'payments', 'mail', 'elements']) {
+for (const name of ['skyberth.sqlite', 'skyberth.sqlite-wal', 'skyberth.sqlite-shm', 'payments', 'mail']) {
   rmSync(join(dataDir, name), { recursive: true, force: true });
 }
 const startedMs = Date.now();

@@ -9,7 +9,11 @@ import {
   type QueryInput,
   type ResponseOf,
   type RouteContract,
+  routes,
 } from '@skyberth/shared';
+
+/** Everybody in the scenario has the same one; it stands on the first page of `npm start`. */
+export const PASSWORD = 'calm water at the quay';
 
 /** A person with a browser of their own. */
 export interface Actor {
@@ -47,30 +51,53 @@ export type Call = <C extends RouteContract>(
   input: CallInput<C>,
 ) => Promise<ResponseOf<C>>;
 
-/** Makes the function that calls the server at `url`. Throws `Refused`. */
+/** Makes the function that calls the server at `url`; a session that has run out is renewed first. Throws `Refused`. */
 export function clientOf(url: string): Call {
   return async (who, route, input) => {
-    const { params, query = {}, body } = input as Loose;
-    const search = new URLSearchParams();
-    for (const [name, value] of Object.entries(query)) if (value !== undefined) search.set(name, String(value));
-    const headers: Record<string, string> = {};
-    if (body !== undefined) headers['Content-Type'] = 'application/json';
-    if (needsIdempotencyKey(route)) headers[IDEMPOTENCY_HEADER] = randomUUID();
-    if (who) headers['Cookie'] = [...who.cookies].map(([name, value]) => `${name}=${value}`).join('; ');
-    const response = await fetch(`${url}${fillPath(route.path, params)}${search.size > 0 ? `?${search}` : ''}`, {
-      method: route.method,
-      headers,
-      ...(body === undefined ? {} : { body: JSON.stringify(body) }),
-    });
-    for (const line of response.headers.getSetCookie()) {
-      const pair = line.split(';')[0] ?? '';
-      who?.cookies.set(pair.slice(0, pair.indexOf('=')), pair.slice(pair.indexOf('=') + 1));
+    let response = await send(url, who, route, input as Loose);
+    if (response.status === 401 && who && route.access !== 'public') {
+      await signInAgain(url, who);
+      response = await send(url, who, route, input as Loose);
     }
-    const answer: unknown = await response.json();
-    if (!response.ok) {
-      const problem = answer as { code: string; detail: string; errors?: unknown };
-      throw new Refused(problem.code, `${route.name}: ${problem.detail} ${JSON.stringify(problem.errors ?? '')}`);
-    }
-    return answer as never;
+    return (await answerOf(response, route)) as never;
   };
+}
+
+async function send(
+  url: string,
+  who: Actor | null,
+  route: RouteContract,
+  { params, query = {}, body }: Loose,
+): Promise<Response> {
+  const search = new URLSearchParams();
+  for (const [name, value] of Object.entries(query)) if (value !== undefined) search.set(name, String(value));
+  const headers: Record<string, string> = {};
+  if (body !== undefined) headers['Content-Type'] = 'application/json';
+  if (needsIdempotencyKey(route)) headers[IDEMPOTENCY_HEADER] = randomUUID();
+  if (who) headers['Cookie'] = [...who.cookies].map(([name, value]) => `${name}=${value}`).join('; ');
+  const response = await fetch(`${url}${fillPath(route.path, params)}${search.size > 0 ? `?${search}` : ''}`, {
+    method: route.method,
+    headers,
+    ...(body === undefined ? {} : { body: JSON.stringify(body) }),
+  });
+  for (const line of response.headers.getSetCookie()) {
+    const pair = line.split(';')[0] ?? '';
+    who?.cookies.set(pair.slice(0, pair.indexOf('=')), pair.slice(pair.indexOf('=') + 1));
+  }
+  return response;
+}
+
+async function signInAgain(url: string, who: Actor): Promise<void> {
+  who.cookies.clear();
+  await answerOf(
+    await send(url, who, routes.signIn, { body: { email: who.email, password: PASSWORD } }),
+    routes.signIn,
+  );
+}
+
+async function answerOf(response: Response, route: RouteContract): Promise<unknown> {
+  const answer: unknown = await response.json();
+  if (response.ok) return answer;
+  const problem = answer as { code: string; detail: string; errors?: unknown };
+  throw new Refused(problem.code, `${route.name}: ${problem.detail} ${JSON.stringify(problem.errors ?? '')}`);
 }

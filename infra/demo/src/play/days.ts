@@ -205,13 +205,7 @@ export const utc = (timeMs: number): string => new Date(timeMs).toISOString();
 
 /** Enters the published test number of a good card on the payment page, as a browser would. */
 async function payOnPage(url: string): Promise<void> {
-  const page = await fetch(url);
-  const html = await page.text();
-  const action = /<form[^>]+action="([^"]+)"/.exec(html)?.[1]?.replaceAll('&amp;', '&');
-  if (!action) throw new Error('The payment page has no form.');
-  const fields = new URLSearchParams({ number: '4242424242424242', exp: '12/34', cvc: '123' });
-  for (const [, name, value] of html.matchAll(/<input[^>]+type="hidden"[^>]+name="([^"]+)"[^>]+value="([^"]*)"/g))
-    if (name) fields.set(name, value ?? '');
-  const answer = await fetch(new URL(action, url), { method: 'POST', body: fields, redirect: 'manual' });
-  if (answer.status >= 400) throw new Error(`The payment page refused the card: ${await answer.text()}`);
+  const fields = new URLSearchParams({ number: '4242 4242 4242 4242', expiry: '12/34', cvc: '123', name: 'Demo' });
+  const answer = await fetch(url, { method: 'POST', body: fields, redirect: 'manual' });
+  if (answer.status !== 303) throw new Error(`The payment page did not take the card: ${await answer.text()}`);
 }

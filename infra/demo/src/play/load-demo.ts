@@ -1,8 +1,9 @@
 import { OPERATORS } from '../cast/operators.js';
 import { OWNERS } from '../cast/owners.js';
 import { Chance } from './chance.js';
+import { PASSWORD } from './client.js';
 import { Season } from './days.js';
-import { PASSWORD, settleIn } from './settle-in.js';
+import { settleIn } from './settle-in.js';
 import { STAFF, Stage } from './stage.js';
 import { buyForToday, leaveThingsOpen } from './today.js';
 

@@ -10,10 +10,8 @@ import {
   maskOf,
   OWNERS,
 } from '../cast/owners.js';
-import { type Actor, actor } from './client.js';
+import { type Actor, actor, PASSWORD } from './client.js';
 import { STAFF, type Stage } from './stage.js';
-
-export const PASSWORD = 'calm water at the quay';
 
 export interface PlayOwner {
   readonly cast: CastOwner;
