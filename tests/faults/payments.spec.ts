@@ -100,7 +100,7 @@ describe('a crash', () => {
 });
 
 describe('a provider that does not answer', () => {
-  it('is asked again until it does, and charges once', async () => {
+  it('is asked again until it does, and lets the reservation go', async () => {
     const { id } = await hold();
     await shop.payments.payOnPage(await shop.openPage(id), 'pm_card_visa');
     await shop.settle();

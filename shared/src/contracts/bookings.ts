@@ -174,6 +174,7 @@ export const bookingRoutes = {
       'elements-unusable',
       'elements-too-old',
       'not-found',
+      'too-many',
     ],
   }),
   letGo: defineRoute({

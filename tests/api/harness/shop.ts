@@ -114,6 +114,8 @@ export async function passesForSale(
 }
 
 export interface ShopOptions extends SaleOptions {
+  /** How far ahead passes are looked for; six days unless told otherwise. */
+  readonly days?: number;
   readonly server?: Options;
   readonly buyer?: { country?: string; vatNumber?: string | null };
 }
@@ -128,7 +130,7 @@ export async function openShop(options: ShopOptions = {}): Promise<Shop> {
   const operator = await skyberth.people.operator(options.buyer ?? {});
   const { antenna } = await antennaOnSale(skyberth, owner, options);
   const spacecraft = await spacecraftWithElements(skyberth, operator, 70_001);
-  const passes = await passesForSale(skyberth, { as: operator, spacecraftId: spacecraft.id, days: 6 });
+  const passes = await passesForSale(skyberth, { as: operator, spacecraftId: spacecraft.id, days: options.days ?? 6 });
   const settle = async () => {
     for (let round = 0; round < 3; round += 1) {
       await skyberth.drain();
@@ -185,5 +187,5 @@ export async function wishFor(skyberth: Skyberth, pass: FoundPass, as: Person): 
   const stretch = { antennaId, spacecraftId, need: 'downlink', aosUtc: part.aosUtc, losUtc: part.losUtc } as const;
   const { quote } = await must(skyberth.call(routes.passDetail, { body: stretch, as }));
   if (!quote) throw new Error('The pass has no price.');
-  return { ...stretch, expectedToPayMinor: quote.toPayMinor };
+  return { ...stretch, expectedToPayMinor: quote.toPayMinor, oldElementsAcknowledged: true };
 }

@@ -44,11 +44,12 @@ export class BookingClock implements OnModuleInit {
     this.each(this.repository.reached(this.db, 'under way', 'losMs', nowMs), (tx, booking) =>
       this.ending.end(tx, booking),
     );
-    this.each(this.repository.reached(this.db, 'reporting', 'losMs', nowMs - REMIND_AFTER_MS), (tx, booking) => {
-      const dueMs = booking.losMs + CLOSE_AFTER_MS;
-      if (nowMs >= dueMs) this.ending.reportOverdue(tx, booking);
-      else this.ending.remindOfReport(tx, booking, dueMs);
-    });
+    this.each(this.repository.reached(this.db, 'reporting', 'losMs', nowMs - CLOSE_AFTER_MS), (tx, booking) =>
+      this.ending.reportOverdue(tx, booking),
+    );
+    this.each(this.repository.unreminded(this.db, nowMs - REMIND_AFTER_MS), (tx, booking) =>
+      this.ending.remindOfReport(tx, booking, booking.losMs + CLOSE_AFTER_MS),
+    );
   }
 
   /** One transaction each: a booking that cannot be moved holds up no other. */

@@ -9,7 +9,7 @@ import { BookingNotices, contactName } from './booking-notices.js';
 import { pdfOf } from './booking-sale.service.js';
 import { BookingTransitions, BY_CLOCK, BY_PAYMENT, type Mover } from './booking-transitions.js';
 import { moneyText, utcText } from './booking-words.js';
-import { BookingRepository, type BookingRow } from './bookings.repository.js';
+import { BookingRepository, type BookingRow, REPORT_REMINDER } from './bookings.repository.js';
 
 export interface Cancellation {
   readonly mover: Mover;
@@ -126,6 +126,8 @@ export class BookingEnding {
       subject: `Please report: ${contactName(this.notices.names(tx, booking))}`,
       sentences: [`How did the contact go? Without a report by ${utcText(dueMs)} it is closed by rule.`],
     });
+    const sentence = 'The station was reminded to report.';
+    this.transitions.note(tx, booking, { kind: REPORT_REMINDER, sentence, mover: BY_CLOCK });
   }
 
   private closeFlown(tx: Db, booking: BookingRow, outcome: { charged: boolean; sentence: string }): void {

@@ -2,7 +2,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { antennas, bookingEvents, bookings, type SkyberthDatabase, stations } from '@skyberth/drizzle';
 import { type BookingState, OCCUPYING_STATES, type Principal } from '@skyberth/shared';
-import { and, asc, eq, gt, inArray, isNotNull, lt, lte, max, ne, or, type SQL, sql } from 'drizzle-orm';
+import { and, asc, eq, gt, inArray, isNotNull, lt, lte, max, ne, notInArray, or, type SQL, sql } from 'drizzle-orm';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
 import { notFound } from '../platform/domain-error.js';
@@ -35,6 +35,8 @@ export interface BusyInterval {
 
 /** No guarded interval is longer (`bookings_order`), so nothing that began earlier than this can reach into a period. */
 const LONGEST_GUARD_MS = 700_000_000;
+/** The kind of diary row that says so. */
+export const REPORT_REMINDER = 'report reminder';
 /** The first number; lower ones look like a test to the people who read them. */
 const FIRST_NUMBER = 1001;
 
@@ -184,6 +186,19 @@ export class BookingRepository {
       .from(bookings)
       .where(and(eq(bookings.state, state), lte(bookings[instant], nowMs)))
       .orderBy(asc(bookings.aosMs))
+      .all();
+  }
+
+  /** Contacts that ended before `losBeforeMs`, wait for their report, and were not reminded of it. */
+  unreminded(tx: Db, losBeforeMs: number): BookingRow[] {
+    const reminders = tx
+      .select({ bookingId: bookingEvents.bookingId })
+      .from(bookingEvents)
+      .where(eq(bookingEvents.kind, REPORT_REMINDER));
+    return tx
+      .select()
+      .from(bookings)
+      .where(and(eq(bookings.state, 'reporting'), lte(bookings.losMs, losBeforeMs), notInArray(bookings.id, reminders)))
       .all();
   }
 

@@ -33,6 +33,19 @@ export class LedgerRepository {
     return row !== undefined;
   }
 
+  /** What an entry put on each account; empty where there is no such entry. */
+  amountsOf(tx: Db, causeKey: string): Map<string, number> {
+    const rows = tx
+      .select({ account: journalPostings.account, amountMinor: journalPostings.amountMinor })
+      .from(journalPostings)
+      .innerJoin(journalEntries, eq(journalEntries.id, journalPostings.entryId))
+      .where(eq(journalEntries.causeKey, causeKey))
+      .all();
+    const sums = new Map<string, number>();
+    for (const { account, amountMinor } of rows) sums.set(account, (sums.get(account) ?? 0) + amountMinor);
+    return sums;
+  }
+
   /** Writes the entry open, fills it and seals it, which is when the database checks that it balances. */
   add(tx: Db, entry: JournalEntry, about: { atMs: number; bookingId: string | null }): void {
     const id = newId();

@@ -1,6 +1,6 @@
 /** The ledger: written with the changes that cause its entries, read by finance, checked against itself. */
 import { Inject, Injectable, Logger, type OnModuleInit } from '@nestjs/common';
-import { checkLedger, type JournalEntry, type LedgerFault } from '@skyberth/money';
+import { type AccountName, checkLedger, type JournalEntry, type LedgerFault } from '@skyberth/money';
 import type { ResponseOf, routes } from '@skyberth/shared';
 import { JobsService } from '../jobs/jobs.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
@@ -29,6 +29,12 @@ export class LedgerService implements OnModuleInit {
   post(tx: Db, entry: JournalEntry, bookingId: string | null): void {
     if (this.repository.has(tx, entry.causeKey)) return;
     this.repository.add(tx, entry, { atMs: this.clock.nowMs(), bookingId });
+  }
+
+  /** What the entry of this cause credited to an account; zero where there is none. */
+  creditedMinor(tx: Db, causeKey: string, account: AccountName): number {
+    const amountMinor = this.repository.amountsOf(tx, causeKey).get(account) ?? 0;
+    return amountMinor === 0 ? 0 : -amountMinor;
   }
 
   /** Everything that does not hold in the journal; empty when it is sound. */

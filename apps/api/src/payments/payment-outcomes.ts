@@ -97,7 +97,7 @@ export class PaymentOutcomes {
       if (!mine) this.orders.releaseIntent(tx, facts.intentId);
       return mine ? 'known' : 'second reservation, let go';
     }
-    this.change(tx, payment, { state: 'releasing', intentId: facts.intentId });
+    if (payment.state === 'releasing') this.change(tx, payment, { intentId: facts.intentId });
     this.sale.tooLate(tx, booking, facts.intentId);
     return 'too late, let go';
   }
@@ -122,11 +122,11 @@ export class PaymentOutcomes {
   }
 
   private released(tx: Db, booking: BookingRow, payment: PaymentRow, facts: IntentFacts): string {
-    if (payment.intentId !== facts.intentId) return 'another intent of this booking';
-    if (payment.state === 'releasing') {
-      this.change(tx, payment, { state: 'released' });
+    if (payment.state === 'releasing' && [null, facts.intentId].includes(payment.intentId)) {
+      this.change(tx, payment, { state: 'released', intentId: facts.intentId });
       return 'released';
     }
+    if (payment.intentId !== facts.intentId) return 'another intent of this booking';
     if (!['authorised', 'capturing'].includes(payment.state)) return 'known';
     const failure = 'The reservation ended before the contact was charged.';
     if (booking.state === 'awaiting owner' || booking.state === 'confirmed') {

@@ -1,14 +1,17 @@
-/** Money that the provider gave back after it was taken: followed in the payment and the ledger; the owner bears its net. */
+/**
+ * Money that the provider gave back after it was taken: followed in the payment and the ledger. The owner bears its part of
+ * the net price, and the marketplace gives its part of the fee back.
+ */
 import { Inject, Injectable } from '@nestjs/common';
 import { divideHalfUp, refundEntry, refundReturnedEntry } from '@skyberth/money';
 import { BookingTransitions, BY_PAYMENT } from '../bookings/booking-transitions.js';
 import { moneyText } from '../bookings/booking-words.js';
-import { BookingRepository } from '../bookings/bookings.repository.js';
+import { BookingRepository, type BookingRow } from '../bookings/bookings.repository.js';
 import { LedgerService } from '../ledger/ledger.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import type { Db } from '../platform/transaction.js';
 import type { ProviderEvent } from './payment.port.js';
-import { PaymentRepository } from './payments.repository.js';
+import { PaymentRepository, type PaymentRow } from './payments.repository.js';
 
 type Refunded = Extract<ProviderEvent['about'], { kind: 'refunded' }>;
 
@@ -27,43 +30,48 @@ export class PaymentRefunds {
     const payment = refunded.intentId === null ? undefined : this.payments.ofIntent(tx, refunded.intentId);
     const booking = payment && this.bookings.byId(tx, payment.bookingId);
     if (!payment || !booking) return 'no payment of ours';
-    const amountMinor = refunded.refundedMinor - payment.refundedMinor;
-    if (amountMinor <= 0) return 'known';
+    if (refunded.refundedMinor <= payment.refundedMinor) return 'known';
     if (refunded.refundedMinor > payment.capturedMinor)
       throw new Error('A refund came before the news of its payment.');
-    const whole = refunded.refundedMinor === payment.capturedMinor;
     this.payments.update(tx, payment.id, {
       refundedMinor: refunded.refundedMinor,
-      state: whole ? 'refunded' : 'captured',
+      state: refunded.refundedMinor === payment.capturedMinor ? 'refunded' : 'captured',
       changedMs: this.clock.nowMs(),
     });
-    const { operatorId, ownerId, currency } = booking;
-    const netMinor = divideHalfUp(BigInt(amountMinor) * BigInt(booking.netMinor), BigInt(booking.toPayMinor));
-    const key = `${refunded.chargeId}:${refunded.refundedMinor}`;
-    const cause = `Refund of berth ${booking.number}`;
-    this.ledger.post(
-      tx,
-      refundEntry(
-        { causeKey: `refund:${key}`, cause, currency },
-        {
-          operatorId,
-          ownerId,
-          netMinor,
-          vatMinor: amountMinor - netMinor,
-          fromReserveMinor: 0,
-          feeMinor: 0,
-          feeVatMinor: 0,
-        },
-      ),
-      booking.id,
-    );
-    this.ledger.post(
-      tx,
-      refundReturnedEntry({ causeKey: `returned:${key}`, cause, currency }, { operatorId, amountMinor }),
-      booking.id,
-    );
-    const sentence = `${moneyText(amountMinor, currency)} were given back to the card.`;
+    this.book(tx, { booking, payment, refunded });
+    const amountMinor = refunded.refundedMinor - payment.refundedMinor;
+    const sentence = `${moneyText(amountMinor, booking.currency)} were given back to the card.`;
     this.transitions.note(tx, booking, { kind: 'refunded', sentence, mover: BY_PAYMENT });
     return 'refund followed';
   }
+
+  private book(tx: Db, what: { booking: BookingRow; payment: PaymentRow; refunded: Refunded }): void {
+    const { booking, payment, refunded } = what;
+    const { operatorId, ownerId, currency } = booking;
+    const amountMinor = refunded.refundedMinor - payment.refundedMinor;
+    // Shares are taken of all that was given back before and after, so that refunds in steps add up to the cent.
+    const share = (totalMinor: number): number =>
+      part(totalMinor, refunded.refundedMinor, payment) - part(totalMinor, payment.refundedMinor, payment);
+    const sale = `sale:${booking.id}`;
+    const fee = `fee:${booking.id}`;
+    const vatMinor = share(this.ledger.creditedMinor(tx, sale, 'VAT'));
+    const cause = `Refund of berth ${booking.number}`;
+    const key = `${refunded.chargeId}:${refunded.refundedMinor}`;
+    const refund = {
+      operatorId,
+      ownerId,
+      netMinor: amountMinor - vatMinor,
+      vatMinor,
+      fromReserveMinor: 0,
+      feeMinor: share(this.ledger.creditedMinor(tx, fee, 'marketplace fee')),
+      feeVatMinor: share(this.ledger.creditedMinor(tx, fee, 'VAT')),
+    };
+    this.ledger.post(tx, refundEntry({ causeKey: `refund:${key}`, cause, currency }, refund), booking.id);
+    const returned = refundReturnedEntry({ causeKey: `returned:${key}`, cause, currency }, { operatorId, amountMinor });
+    this.ledger.post(tx, returned, booking.id);
+  }
 }
+
+/** The part of a total that belongs to so much of what was taken. */
+const part = (totalMinor: number, ofMinor: number, payment: PaymentRow): number =>
+  divideHalfUp(BigInt(totalMinor) * BigInt(ofMinor), BigInt(payment.capturedMinor));
