@@ -24,8 +24,28 @@ export interface TrajectorySource {
   /** First and last instant the source answers for; infinite for mean elements. */
   readonly startMs: number;
   readonly stopMs: number;
+  /**
+   * Where the source is not one unbroken path from start to stop: its unbroken stretches, or a function that cuts a period
+   * into pieces with a source for each. A search runs on every piece by itself.
+   */
+  readonly spans?: readonly SourceSpan[] | ((fromMs: number, toMs: number) => readonly SourcePiece[]);
+  /** Where the source may give out at some distance from an instant that it is good at (decay): that instant. */
+  readonly epochMs?: number;
+  /** Nothing in the path changes faster than this; absent where the orbit alone says how finely to sample. */
+  readonly longestStepMs?: number;
   /** Writes x y z in km and vx vy vz in km/s, true equator mean equinox (TEME), into `out[0..5]`. */
   stateTeme(timeMs: number, out: Float64Array): void;
+}
+
+export interface SourceSpan {
+  readonly startMs: number;
+  readonly stopMs: number;
+}
+
+export interface SourcePiece {
+  readonly fromMs: number;
+  readonly toMs: number;
+  readonly source: TrajectorySource;
 }
 
 /** Direction and distance of a spacecraft from a site at one instant. Azimuth 0..360 from north through east. */

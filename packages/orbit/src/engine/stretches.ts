@@ -1,0 +1,125 @@
+/** The parts of a period that a source can answer for, and what stops it elsewhere. */
+import { OrbitError } from '../orbit-error.js';
+import type { SourcePiece, TrajectorySource } from '../types.js';
+import { Ephemeris } from './ephemeris.js';
+
+const DAY_MS = 86_400_000;
+/** Between epoch and period the source is asked this often: a decay takes days to be passed through. */
+const PROBE_MS = DAY_MS / 4;
+const MOST_PROBES = 400;
+/** An end found by halving is this sharp. */
+const SHARP_MS = 1;
+/** Shorter than this nothing can be sampled. */
+const LEAST_STRETCH_MS = 10;
+
+export interface SampledPath {
+  /** In rising order, one for each unbroken part. */
+  readonly ephemerides: readonly Ephemeris[];
+  /** Why parts of the period are missing, if the source gave out. */
+  readonly fault: OrbitError | undefined;
+}
+
+/** Samples all of a period that can be sampled. Never throws an `OrbitError`: what goes wrong is in `fault`. */
+export function samplePath(source: TrajectorySource, fromMs: number, toMs: number): SampledPath {
+  const ephemerides: Ephemeris[] = [];
+  let fault: OrbitError | undefined;
+  for (const piece of piecesOf(source, fromMs, toMs)) {
+    if (piece.toMs - piece.fromMs < LEAST_STRETCH_MS) continue;
+    try {
+      const sound = soundPart(piece);
+      fault ??= sound.fault;
+      if (sound.ephemeris) ephemerides.push(sound.ephemeris);
+    } catch (error) {
+      if (!(error instanceof OrbitError)) throw error;
+      fault ??= error;
+    }
+  }
+  return { ephemerides, fault };
+}
+
+function piecesOf(source: TrajectorySource, fromMs: number, toMs: number): readonly SourcePiece[] {
+  const { spans } = source;
+  if (typeof spans === 'function') {
+    return spans(fromMs, toMs).flatMap((piece) =>
+      piece.source === source ? [piece] : piecesOf(piece.source, piece.fromMs, piece.toMs),
+    );
+  }
+  const stretches = spans ?? [source];
+  return stretches
+    .map(({ startMs, stopMs }) => ({ fromMs: Math.max(fromMs, startMs), toMs: Math.min(toMs, stopMs), source }))
+    .filter((piece) => piece.toMs > piece.fromMs);
+}
+
+interface SoundPart {
+  readonly ephemeris: Ephemeris | undefined;
+  readonly fault: OrbitError | undefined;
+}
+
+/**
+ * Follows a source with an epoch outwards from it as far as it answers: the first instant without an answer ends its use on
+ * that side, even where it answers again later, because then the answers mean nothing.
+ */
+function soundPart({ source, fromMs, toMs }: SourcePiece): SoundPart {
+  const { epochMs } = source;
+  if (epochMs === undefined) return { ephemeris: Ephemeris.of(source, fromMs, toMs), fault: undefined };
+  const anchorMs = Math.min(toMs, Math.max(fromMs, epochMs));
+  const lost = firstFailure(source, epochMs, anchorMs);
+  if (lost) return { ephemeris: undefined, fault: lost.fault };
+  try {
+    return { ephemeris: Ephemeris.of(source, fromMs, toMs), fault: undefined };
+  } catch (error) {
+    if (!(error instanceof OrbitError)) throw error;
+  }
+  const after = firstFailure(source, anchorMs, toMs);
+  const before = firstFailure(source, anchorMs, fromMs);
+  const endMs = after ? after.lastGoodMs : toMs;
+  const startMs = before ? before.lastGoodMs : fromMs;
+  const fault = after?.fault ?? before?.fault;
+  if (endMs - startMs < LEAST_STRETCH_MS || !fault) return { ephemeris: undefined, fault };
+  return { ephemeris: Ephemeris.of(source, startMs, endMs), fault };
+}
+
+interface Failure {
+  readonly lastGoodMs: number;
+  readonly fault: OrbitError;
+}
+
+/** Asks a source from one instant to another; the first failure is narrowed down by halving. */
+function firstFailure(source: TrajectorySource, fromMs: number, toMs: number): Failure | undefined {
+  const spanMs = toMs - fromMs;
+  const probes = Math.min(MOST_PROBES, Math.ceil(Math.abs(spanMs) / PROBE_MS));
+  let goodMs = fromMs;
+  const atStart = faultAt(source, fromMs);
+  if (atStart) return { lastGoodMs: fromMs, fault: atStart };
+  for (let probe = 1; probe <= probes; probe += 1) {
+    const timeMs = fromMs + (spanMs * probe) / probes;
+    const fault = faultAt(source, timeMs);
+    if (fault) return narrowed(source, goodMs, { lastGoodMs: timeMs, fault });
+    goodMs = timeMs;
+  }
+  return undefined;
+}
+
+function narrowed(source: TrajectorySource, good: number, failed: Failure): Failure {
+  let goodMs = good;
+  let { lastGoodMs: badMs, fault } = failed;
+  while (Math.abs(badMs - goodMs) > SHARP_MS) {
+    const middleMs = 0.5 * (goodMs + badMs);
+    const there = faultAt(source, middleMs);
+    if (there) [badMs, fault] = [middleMs, there];
+    else goodMs = middleMs;
+  }
+  return { lastGoodMs: goodMs, fault };
+}
+
+const scratch = new Float64Array(6);
+
+function faultAt(source: TrajectorySource, timeMs: number): OrbitError | undefined {
+  try {
+    source.stateTeme(timeMs, scratch);
+    return undefined;
+  } catch (error) {
+    if (error instanceof OrbitError) return error;
+    throw error;
+  }
+}
