@@ -15,7 +15,7 @@ export { formatCcsdsTime, parseCcsdsTime } from './ephemeris/ccsds-time.js';
 export * from './ephemeris/hybrid-source.js';
 export { fromUtcMs, TIME_SYSTEMS, type TimeSystem, taiMinusUtcS, toUtcMs } from './ephemeris/leap-seconds.js';
 export type { Oem, OemFault, OemFrame, OemInterpolation, OemSegment } from './ephemeris/oem.js';
-export { type EphemerisSpan, type OemSource, oemSource } from './ephemeris/oem-source.js';
+export { type OemSource, oemSource } from './ephemeris/oem-source.js';
 export * from './ephemeris/parse-oem.js';
 export { escapeXml, readXmlTree, type XmlElement, type XmlReading } from './ephemeris/xml-tree.js';
 export * from './export/csv.js';

@@ -61,30 +61,36 @@ export interface OriginPass extends Pass {
   readonly origin: TrajectoryOrigin | 'both';
 }
 
-/**
- * Searches each piece by itself with the given finder and joins the halves of a pass that a seam cut: one clipped at its
- * end where the next is clipped at its start, at the same instant.
- */
+/** Searches each piece by itself with the given finder and joins the halves of a pass that a seam cut. */
 export function passesAcross(
   pieces: readonly OriginSpan[],
   find: (source: TrajectorySource, fromMs: number, toMs: number) => readonly Pass[],
 ): OriginPass[] {
-  const passes: OriginPass[] = [];
-  for (const { source, fromMs, toMs, origin } of pieces) {
-    for (const pass of find(source, fromMs, toMs)) {
-      const last = passes.at(-1);
-      if (last?.clippedEnd && pass.clippedStart && last.losMs === pass.aosMs) {
-        passes[passes.length - 1] = joined(last, { ...pass, origin });
-      } else {
-        passes.push({ ...pass, origin });
-      }
-    }
+  const passes = pieces.flatMap(({ source, fromMs, toMs, origin }) =>
+    find(source, fromMs, toMs).map((pass): OriginPass => ({ ...pass, origin })),
+  );
+  return joinAtSeams(passes, (earlier, later) => ({
+    ...joinedPass(earlier, later),
+    origin: earlier.origin === later.origin ? later.origin : 'both',
+  }));
+}
+
+/**
+ * Joins the halves of passes that a seam cut: one clipped at its end where the next is clipped at its start, at the same
+ * instant. For passes of one site in rising order, as a search over a source with seams gives them.
+ */
+export function joinAtSeams<P extends Pass>(passes: readonly P[], join: (earlier: P, later: P) => P): P[] {
+  const whole: P[] = [];
+  for (const pass of passes) {
+    const last = whole.at(-1);
+    if (last?.clippedEnd && pass.clippedStart && last.losMs === pass.aosMs) whole[whole.length - 1] = join(last, pass);
+    else whole.push(pass);
   }
-  return passes;
+  return whole;
 }
 
 /** AOS of the earlier half, LOS of the later, and whichever highest point is higher. */
-function joined(earlier: OriginPass, later: OriginPass): OriginPass {
+export function joinedPass(earlier: Pass, later: Pass): Pass {
   const top = earlier.maxElevationDeg >= later.maxElevationDeg ? earlier : later;
   const three = (name: 'azimuthDeg' | 'elevationDeg' | 'rangeKm' | 'rangeRateKmPerS'): AosHighestLos<number> => [
     earlier[name][0],
@@ -102,6 +108,5 @@ function joined(earlier: OriginPass, later: OriginPass): OriginPass {
     elevationDeg: three('elevationDeg'),
     rangeKm: three('rangeKm'),
     rangeRateKmPerS: three('rangeRateKmPerS'),
-    origin: earlier.origin === later.origin ? later.origin : 'both',
   };
 }

@@ -2,19 +2,14 @@
 import { temeToEcef } from '../frames/look-angles.js';
 import { EARTH_TURN_RAD_PER_S, gmstRad } from '../frames/sidereal.js';
 import { OrbitError } from '../orbit-error.js';
-import type { TrajectorySource } from '../types.js';
+import type { SourceSpan, TrajectorySource } from '../types.js';
 import { aboutZ, gcrfToTeme, rotateInPlace, transpose } from './earth-orientation.js';
 import { interpolateState } from './interpolate.js';
 import type { Oem, OemSegment } from './oem.js';
 
-export interface EphemerisSpan {
-  readonly startMs: number;
-  readonly stopMs: number;
-}
-
 export interface OemSource extends TrajectorySource {
   /** Unbroken stretches in rising order; between them the source throws. */
-  readonly spans: readonly EphemerisSpan[];
+  readonly spans: readonly SourceSpan[];
 }
 
 /**
@@ -35,6 +30,7 @@ export function oemSource(oem: Oem): OemSource {
     startMs: first.startMs,
     stopMs: last.stopMs,
     spans,
+    longestStepMs: Math.min(...oem.segments.map(meanStepMs)),
     stateTeme(timeMs, out) {
       const part = parts.findLast(({ startMs, stopMs }) => timeMs >= startMs && timeMs <= stopMs);
       if (part === undefined) throw outside(timeMs, spans);
@@ -43,7 +39,7 @@ export function oemSource(oem: Oem): OemSource {
   };
 }
 
-function outside(timeMs: number, spans: readonly EphemerisSpan[]): OrbitError {
+function outside(timeMs: number, spans: readonly SourceSpan[]): OrbitError {
   const instant = Math.abs(timeMs) < 8.64e15 ? new Date(timeMs).toISOString() : String(timeMs);
   const told = spans.map(
     ({ startMs, stopMs }) => `${new Date(startMs).toISOString()} to ${new Date(stopMs).toISOString()}`,
@@ -56,6 +52,11 @@ function outside(timeMs: number, spans: readonly EphemerisSpan[]): OrbitError {
       spans,
     },
   );
+}
+
+/** A burn may be hidden between any two states, so a search must not stride over more of them than this. */
+function meanStepMs({ timesMs }: OemSegment): number {
+  return (timesMs.at(-1)! - timesMs[0]!) / (timesMs.length - 1);
 }
 
 function segmentPart(segment: OemSegment): TrajectorySource {
@@ -101,8 +102,8 @@ function earthFixedToTeme(timeMs: number, state: Float64Array): void {
   rotateInPlace(rotation, state, 3);
 }
 
-function joinSpans(parts: readonly EphemerisSpan[]): EphemerisSpan[] {
-  const joined: EphemerisSpan[] = [];
+function joinSpans(parts: readonly SourceSpan[]): SourceSpan[] {
+  const joined: SourceSpan[] = [];
   for (const { startMs, stopMs } of [...parts].sort((a, b) => a.startMs - b.startMs)) {
     const last = joined.at(-1);
     if (last !== undefined && startMs <= last.stopMs) {
