@@ -3,8 +3,8 @@ import { compileMask, findPasses, parseElementSets, sgp4Source } from '@skyberth
 import type { BodyInput, FoundPass, Reason, SearchResult } from '@skyberth/shared';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { occupy } from './harness/bookings.js';
-import { elementText } from './harness/elements.js';
 import { antennaOnSale, BANDS, PRICE, STATION } from './harness/stations.js';
+import { type OrbitOptions, tleText } from './harness/tle.js';
 import { must, type Person, routes, type Skyberth, startSkyberth } from './harness.js';
 
 const START_MS = Date.UTC(2026, 11, 1, 12);
@@ -38,12 +38,18 @@ beforeAll(async () => {
   operator = await skyberth.people.operator();
   other = await skyberth.people.operator();
   whimbrel = await craft(operator, 'Whimbrel 1', 71_001, {}, 'S');
-  curlew = await craft(other, 'Curlew 1', 71_002, { nodeDeg: 120 }, 'S');
+  curlew = await craft(other, 'Curlew 1', 71_002, { raanDeg: 120 }, 'S');
 });
 afterAll(() => skyberth.stop());
 
-async function craft(as: Person, name: string, number: number, orbit: object, band: 'S' | 'X' | null): Promise<string> {
-  const text = elementText({ name, number, epochMs: EPOCH_MS, ...orbit });
+async function craft(
+  as: Person,
+  name: string,
+  number: number,
+  orbit: Partial<OrbitOptions>,
+  band: 'S' | 'X' | null,
+): Promise<string> {
+  const text = tleText({ name, catalogNumber: number, epochMs: EPOCH_MS, ...orbit });
   const saved = await must(skyberth.call(routes.saveElements, { body: { text }, as }));
   const id = saved.spacecraft[0]?.id ?? '';
   const radio = {
@@ -109,7 +115,7 @@ describe('a search', () => {
   it("finds exactly the engine's own passes", async () => {
     const { stationId } = await antenna();
     const { passes } = await search([stationId], { lowestElevationDeg: 0 });
-    const set = first(parseElementSets(elementText({ name: 'Whimbrel 1', number: 71_001, epochMs: EPOCH_MS })).sets);
+    const set = first(parseElementSets(tleText({ name: 'Whimbrel 1', catalogNumber: 71_001, epochMs: EPOCH_MS })).sets);
     const expected = findPasses({
       source: sgp4Source(set),
       site: STATION,
@@ -196,7 +202,7 @@ describe('a search', () => {
   });
 
   it('gives the band with both figures where the radio does not fit', async () => {
-    const gull = await craft(operator, 'Gull 1', 71_010, { nodeDeg: 200 }, 'X');
+    const gull = await craft(operator, 'Gull 1', 71_010, { raanDeg: 200 }, 'X');
     const { stationId } = await antenna({ bands: BANDS.filter((band) => band.band === 'S') });
     const { passes } = await search([stationId], { spacecraftIds: [gull] });
     expect(passes.length).toBeGreaterThan(0);
@@ -268,7 +274,7 @@ describe('a search', () => {
 
   it("shows the caller's own contact as theirs, and the spacecraft as busy elsewhere", async () => {
     const [here, there] = [await antenna(), await antenna()];
-    const plover = await craft(operator, 'Plover 1', 71_030, { nodeDeg: 280 }, 'S');
+    const plover = await craft(operator, 'Plover 1', 71_030, { raanDeg: 280 }, 'S');
     const spacecraftIds = [plover];
     const free = first(
       (await search([here.stationId], { spacecraftIds })).passes.filter((pass) => pass.state === 'for sale'),
@@ -303,7 +309,7 @@ describe('a search', () => {
 
   it('goes on with the others where the elements of one cannot be used', async () => {
     // Drag that no satellite survives for a day.
-    const doomed = await craft(operator, 'Doomed 1', 71_020, { drag: ' 99999+1', revolutionsPerDay: 16.3 }, 'S');
+    const doomed = await craft(operator, 'Doomed 1', 71_020, { bstar: '99999+1', meanMotionRevPerDay: 16.3 }, 'S');
     const { stationId } = await antenna();
     const both = await search([stationId], { spacecraftIds: [doomed, whimbrel] });
     const alone = await search([stationId]);

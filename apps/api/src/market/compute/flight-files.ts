@@ -40,7 +40,7 @@ function textOf(job: FileJob, span: ElementsSpan, source: TrajectorySource): str
     case 'ephemeris.oem':
       return ephemeris(job, span, source);
     case 'elements.omm':
-      return toOmmKvn(span.elementSet, { creationMs: job.createdMs, originator: job.operatorName });
+      return toOmmKvn(span.elementSet, { creationUtc: utc(job.createdMs), originator: job.operatorName });
   }
 }
 

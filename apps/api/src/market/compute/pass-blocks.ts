@@ -3,7 +3,7 @@
  * whatever was asked before or with it, so a repeated or shifted search pays only for what is new, and a hold recomputes to
  * the very millisecond what the search has shown.
  */
-import { findPasses, OrbitError, type Pass } from '@skyberth/orbit';
+import { OrbitError, type Pass, passAt, searchPassesColumns } from '@skyberth/orbit';
 import type { AntennaInput, ElementsSpan } from '../workers/job-types.js';
 import { antennaKey, type Horizons } from './horizons.js';
 import { joinDays, type Stay } from './stay.js';
@@ -80,32 +80,49 @@ export class PassBlocks {
 
   /** The blocks of one day for some of the antennas; missing ones are computed together. */
   private day(span: ElementsSpan, antennas: readonly Viewpoint[], only: readonly number[], day: number): Block[] {
-    return only.map((index) => {
-      const view = antennas[index] as Viewpoint;
-      const key = `${span.digest}|${antennaKey(view.antenna)}|${view.floorDeg}|${day}`;
-      const known = this.kept.get(key);
-      if (known !== undefined) return known;
-      const block = this.compute(span, view, day);
-      this.kept.set(key, block, BLOCK_WEIGHT + block.stays.length * STAY_WEIGHT);
-      return block;
+    const views = only.map((index) => antennas[index] as Viewpoint);
+    const keys = views.map((view) => `${span.digest}|${antennaKey(view.antenna)}|${view.floorDeg}|${day}`);
+    const blocks = keys.map((key) => this.kept.get(key));
+    const missing = blocks.flatMap((block, place) => (block === undefined ? [place] : []));
+    if (missing.length === 0) return blocks as Block[];
+    const made = this.compute(
+      span,
+      missing.map((place) => views[place] as Viewpoint),
+      day,
+    );
+    missing.forEach((place, index) => {
+      const block = made[index] as Block;
+      blocks[place] = block;
+      this.kept.set(keys[place] as string, block, BLOCK_WEIGHT + block.stays.length * STAY_WEIGHT);
     });
+    return blocks as Block[];
   }
 
-  private compute(span: ElementsSpan, { antenna, floorDeg }: Viewpoint, day: number): Block {
+  private compute(span: ElementsSpan, views: readonly Viewpoint[], day: number): Block[] {
+    const stays: Stay[][] = views.map(() => []);
+    let fault: string | null;
     try {
-      const passes = findPasses({
-        source: this.tables.source(span),
-        site: antenna.site,
-        mask: this.horizons.of(antenna).mask,
-        minElevationDeg: floorDeg,
+      const found = searchPassesColumns({
+        satellites: [this.tables.source(span)],
+        sites: views.map(({ antenna, floorDeg }) => ({
+          site: antenna.site,
+          mask: this.horizons.of(antenna).mask,
+          minElevationDeg: floorDeg,
+        })),
         fromMs: day * DAY_MS,
         toMs: (day + 1) * DAY_MS,
       });
-      return { stays: passes.map((pass) => stayOf(pass, span.elementSetId)), fault: null };
+      fault = found.faults[0]?.error.message ?? null;
+      for (const block of found.blocks) {
+        for (let row = 0; row < block.count; row += 1) {
+          stays[block.site[row] ?? 0]?.push(stayOf(passAt(block, row), span.elementSetId));
+        }
+      }
     } catch (error) {
       if (!(error instanceof OrbitError)) throw error;
-      return { stays: [], fault: error.message };
+      fault = error.message;
     }
+    return stays.map((each) => ({ stays: each, fault }));
   }
 
   private cutToPeriod(stay: Stay, { span, antennas, fromMs, toMs }: BlocksQuestion, index: number): Stay {

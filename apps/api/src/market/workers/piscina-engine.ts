@@ -1,6 +1,7 @@
 /**
  * The engine in worker threads. Each lane is a pool of one thread, so that whatever was computed for a spacecraft is
- * found again in the cache of the thread that computed it.
+ * found again in the cache of the thread that computed it. Threads run the built files, hence none of the flags by which the
+ * process itself may have been told to load sources.
  */
 import { existsSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
@@ -33,7 +34,7 @@ export class PiscinaEngine implements PassEngine {
     const filename = workerFile();
     this.pools = Array.from(
       { length: lanes },
-      () => new Piscina({ filename, minThreads: 1, maxThreads: 1, maxQueue: MAX_WAITING }),
+      () => new Piscina({ filename, minThreads: 1, maxThreads: 1, maxQueue: MAX_WAITING, execArgv: [] }),
     );
   }
 
