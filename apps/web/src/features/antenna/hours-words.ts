@@ -1,0 +1,72 @@
+/** Weekly opening hours as figures and words. */
+import type { WeeklyRule } from '@skyberth/shared';
+
+export const DAYS = ['Mon', 'Tue', 'Wed', 'Thu', 'Fri', 'Sat', 'Sun'] as const;
+export const DAY_MINUTES = 1440;
+export const WEEK_MINUTES = 7 * DAY_MINUTES;
+
+/** `08:30` in minutes; NaN for anything else. */
+export function minuteOf(timeOfDay: string): number {
+  const match = /^(\d{2}):(\d{2})$/.exec(timeOfDay);
+  return match ? Number(match[1]) * 60 + Number(match[2]) : Number.NaN;
+}
+
+/** Minutes from Monday 00:00 on the station's clock. */
+export interface WeekSpan {
+  readonly fromMin: number;
+  readonly toMin: number;
+}
+
+/** The spans of one rule; one that runs past Sunday midnight is cut in two. */
+export function spansOf({ days, fromLocal, toLocal }: WeeklyRule): WeekSpan[] {
+  const from = minuteOf(fromLocal);
+  const to = minuteOf(toLocal);
+  if (Number.isNaN(from) || Number.isNaN(to)) return [];
+  const length = to > from ? to - from : to + DAY_MINUTES - from;
+  return days.flatMap((day): WeekSpan[] => {
+    const fromMin = (day - 1) * DAY_MINUTES + from;
+    const toMin = fromMin + length;
+    if (toMin <= WEEK_MINUTES) return [{ fromMin, toMin }];
+    return [
+      { fromMin, toMin: WEEK_MINUTES },
+      { fromMin: 0, toMin: toMin - WEEK_MINUTES },
+    ];
+  });
+}
+
+/** All that the rules open in a week, merged and in order. */
+export function openSpans(rules: readonly WeeklyRule[]): WeekSpan[] {
+  const sorted = rules.flatMap(spansOf).sort((a, b) => a.fromMin - b.fromMin);
+  const merged: { fromMin: number; toMin: number }[] = [];
+  for (const span of sorted) {
+    const last = merged.at(-1);
+    if (last && span.fromMin <= last.toMin) last.toMin = Math.max(last.toMin, span.toMin);
+    else merged.push({ ...span });
+  }
+  return merged;
+}
+
+/** Hours open in a week without a clock change. */
+export const openHoursAWeek = (rules: readonly WeeklyRule[]): number =>
+  openSpans(rules).reduce((sum, span) => sum + span.toMin - span.fromMin, 0) / 60;
+
+/** `Mon to Fri, Sun` */
+export function daysText(days: readonly number[]): string {
+  const sorted = [...new Set(days)].sort((a, b) => a - b);
+  const runs: number[][] = [];
+  for (const day of sorted) {
+    const run = runs.at(-1);
+    if (run && run.at(-1) === day - 1) run.push(day);
+    else runs.push([day]);
+  }
+  const name = (day: number | undefined) => DAYS[(day ?? 1) - 1] ?? '';
+  return runs
+    .map((run) => (run.length > 2 ? `${name(run[0])} to ${name(run.at(-1))}` : run.map(name).join(', ')))
+    .join(', ');
+}
+
+/** Whether a time of day and weekday lies in hours that may run past midnight. */
+export function isWithin(rule: WeeklyRule, day: number, timeOfDay: string): boolean {
+  const at = (day - 1) * DAY_MINUTES + minuteOf(timeOfDay);
+  return spansOf(rule).some((span) => at >= span.fromMin && at < span.toMin);
+}

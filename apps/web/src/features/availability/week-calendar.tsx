@@ -1,0 +1,156 @@
+/** Mantine's week, fed with the station's wall times: open hours behind, blackouts and contacts in front. */
+import { modals } from '@mantine/modals';
+import { notifications } from '@mantine/notifications';
+import { type ScheduleEventData, WeekView } from '@mantine/schedule';
+import { type Antenna, type BookingSummary, routes } from '@skyberth/shared';
+import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useMemo } from 'react';
+import { useNavigate } from 'react-router-dom';
+import { call } from '../../lib/api-client.js';
+import { paths } from '../../lib/paths.js';
+import { sentenceOf } from '../../lib/problem-fields.js';
+import { serverNowMs } from '../../lib/server-clock.js';
+import { stationQueries } from '../../lib/station-queries.js';
+import { readWallText, wallText, wallTimeOf } from '../../lib/zone-time.js';
+import classes from './availability.module.css';
+import type { WallSpan } from './blackout-form.js';
+import { blackoutSpans, type CalendarSpan, contactSpans, openingSpans } from './calendar-events.js';
+
+interface WeekCalendarProps {
+  readonly antenna: Antenna;
+  readonly bookings: readonly BookingSummary[];
+  readonly timeZone: string;
+  readonly weekStartMs: number;
+  readonly mayWrite: boolean;
+  readonly onSelect: (span: WallSpan) => void;
+}
+
+/** A part that ends at midnight ends a second before it, or the calendar would count the next day too. */
+const lastMomentOf = (span: CalendarSpan): number =>
+  span.toWallMs % 86_400_000 === 0 ? span.toWallMs - 1000 : span.toWallMs;
+
+const eventOf = (span: CalendarSpan): ScheduleEventData => ({
+  id: span.id,
+  title: span.title,
+  start: wallText(span.fromWallMs),
+  end: wallText(lastMomentOf(span)),
+  color: 'deep',
+  ...(span.kind === 'open' ? { display: 'background' as const } : {}),
+  payload: { span },
+});
+
+const spanOf = (event: ScheduleEventData): CalendarSpan | undefined =>
+  event.payload?.['span'] as CalendarSpan | undefined;
+
+export function WeekCalendar(props: WeekCalendarProps) {
+  const { antenna, bookings, timeZone, weekStartMs, mayWrite, onSelect } = props;
+  const navigate = useNavigate();
+  const askOpen = useOpenAgain();
+  const events = useMemo(
+    () =>
+      [
+        ...openingSpans(antenna.availability, weekStartMs),
+        ...blackoutSpans(antenna.blackouts, timeZone, weekStartMs),
+        ...contactSpans(bookings, timeZone, weekStartMs),
+      ].map(eventOf),
+    [antenna, bookings, timeZone, weekStartMs],
+  );
+  const open = (event: ScheduleEventData) => {
+    const span = spanOf(event);
+    const id = span?.id.split(' ')[0] ?? '';
+    if (span?.kind === 'blackout') {
+      if (mayWrite) askOpen(id, span.title);
+    } else if (span) navigate(paths.booking(id));
+  };
+  return (
+    <div className={classes.week}>
+      <WeekView
+        date={wallText(weekStartMs)}
+        events={events}
+        withHeader={false}
+        withAllDaySlots={false}
+        withWeekNumber={false}
+        weekdayFormat="ddd D MMM"
+        slotLabelFormat="HH:mm"
+        slotHeight={44}
+        startScrollTime="06:00:00"
+        getCurrentTime={() => wallText(wallTimeOf(serverNowMs(), timeZone))}
+        withDragSlotSelect={mayWrite}
+        onSlotDragEnd={(from, to) => onSelect({ fromWallMs: readWallText(from), toWallMs: endOf(to) })}
+        onTimeSlotClick={({ slotStart, slotEnd }) =>
+          mayWrite && onSelect({ fromWallMs: readWallText(slotStart), toWallMs: endOf(slotEnd) })
+        }
+        onEventClick={open}
+        renderEvent={(event, { children, ...rest }) => (
+          <button {...rest} data-kind={spanOf(event)?.kind} aria-label={labelOf(event)}>
+            {children}
+          </button>
+        )}
+        renderEventBody={(event) => <EventBody event={event} />}
+        scrollAreaProps={{ mah: 620 }}
+        classNames={{ weekViewBackgroundEvent: classes.open ?? '' }}
+      />
+      <Legend />
+    </div>
+  );
+}
+
+/** The last slot of a day ends at 23:59:59. */
+const endOf = (text: string): number => Math.ceil(readWallText(text) / 60_000) * 60_000;
+
+const clock = (wallMs: number): string => wallText(wallMs).slice(11, 16);
+
+function labelOf(event: ScheduleEventData): string {
+  const span = spanOf(event);
+  if (!span) return event.title;
+  const kind = { open: 'Open', blackout: 'Blackout', contact: 'Contact', asked: 'Request' }[span.kind];
+  return `${kind} ${span.title}, ${wallText(span.fromWallMs).slice(0, 16)} to ${clock(span.toWallMs)}`;
+}
+
+function EventBody({ event }: { readonly event: ScheduleEventData }) {
+  const span = spanOf(event);
+  if (!span || span.kind === 'open') return null;
+  return (
+    <span className={classes.eventBody}>
+      <strong>{span.title}</strong> {clock(span.fromWallMs)}
+    </span>
+  );
+}
+
+function Legend() {
+  const items = [
+    ['open', 'Open hours'],
+    ['contact', 'Sold contact'],
+    ['asked', 'Waits for your answer'],
+    ['blackout', 'Blackout'],
+  ] as const;
+  return (
+    <ul className={classes.legend} aria-label="What the calendar shows">
+      {items.map(([kind, words]) => (
+        <li key={kind}>
+          <span data-kind={kind} aria-hidden="true" /> {words}
+        </li>
+      ))}
+    </ul>
+  );
+}
+
+/** Asks, then opens a blackout again. */
+function useOpenAgain(): (id: string, title: string) => void {
+  const client = useQueryClient();
+  const remove = useMutation({
+    mutationFn: (id: string) => call(routes.removeBlackout, { params: { id } }),
+    onSuccess: () => {
+      void client.invalidateQueries({ queryKey: stationQueries.all });
+      notifications.show({ message: 'That time is open again, within the weekly hours.' });
+    },
+    onError: (error) => notifications.show({ title: 'It stays closed', message: sentenceOf(error), color: 'buoy' }),
+  });
+  return (id, title) =>
+    modals.openConfirmModal({
+      title: `Open this time again? (${title})`,
+      children: 'The whole blackout goes, and operators can book the time at once, within the weekly hours.',
+      labels: { confirm: 'Open it again', cancel: 'Leave it closed' },
+      onConfirm: () => remove.mutate(id),
+    });
+}
