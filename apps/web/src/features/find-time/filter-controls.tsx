@@ -4,7 +4,7 @@ import { DateTimePicker } from '@mantine/dates';
 import { BANDS, type Need } from '@skyberth/shared';
 import { type FormEvent, useState } from 'react';
 import { readWallText, wallText } from '../../lib/zone-time.js';
-import { formatDuration } from '../../ui/format.js';
+import { hoursWords } from './filter-words.js';
 import type { Period, SearchFilter } from './search-filter.js';
 
 export interface ChoiceItem {
@@ -111,7 +111,7 @@ export function PeriodControl({ period, onChange }: { period: Period; onChange: 
       >
         <Group gap="sm" mt={4}>
           {PERIODS_H.map((hours) => (
-            <Radio key={hours} value={String(hours)} label={formatDuration(hours * 3_600_000)} />
+            <Radio key={hours} value={String(hours)} label={hoursWords(hours)} />
           ))}
         </Group>
       </Radio.Group>

@@ -37,9 +37,13 @@ export function needWords({ need, bands }: Pick<SearchFilter, 'need' | 'bands'>)
   return `${NEED_WORDS[need]} in ${list}`;
 }
 
+/** `24 h`, `7 d`: a day and a night are better counted in hours. */
+export const hoursWords = (hours: number): string =>
+  hours <= 48 ? `${hours}\u00a0h` : formatDuration(hours * 3_600_000);
+
 /** `in the next 24 h`, `from 2026-335 14:00 to 17:00` */
 export function periodWords(period: Period): { lead: string; value: string } {
-  if (period.kind === 'hours') return { lead: 'in', value: `the next ${formatDuration(period.hours * 3_600_000)}` };
+  if (period.kind === 'hours') return { lead: 'in', value: `the next ${hoursWords(period.hours)}` };
   const sameDay = formatDay(period.fromMs) === formatDay(period.toMs);
   const end = sameDay ? formatHourMinute(period.toMs) : `${formatDay(period.toMs)} ${formatHourMinute(period.toMs)}`;
   return { lead: 'from', value: `${formatDay(period.fromMs)} ${formatHourMinute(period.fromMs)} to ${end}` };

@@ -1,4 +1,3 @@
-import { Accordion } from '@mantine/core';
 import type { PassDetail } from '@skyberth/shared';
 import { useMemo } from 'react';
 import { SkyPlot } from '../../drawing/sky-plot/sky-plot.js';
@@ -84,15 +83,15 @@ export function PassFigures({ detail }: { readonly detail: PassDetail }) {
 function LinkFigures({ link, named }: { readonly link: PassDetail['links'][number]; readonly named: boolean }) {
   const margin = marginOf(link);
   const doppler = dopplerWords(link.dopplerHz);
-  const name = named ? `${link.radioName}, ` : '';
+  const words = (text: string) => (named ? `${link.radioName}: ${text}` : text);
   return (
     <>
-      {margin && <Figure label={`${name}margin, ${link.band} ${link.direction}`} value={margin} unit="dB" />}
+      {margin && <Figure label={words(`Margin, ${link.band} ${link.direction}`)} value={margin} unit="dB" />}
       {doppler && (
-        <Figure label={`${name}Doppler at ${formatNumber(link.frequencyMhz, 1)} MHz`} value={doppler} unit="kHz" />
+        <Figure label={words(`Doppler at ${formatNumber(link.frequencyMhz, 1)} MHz`)} value={doppler} unit="kHz" />
       )}
       {link.volumeBits !== null && (
-        <Figure label={`${name}data, about`} value={formatBytes(link.volumeBits / BITS_PER_BYTE)} />
+        <Figure label={words('Data volume, about')} value={formatBytes(link.volumeBits / BITS_PER_BYTE)} />
       )}
     </>
   );
@@ -102,30 +101,24 @@ function LinkFigures({ link, named }: { readonly link: PassDetail['links'][numbe
 function LinkBudgets({ links }: Pick<PassDetail, 'links'>) {
   const budgets = links.filter((link) => link.budgetAtHighest.length > 0);
   if (budgets.length === 0) return null;
-  return (
-    <Accordion variant="default" chevronPosition="left" className={classes.budget}>
-      {budgets.map((link) => (
-        <Accordion.Item key={`${link.radioName} ${link.direction}`} value={`${link.radioName} ${link.direction}`}>
-          <Accordion.Control>
-            Link budget at the highest point, {link.band} {link.direction}
-          </Accordion.Control>
-          <Accordion.Panel>
-            <table className={classes.sum}>
-              <tbody>
-                {link.budgetAtHighest.map((line) => (
-                  <tr key={line.label}>
-                    <th scope="row">
-                      {line.label} <small>{line.source}</small>
-                    </th>
-                    <td>{formatNumber(line.valueDb, 1)} dB</td>
-                  </tr>
-                ))}
-              </tbody>
-            </table>
-            {link.note && <p className={classes.small}>{link.note}</p>}
-          </Accordion.Panel>
-        </Accordion.Item>
-      ))}
-    </Accordion>
-  );
+  return budgets.map((link) => (
+    <details key={`${link.radioName} ${link.direction}`} className={classes.budget}>
+      <summary>
+        How the {link.band} {link.direction} margin at the highest point comes about
+      </summary>
+      <table className={classes.sum}>
+        <tbody>
+          {link.budgetAtHighest.map((line) => (
+            <tr key={line.label}>
+              <th scope="row">
+                {line.label} <small>{line.source}</small>
+              </th>
+              <td>{formatNumber(line.valueDb, 1)} dB</td>
+            </tr>
+          ))}
+        </tbody>
+      </table>
+      {link.note && <p className={classes.small}>{link.note}</p>}
+    </details>
+  ));
 }

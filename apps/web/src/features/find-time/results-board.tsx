@@ -9,9 +9,12 @@ import { PassReasons } from './pass-reasons.js';
 import type { ResultsProps } from './search-results.js';
 
 const WIDE_SPAN_MS = 4 * 3_600_000;
+/** A little of the past, so that 'now' and a contact under way do not stand on the edge. */
+const BEFORE_MS = 12 * 60_000;
 const PHONE_SPAN_MS = 85 * 60_000;
 
-export function ResultsBoard({ result, bookings, limits, filter, onChange }: ResultsProps) {
+export function ResultsBoard({ result, bookings, limits: asked, filter, onChange }: ResultsProps) {
+  const limits = useMemo(() => ({ fromMs: asked.fromMs - BEFORE_MS, toMs: asked.toMs }), [asked]);
   const nowMs = useNow();
   const isPhone = useIsPhone();
   const model = useMemo(() => boardModel(result, bookings), [result, bookings]);
