@@ -2,7 +2,8 @@
 import { temeToEcef } from '../frames/look-angles.js';
 import type { TrajectorySource } from '../types.js';
 import { INTERVAL_NUMBERS, POINTS, SAMPLES_AROUND, writeIntervalPowers } from './interpolation.js';
-import { type Pace, paceOf } from './pace.js';
+import { evenPace, type Pace, paceOf } from './pace.js';
+import { TurnTable } from './turn-table.js';
 
 /** Ten years of the lowest orbit; beyond it a request is a mistake and memory would go. */
 const MOST_SAMPLES = 2_000_000;
@@ -16,13 +17,16 @@ export class Ephemeris {
   readonly slow: boolean;
   /** x y z in km of every sample, Earth axes. */
   readonly positions: Float64Array;
-  /** The source's own velocity, seen from the turning Earth, km/s. It is not quite the derivative of the positions. */
   private readonly velocities: Float64Array;
   readonly powers: Float64Array;
-  readonly velocityPowers: Float64Array;
+  /**
+   * The source's own velocity, seen from the turning Earth, km/s, on slow orbits. SGP4's velocity is not quite the derivative
+   * of its position: 0.02 m/s in low orbit, where the derivative therefore stands for it, but 1 m/s on a long ellipse.
+   */
+  readonly velocityPowers: Float64Array | undefined;
   private readonly known: Uint8Array;
-  /** Between neighbouring samples. */
-  readonly longestStepKm: number;
+  /** How many samples a path surely needs to come from one direction to another. */
+  readonly turns: TurnTable;
   /** No component of the path leaves the chord between two samples by more. */
   readonly sagKm: number;
   readonly leastRadiusKm: number;
@@ -41,12 +45,12 @@ export class Ephemeris {
     this.velocities = samples.velocities;
     const count = samples.positions.length / 3;
     this.powers = new Float64Array(INTERVAL_NUMBERS * (count - 1));
-    this.velocityPowers = new Float64Array(INTERVAL_NUMBERS * (count - 1));
+    this.velocityPowers = pace.slow ? new Float64Array(INTERVAL_NUMBERS * (count - 1)) : undefined;
     this.known = new Uint8Array(count);
     this.startAt = Math.max(0, pace.sampleAt(fromMs) - samples.first);
     this.endAt = Math.min(count - 1, pace.sampleAt(toMs) - samples.first);
-    const { longestStepKm, sagKm, leastRadiusKm, greatestRadiusKm } = measure(samples.positions);
-    this.longestStepKm = longestStepKm;
+    const { longestStepRad, sagKm, leastRadiusKm, greatestRadiusKm } = measure(samples.positions);
+    this.turns = new TurnTable(longestStepRad, leastRadiusKm, greatestRadiusKm);
     this.sagKm = sagKm;
     this.leastRadiusKm = leastRadiusKm;
     this.greatestRadiusKm = greatestRadiusKm;
@@ -69,6 +73,11 @@ export class Ephemeris {
     return new Ephemeris(fromMs, toMs, samples.pace, samples);
   }
 
+  /** How long a sample lasts at a place: what turns a derivative by place into one by time. */
+  secondsPerSample(at: number): number {
+    return this.pace.msPerSample(at + this.firstSample) / 1000;
+  }
+
   /** UTC milliseconds of a place counted in samples. */
   timeMs(at: number): number {
     return this.pace.timeMs(at + this.firstSample);
@@ -78,7 +87,7 @@ export class Ephemeris {
   interval(index: number): number {
     if (this.known[index] === 0) {
       writeIntervalPowers(this.positions, index, this.powers);
-      writeIntervalPowers(this.velocities, index, this.velocityPowers);
+      if (this.velocityPowers) writeIntervalPowers(this.velocities, index, this.velocityPowers);
       this.known[index] = 1;
     }
     return INTERVAL_NUMBERS * index;
@@ -99,11 +108,16 @@ function withEnoughSamples(pace: Pace, fromMs: number, toMs: number): Pace {
   if (factor >= 1) return pace;
   if (!(factor > 0)) {
     const stepMs = Math.max(toMs - fromMs, 1_000) / (POINTS - 1);
-    return { slow: pace.slow, timeMs: (at) => fromMs + at * stepMs, sampleAt: (timeMs) => (timeMs - fromMs) / stepMs };
+    return evenPace(fromMs, stepMs, pace.slow);
   }
+  return scaled(pace, factor);
+}
+
+function scaled(pace: Pace, factor: number): Pace {
   return {
     slow: pace.slow,
     timeMs: (at) => pace.timeMs(at * factor),
+    msPerSample: (at) => pace.msPerSample(at * factor) * factor,
     sampleAt: (timeMs) => pace.sampleAt(timeMs) / factor,
   };
 }
@@ -127,11 +141,8 @@ function sampleWithin(question: { source: TrajectorySource; pace: Pace; fromMs: 
   const span = pace.sampleAt(toMs);
   const last = Math.max(POINTS - 1, Math.ceil(span));
   const factor = span / last;
-  const fitted: Pace = {
-    slow: pace.slow,
-    timeMs: (at) => Math.min(toMs, Math.max(fromMs, pace.timeMs(at * factor))),
-    sampleAt: (timeMs) => pace.sampleAt(timeMs) / factor,
-  };
+  const even = scaled(pace, factor);
+  const fitted: Pace = { ...even, timeMs: (at) => Math.min(toMs, Math.max(fromMs, even.timeMs(at))) };
   return sample(source, fitted, { first: 0, last });
 }
 
@@ -153,27 +164,31 @@ function sample(source: TrajectorySource, pace: Pace, { first, last }: { first: 
 }
 
 function measure(positions: Float64Array) {
-  let step2 = 0;
   let bend2 = 0;
   let least2 = Number.POSITIVE_INFINITY;
   let greatest2 = 0;
+  let leastCosine = 1;
+  let radiusBefore = 0;
   for (let at = 0; at < positions.length; at += 3) {
     const [x, y, z] = [positions[at]!, positions[at + 1]!, positions[at + 2]!];
     const radius2 = x * x + y * y + z * z;
+    const radius = Math.sqrt(radius2);
     least2 = Math.min(least2, radius2);
     greatest2 = Math.max(greatest2, radius2);
-    if (at < 3) continue;
-    const [bx, by, bz] = [x - positions[at - 3]!, y - positions[at - 2]!, z - positions[at - 1]!];
-    step2 = Math.max(step2, bx * bx + by * by + bz * bz);
+    if (at >= 3) {
+      const dot = x * positions[at - 3]! + y * positions[at - 2]! + z * positions[at - 1]!;
+      leastCosine = Math.min(leastCosine, dot / (radius * radiusBefore));
+    }
+    radiusBefore = radius;
     if (at < 6) continue;
-    const cx = bx - positions[at - 3]! + positions[at - 6]!;
-    const cy = by - positions[at - 2]! + positions[at - 5]!;
-    const cz = bz - positions[at - 1]! + positions[at - 4]!;
-    bend2 = Math.max(bend2, cx * cx + cy * cy + cz * cz);
+    const bx = x - 2 * positions[at - 3]! + positions[at - 6]!;
+    const by = y - 2 * positions[at - 2]! + positions[at - 5]!;
+    const bz = z - 2 * positions[at - 1]! + positions[at - 4]!;
+    bend2 = Math.max(bend2, bx * bx + by * by + bz * bz);
   }
   const sagKm = (CURVATURE_MARGIN * Math.sqrt(bend2)) / 8;
   return {
-    longestStepKm: Math.sqrt(step2),
+    longestStepRad: Math.acos(Math.max(-1, leastCosine)),
     sagKm,
     leastRadiusKm: Math.sqrt(least2) - sagKm,
     greatestRadiusKm: Math.sqrt(greatest2) + sagKm,

@@ -59,24 +59,25 @@ export class HorizonSearch implements Gate {
 
   run(): void {
     const { ephemeris, view } = this;
-    const { positions, longestStepKm, startAt, endAt } = ephemeris;
+    const { positions, turns, startAt, endAt } = ephemeris;
+    const { samplesFromZenith, lowestKm, binsPerKm } = turns;
     const { up } = view.frame;
     const [upX, upY, upZ] = up;
     const threshold = view.upOfSiteKm + leastHeightKm(view, ephemeris);
+    const near = turns.mostSamples(threshold);
     const last = Math.max(0, Math.ceil(endAt) - 1);
     let interval = Math.floor(startAt);
     while (interval <= last) {
       const at = 3 * interval;
-      const missing = threshold - (upX * positions[at]! + upY * positions[at + 1]! + upZ * positions[at + 2]!);
-      if (missing >= 0) {
-        // The height cannot grow by more than the longest step from one sample to the next.
-        const skip = Math.floor(missing / longestStepKm);
-        if (skip > 0) {
-          interval += skip;
+      const upKm = upX * positions[at]! + upY * positions[at + 1]! + upZ * positions[at + 2]!;
+      if (upKm <= threshold) {
+        const skip = samplesFromZenith[((upKm - lowestKm) * binsPerKm) | 0]! - near;
+        if (skip >= 1) {
+          interval += skip | 0;
           continue;
         }
-        const next = upX * positions[at + 3]! + upY * positions[at + 4]! + upZ * positions[at + 5]!;
-        if (next <= threshold) {
+        const nextKm = upX * positions[at + 3]! + upY * positions[at + 4]! + upZ * positions[at + 5]!;
+        if (nextKm <= threshold) {
           interval += 1;
           continue;
         }
@@ -201,8 +202,7 @@ export class HorizonSearch implements Gate {
     stay.clippedEnd = false;
     setPlace(stay.aos, interval, x);
     this.highestSin = Number.NEGATIVE_INFINITY;
-    this.path.evaluate(x);
-    this.offerHighest(x, this.path.sinElevation());
+    this.offerEnd(x);
   }
 
   close(x: number): void {
@@ -214,6 +214,11 @@ export class HorizonSearch implements Gate {
     this.isOpen = false;
     this.pending = true;
     setPlace(stay.los, interval, x);
+    this.offerEnd(x);
+  }
+
+  /** The ends of a stay may be its highest point, where a cliff or the period cuts it. */
+  private offerEnd(x: number): void {
     this.path.evaluate(x);
     this.offerHighest(x, this.path.sinElevation());
   }

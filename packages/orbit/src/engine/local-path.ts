@@ -6,8 +6,8 @@
 import type { Ephemeris } from './ephemeris.js';
 import type { SiteView } from './site-view.js';
 
-/** A hundred-millionth of an interval: 2 microseconds in low orbit. Newton's last step is the square of the one before. */
-const ENOUGH = 1e-8;
+/** In intervals. Newton's error after a step is about the step's square, so this leaves nanoseconds. */
+const ENOUGH = 1e-6;
 const MOST_ROUNDS = 60;
 /** Horizontal distance (km2) below which an azimuth is no longer asked for. */
 const AT_ZENITH_KM2 = 1e-12;
@@ -19,9 +19,6 @@ export class LocalPath {
   /** Square of the slant range, and half its derivative. */
   range2 = 0.5;
   rangeRangeRate = 0.5;
-  /** Filled by `evaluateCurvature` only: second derivatives of the height and of half the squared range. */
-  private heightBend = 0.5;
-  private rangeBend = 0.5;
   /** Filled by `evaluateBearing` only. Radians; azimuth -pi to pi. */
   azimuth = 0.5;
   azimuthRate = 0.5;
@@ -52,8 +49,9 @@ export class LocalPath {
     this.at = this.ephemeris.interval(interval);
   }
 
-  evaluate(x: number): void {
+  evaluate(place01: number): void {
     const c = this.powers;
+    const x = place01 - 0.5;
     let place = this.at + 21;
     let px = c[place]!;
     let py = c[place + 1]!;
@@ -93,7 +91,7 @@ export class LocalPath {
     return this.height / Math.sqrt(this.range2);
   }
 
-  /** Where the path crosses a cone of elevation between two places with different signs of `over`. Leaves the state there. */
+  /** Where the path crosses a cone of elevation between two places with different signs of `over`. */
   crossing(sinElevation: number, bracket: { x0: number; x1: number; over0: number; over1: number }): number {
     let { x0, x1 } = bracket;
     const rising = bracket.over1 > 0;
@@ -110,7 +108,6 @@ export class LocalPath {
       x = next;
       if (step < ENOUGH) break;
     }
-    this.evaluate(x);
     return x;
   }
 
@@ -134,19 +131,21 @@ export class LocalPath {
   }
 
   /** `evaluate`, and the derivative of `climb`. */
-  private evaluateCurvature(x: number): number {
-    this.evaluate(x);
+  private evaluateCurvature(place01: number): number {
     const c = this.powers;
+    const x = place01 - 0.5;
     let bx = 0;
     let by = 0;
     let bz = 0;
     let vx = 0;
     let vy = 0;
     let vz = 0;
-    let px = 0;
-    let py = 0;
-    let pz = 0;
-    for (let place = this.at + 21; place >= this.at; place -= 3) {
+    let place = this.at + 21;
+    let px = c[place]!;
+    let py = c[place + 1]!;
+    let pz = c[place + 2]!;
+    for (let power = 6; power >= 0; power -= 1) {
+      place -= 3;
       bx = bx * x + vx;
       by = by * x + vy;
       bz = bz * x + vz;
@@ -157,15 +156,26 @@ export class LocalPath {
       py = py * x + c[place + 1]!;
       pz = pz * x + c[place + 2]!;
     }
-    this.heightBend = 2 * (this.upX * bx + this.upY * by + this.upZ * bz);
-    const outward = (px - this.siteX) * bx + (py - this.siteY) * by + (pz - this.siteZ) * bz;
-    this.rangeBend = vx * vx + vy * vy + vz * vz + 2 * outward;
-    return this.heightBend * this.range2 + this.heightRate * this.rangeRangeRate - this.height * this.rangeBend;
+    px -= this.siteX;
+    py -= this.siteY;
+    pz -= this.siteZ;
+    const height = this.upX * px + this.upY * py + this.upZ * pz;
+    const heightRate = this.upX * vx + this.upY * vy + this.upZ * vz;
+    const range2 = px * px + py * py + pz * pz;
+    const rangeRangeRate = px * vx + py * vy + pz * vz;
+    this.height = height;
+    this.heightRate = heightRate;
+    this.range2 = range2;
+    this.rangeRangeRate = rangeRangeRate;
+    const heightBend = 2 * (this.upX * bx + this.upY * by + this.upZ * bz);
+    const rangeBend = vx * vx + vy * vy + vz * vz + 2 * (px * bx + py * by + pz * bz);
+    return heightBend * range2 + heightRate * rangeRangeRate - height * rangeBend;
   }
 
   /** Elevation and azimuth with their derivatives. */
-  evaluateBearing(x: number): void {
+  evaluateBearing(place01: number): void {
     const c = this.powers;
+    const x = place01 - 0.5;
     let px = 0;
     let py = 0;
     let pz = 0;

@@ -18,18 +18,20 @@ const FALLBACK_STEP_S = 30;
 
 /**
  * Step in radians of the fastest turning in the path as the Earth sees it. The remainder of eight-point interpolation is
- * about 0.001 (step)^8 of the orbit's size: 0.24 rad leaves 8 cm in low orbit, 0.2 rad is for the slow high ones, whose
+ * about 0.001 (step)^8 of the orbit's size: 0.26 rad leaves 16 cm in low orbit, 0.18 rad is for the slow high ones, whose
  * error in metres takes longer to pass a horizon.
  */
-const STEP_LOW_RAD = 0.24;
+const STEP_LOW_RAD = 0.26;
 const STEP_HIGH_RAD = 0.18;
 /** Rad/s; a period of 225 minutes, where SGP4 itself divides near from deep space. */
 const SLOW_MOTION = TURN / (225 * 60);
 
 export interface Pace {
-  /** Longest time between two samples. */
+  /** A period above 225 minutes. */
   readonly slow: boolean;
   timeMs(sample: number): number;
+  /** Derivative of `timeMs`. */
+  msPerSample(sample: number): number;
   /** The inverse, by Newton; samples count from 0 at the start of the period. */
   sampleAt(timeMs: number): number;
 }
@@ -60,10 +62,12 @@ function stepLimit(source: TrajectorySource, { eccentricity, motionRadPerS }: Os
   return Math.min(step, (longestS * motionRadPerS) / (1 + eccentricity));
 }
 
-function evenPace(fromMs: number, stepMs: number, slow: boolean): Pace {
+/** Equal steps in time. */
+export function evenPace(fromMs: number, stepMs: number, slow: boolean): Pace {
   return {
     slow,
     timeMs: (sample) => fromMs + sample * stepMs,
+    msPerSample: () => stepMs,
     sampleAt: (timeMs) => (timeMs - fromMs) / stepMs,
   };
 }
@@ -100,6 +104,10 @@ function ellipticPace({ source, fromMs, toMs, start, stepRad }: EllipticQuestion
   return {
     slow: start.motionRadPerS < SLOW_MOTION,
     timeMs: (sample) => fromMs + timeS(sample) * 1000,
+    msPerSample: (sample) => {
+      const stretched = 1 - e * Math.cos(startE + sample * stepRad);
+      return (1000 * stepRad * stretched) / (rate + change * timeS(sample));
+    },
     sampleAt: (timeMs) => {
       const seconds = (timeMs - fromMs) / 1000;
       const grown = (rate + 0.5 * change * seconds) * seconds;

@@ -148,7 +148,8 @@ function writeRow(ephemeris: Ephemeris, view: SiteView, stay: Stay, { sink, sate
 }
 
 function writePlace(ephemeris: Ephemeris, view: SiteView, place: PathPlace, out: PassColumns, index: number): void {
-  const { interval, x } = place;
+  const { interval } = place;
+  const x = place.x - 0.5;
   const { powers, velocityPowers } = ephemeris;
   const first = ephemeris.interval(interval);
   let px = 0;
@@ -158,12 +159,23 @@ function writePlace(ephemeris: Ephemeris, view: SiteView, place: PathPlace, out:
   let vy = 0;
   let vz = 0;
   for (let at = first + 21; at >= first; at -= 3) {
+    vx = vx * x + px;
+    vy = vy * x + py;
+    vz = vz * x + pz;
     px = px * x + powers[at]!;
     py = py * x + powers[at + 1]!;
     pz = pz * x + powers[at + 2]!;
-    vx = vx * x + velocityPowers[at]!;
-    vy = vy * x + velocityPowers[at + 1]!;
-    vz = vz * x + velocityPowers[at + 2]!;
+  }
+  let perSecond = 1;
+  if (velocityPowers) {
+    [vx, vy, vz] = [0, 0, 0];
+    for (let at = first + 21; at >= first; at -= 3) {
+      vx = vx * x + velocityPowers[at]!;
+      vy = vy * x + velocityPowers[at + 1]!;
+      vz = vz * x + velocityPowers[at + 2]!;
+    }
+  } else {
+    perSecond = 1 / ephemeris.secondsPerSample(interval + place.x);
   }
   const { positionKm, east, north, up } = view.frame;
   px -= positionKm[0];
@@ -174,9 +186,10 @@ function writePlace(ephemeris: Ephemeris, view: SiteView, place: PathPlace, out:
   const northKm = north[0] * px + north[1] * py + north[2] * pz;
   const upKm = up[0] * px + up[1] * py + up[2] * pz;
   const azimuthDeg = Math.atan2(eastKm, northKm) / DEG;
-  out.timeMs[index] = ephemeris.timeMs(interval + x);
+  out.timeMs[index] = ephemeris.timeMs(interval + place.x);
   out.azimuthDeg[index] = azimuthDeg < 0 ? azimuthDeg + 360 : azimuthDeg;
-  out.elevationDeg[index] = Math.atan2(upKm, Math.sqrt(eastKm * eastKm + northKm * northKm)) / DEG;
+  // Near the zenith the arc sine is good to a millionth of a degree, more than the column holds.
+  out.elevationDeg[index] = Math.asin(Math.min(1, upKm / rangeKm)) / DEG;
   out.rangeKm[index] = rangeKm;
-  out.rangeRateKmPerS[index] = (px * vx + py * vy + pz * vz) / rangeKm;
+  out.rangeRateKmPerS[index] = ((px * vx + py * vy + pz * vz) / rangeKm) * perSecond;
 }
