@@ -1,5 +1,5 @@
 /** Small pieces of text that carry a unit, so that no page writes one by hand. */
-import type { ReactNode } from 'react';
+import type { CSSProperties, ReactNode } from 'react';
 import { type Amount, formatDegrees, formatDuration, formatMoney } from './format.js';
 import classes from './values.module.css';
 
@@ -72,7 +72,8 @@ export function Figures({
     <dl
       className={classes.figures}
       data-ruled={ruled || undefined}
-      style={{ gridTemplateColumns: `repeat(${columns}, minmax(0, 1fr))` }}
+      data-many={columns > 2 || undefined}
+      style={{ '--sk-columns': columns } as CSSProperties}
     >
       {children}
     </dl>
