@@ -1,7 +1,6 @@
 /** Where spacecraft are, when a station sees them, and what the link between them carries. */
 
 export * from './elements/age-error.js';
-export * from './elements/age-error.js';
 export * from './elements/digest.js';
 export * from './elements/element-set.js';
 export * from './elements/parse-element-sets.js';
