@@ -24,3 +24,12 @@ export const bookingQueries = {
       staleTime: 5 * 60_000,
     }),
 };
+
+export const paymentQueries = {
+  cards: () =>
+    queryOptions({
+      queryKey: ['payments', 'cards'],
+      queryFn: ({ signal }) => call(routes.savedCards, { signal }),
+      staleTime: 60_000,
+    }),
+};
