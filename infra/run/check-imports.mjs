@@ -19,7 +19,7 @@ const MAY_IMPORT = {
   'infra/payments': [],
   'infra/mail': [],
   'infra/elements': [],
-  'infra/demo': ['shared', 'api', 'payments-standin', 'mail-standin'],
+  'infra/demo': ['shared', 'drizzle', 'api', 'payments-standin', 'mail-standin'],
 };
 const TOP = new Set(['apps', 'packages', 'drizzle', 'shared', 'tests', 'infra', 'node_modules', 'var']);
 const IMPURE = [/\bDate\.now\(/, /\bnew Date\(\)/, /\bMath\.random\(/, /\bprocess\./, /\bfetch\(/];

@@ -7,3 +7,4 @@ export { OutboxRunner } from './outbox/outbox.runner.js';
 export { PaymentRepository } from './payments/payments.repository.js';
 export { AdjustableClock, type ClockPort, systemClock } from './platform/clock.js';
 export { type Config, readConfig } from './platform/config.js';
+export { DATABASE } from './platform/database.module.js';

@@ -2,9 +2,11 @@
  * Writes text in Manrope on a PDF page. The font comes in pieces by script, so a line is cut into runs, each in the first
  * piece that has its letters. Letters that no piece has become a question mark instead of an empty box.
  */
+import { readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import * as fontkit from 'fontkit';
 import PDFDocument from 'pdfkit';
+import { sfntOf } from './woff.js';
 
 const SCRIPTS = ['latin', 'latin-ext', 'cyrillic', 'greek', 'vietnamese'] as const;
 type Script = (typeof SCRIPTS)[number];
@@ -14,15 +16,24 @@ const require = createRequire(import.meta.url);
 const fileOf = (script: Script, weight: Weight): string =>
   require.resolve(`@fontsource/manrope/files/manrope-${script}-${weight}-normal.woff`);
 
+/** Each piece, unpacked when it is first needed and kept: inflating it anew cost most of the time of a page. */
+const unpacked = new Map<string, Buffer>();
+function fontOf(script: Script, weight: Weight): Buffer {
+  const key = `${script}-${weight}`;
+  const font = unpacked.get(key) ?? sfntOf(readFileSync(fileOf(script, weight)));
+  unpacked.set(key, font);
+  return font;
+}
+
 /** Which letters each piece has; read once, on the first page that is written. */
 let coverage: Map<Script, ReadonlySet<number>> | undefined;
 function letters(): Map<Script, ReadonlySet<number>> {
-  coverage ??= new Map(SCRIPTS.map((script) => [script, lettersOf(fileOf(script, 400))]));
+  coverage ??= new Map(SCRIPTS.map((script) => [script, lettersOf(fontOf(script, 400))]));
   return coverage;
 }
 
-function lettersOf(file: string): ReadonlySet<number> {
-  const font = fontkit.openSync(file);
+function lettersOf(file: Buffer): ReadonlySet<number> {
+  const font = fontkit.create(file);
   return new Set('characterSet' in font ? font.characterSet : []);
 }
 
@@ -69,7 +80,7 @@ export class PdfPen {
       info: { Title: facts.title, Author: facts.author, Creator: 'Skyberth', Producer: 'Skyberth', CreationDate },
     });
     for (const script of SCRIPTS) {
-      for (const weight of [400, 600] as const) this.doc.registerFont(`${script}-${weight}`, fileOf(script, weight));
+      for (const weight of [400, 600] as const) this.doc.registerFont(`${script}-${weight}`, fontOf(script, weight));
     }
   }
 

@@ -1,6 +1,7 @@
 /** The stage of the play: the real server and the local stand-ins in this process, on a clock that the play moves. */
 import { setTimeout as pause } from 'node:timers/promises';
-import { AdjustableClock, createApp, JobsService, OutboxRunner, readConfig } from '@skyberth/api';
+import { AdjustableClock, createApp, DATABASE, JobsService, OutboxRunner, readConfig } from '@skyberth/api';
+import type { SkyberthDatabase } from '@skyberth/drizzle';
 import { start as startMail } from '@skyberth/mail-standin';
 import { start as startPayments } from '@skyberth/payments-standin';
 import { type Call, clientOf } from './client.js';
@@ -50,6 +51,8 @@ export class Stage {
       SKYBERTH_FINANCE_EMAIL: STAFF.finance,
     });
     const app = await createApp(config, { clock, quiet: true });
+    // A load that is interrupted begins again from nothing, so nothing has to survive a power cut yet.
+    app.get<SkyberthDatabase>(DATABASE, { strict: false }).$client.pragma('synchronous = OFF');
     await app.listen(config.port, config.host);
     return new Stage(
       clientOf(`http://${config.host}:${config.port}`),
