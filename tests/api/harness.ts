@@ -63,6 +63,8 @@ export async function startSkyberth(options: Options = {}): Promise<Skyberth> {
   const clock = new AdjustableClock();
   const app = await createApp(config, { clock, quiet: true });
   await app.listen(0, '127.0.0.1');
+  // A busy test leaves connections idle for longer than the usual five seconds, and then uses them again.
+  app.getHttpServer().keepAliveTimeout = 60_000;
   const url = `http://127.0.0.1:${(app.getHttpServer().address() as AddressInfo).port}`;
   const client = new Client(url);
   const drain = () => app.get(OutboxRunner, { strict: false }).drain();
