@@ -91,8 +91,8 @@ describe('a spacecraft', () => {
     const retire = () => skyberth.call(routes.retireSpacecraft, { params: { id }, as: operator });
     expect((await retire()).problem).toMatchObject({ code: 'wrong-state' });
     skyberth.clock.advance(2 * HOUR_MS);
+    operator = await skyberth.people.awake(operator);
     expect((await must(retire())).state).toBe('retired');
-    await must(skyberth.call(routes.refresh, { as: operator }));
     const listed = async (state: 'active' | 'retired' | 'all') =>
       (await must(skyberth.call(routes.listSpacecraft, { query: { state }, as: operator }))).items.map(
         (item) => item.id,
@@ -152,7 +152,7 @@ describe('element sets', () => {
     const young = await must(get(id));
     expect(young.freshness).toBe('fresh');
     skyberth.clock.advance(40 * DAY_MS);
-    operator = await skyberth.people.signIn(operator.email);
+    operator = await skyberth.people.awake(operator);
     const old = await must(get(id));
     expect(old.freshness).toBe('stale');
     expect(old.elements?.timingErrorS).toBeGreaterThan(young.elements?.timingErrorS ?? Number.POSITIVE_INFINITY);
