@@ -32,6 +32,9 @@ export type Radio = z.infer<typeof Radio>;
 export const ElementFreshness = z.enum(['none', 'fresh', 'ageing', 'stale']);
 export type ElementFreshness = z.infer<typeof ElementFreshness>;
 
+/** The estimated errors of AOS and LOS, in seconds, from which elements are ageing and stale. Common practice, no source. */
+export const FRESHNESS_FROM_S = { ageing: 1, stale: 10 } as const;
+
 export const ElementSummary = z.object({
   id: Id,
   epochUtc: UtcTime,

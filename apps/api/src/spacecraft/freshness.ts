@@ -1,12 +1,7 @@
 /** How far elements can still be trusted, from the estimated error that their age brings. */
 
 import { elementAgeErrorS } from '@skyberth/orbit';
-import type { ElementFreshness } from '@skyberth/shared';
-
-/** AOS may be off by a second: worth a look. */
-const AGEING_FROM_S = 1;
-/** AOS may be off by ten seconds: buying asks whether that is known. */
-const STALE_FROM_S = 10;
+import { type ElementFreshness, FRESHNESS_FROM_S } from '@skyberth/shared';
 
 export interface Freshness {
   readonly freshness: Exclude<ElementFreshness, 'none'>;
@@ -22,6 +17,7 @@ const HOUR_MS = 3_600_000;
 export function freshnessOf(epochMs: number, meanMotionRevPerDay: number, atMs: number): Freshness {
   const ageH = (atMs - epochMs) / HOUR_MS;
   const timingErrorS = elementAgeErrorS({ ageH: Math.abs(ageH), meanMotionRevPerDay });
-  const freshness = timingErrorS < AGEING_FROM_S ? 'fresh' : timingErrorS < STALE_FROM_S ? 'ageing' : 'stale';
+  const freshness =
+    timingErrorS < FRESHNESS_FROM_S.ageing ? 'fresh' : timingErrorS < FRESHNESS_FROM_S.stale ? 'ageing' : 'stale';
   return { freshness, ageH, timingErrorS };
 }

@@ -1,15 +1,15 @@
 import { routes } from '@skyberth/shared';
-import { queryOptions } from '@tanstack/react-query';
+import { keepPreviousData, queryOptions } from '@tanstack/react-query';
 import { call } from '../../lib/api-client.js';
 
-export const INVOICES_PER_PAGE = 50;
+export const PAGE_SIZE = 25;
 
 export const invoiceQueries = {
-  all: ['invoices'] as const,
   list: (page: number) =>
     queryOptions({
       queryKey: ['invoices', 'list', page],
-      queryFn: ({ signal }) => call(routes.listInvoices, { query: { page, pageSize: INVOICES_PER_PAGE }, signal }),
+      queryFn: ({ signal }) => call(routes.listInvoices, { query: { page, pageSize: PAGE_SIZE }, signal }),
+      placeholderData: keepPreviousData,
     }),
   one: (id: string) =>
     queryOptions({

@@ -208,8 +208,7 @@ function DropArea({ onFile, children }: DropAreaProps) {
   const [isOver, setOver] = useState(false);
   const hasFile = (event: DragEvent) => event.dataTransfer.types.includes('Files');
   return (
-    <div
-      role="group"
+    <fieldset
       aria-label="Element sets; a file may be dropped here"
       className={classes.drop}
       data-over={isOver || undefined}
@@ -227,6 +226,6 @@ function DropArea({ onFile, children }: DropAreaProps) {
       }}
     >
       {children}
-    </div>
+    </fieldset>
   );
 }

@@ -10,6 +10,7 @@ import { formatNumber } from '../../ui/format.js';
 import { Degrees, Duration, Figure, Figures } from '../../ui/values.js';
 import { ageWords, errorWords, formatWords, heightWords, periodMs, trustWords } from './element-words.js';
 import classes from './spacecraft.module.css';
+import { TrustDrawing } from './trust-drawing.js';
 
 interface ElementsInForceProps {
   readonly craft: Spacecraft;
@@ -35,6 +36,7 @@ export function ElementsInForce({ craft, mayWrite }: ElementsInForceProps) {
             </p>
           )}
           <InForce elements={craft.elements} />
+          {craft.state === 'active' && <TrustDrawing elements={craft.elements} />}
         </>
       ) : (
         <Paper withBorder>
