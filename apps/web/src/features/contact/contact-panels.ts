@@ -92,6 +92,7 @@ function linkPanels(axis: Axis, link: PassDetail['links'][number]): CurvePanel[]
       note: `dB left over, ${link.band} ${link.direction}`,
       unit: 'dB',
       values: sample(axis, (atMs) => valueAt(axis.track, link.marginDb, atMs)),
+      minValue: Math.min(0, ...link.marginDb.filter(Number.isFinite).map(Math.floor)),
       floor: { value: THIN_MARGIN_DB, text: `below ${THIN_MARGIN_DB} dB, frames may be lost` },
       heightPx: 92,
     });

@@ -1,6 +1,7 @@
 import type { Booking, PassDetail } from '@skyberth/shared';
 import { useNow } from '../../lib/use-now.js';
 import { DayTime } from '../../ui/day-time.js';
+import { formatDay } from '../../ui/format.js';
 import classes from './contact.module.css';
 import { inOrder, type OrderEntry } from './in-order.js';
 
@@ -12,18 +13,18 @@ const KIND_WORDS: Readonly<Record<OrderEntry['kind'], string>> = {
 
 /** Predicted, reported and now on one line of time; what is to come is dashed. */
 export function InOrderList({ booking, detail }: { booking: Booking; detail: PassDetail | undefined }) {
-  const nowMs = useNow();
+  const entries = inOrder(booking, detail, useNow());
   return (
     <section aria-labelledby="in-order-title">
       <h2 id="in-order-title" className={classes.heading}>
         In order
       </h2>
       <ol className={classes.order}>
-        {inOrder(booking, detail, nowMs).map((entry) => (
+        {entries.map((entry, index) => (
           <li key={entry.id} data-kind={entry.kind} data-to-come={entry.isToCome || undefined}>
             <span className={classes.orderTime}>
               <DayTime atMs={entry.atMs} show="time" />
-              <DayTime atMs={entry.atMs} show="day" />
+              {dayOf(entry) !== dayOf(entries[index - 1]) && <DayTime atMs={entry.atMs} show="day" />}
             </span>
             <OrderSign kind={entry.kind} />
             <span>
@@ -37,6 +38,8 @@ export function InOrderList({ booking, detail }: { booking: Booking; detail: Pas
     </section>
   );
 }
+
+const dayOf = (entry: OrderEntry | undefined): string => (entry ? formatDay(entry.atMs) : '');
 
 function OrderSign({ kind }: { readonly kind: OrderEntry['kind'] }) {
   return (
