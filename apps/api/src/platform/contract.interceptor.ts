@@ -1,5 +1,11 @@
 /** Validates what comes in and what goes out against the contract, and answers a repeated write as the first time. */
-import { type CallHandler, type ExecutionContext, Injectable, type NestInterceptor, StreamableFile } from '@nestjs/common';
+import {
+  type CallHandler,
+  type ExecutionContext,
+  Injectable,
+  type NestInterceptor,
+  StreamableFile,
+} from '@nestjs/common';
 import { Reflector } from '@nestjs/core';
 import { IDEMPOTENCY_HEADER, needsIdempotencyKey, type RouteContract } from '@skyberth/shared';
 import type { Response } from 'express';
