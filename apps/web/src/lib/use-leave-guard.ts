@@ -1,6 +1,6 @@
 /** Nothing that was typed is lost by a click elsewhere: the page asks first. */
 import { modals } from '@mantine/modals';
-import { useEffect } from 'react';
+import { useEffect, useRef } from 'react';
 import { useBlocker } from 'react-router-dom';
 
 /**
@@ -20,8 +20,13 @@ export function useLeaveGuard(isDirty: boolean, what: string, alsoSearch = false
     window.addEventListener('beforeunload', ask);
     return () => window.removeEventListener('beforeunload', ask);
   }, [isDirty]);
+  // The dialog outlives renders, so it answers for the blocker of the moment, and is opened once.
+  const latest = useRef(blocker);
+  const isAsking = useRef(false);
   useEffect(() => {
-    if (blocker.state !== 'blocked') return;
+    latest.current = blocker;
+    if (blocker.state !== 'blocked' || isAsking.current) return;
+    isAsking.current = true;
     let isLeaving = false;
     modals.openConfirmModal({
       title: `Leave without saving ${what}?`,
@@ -30,11 +35,13 @@ export function useLeaveGuard(isDirty: boolean, what: string, alsoSearch = false
       confirmProps: { color: 'buoy', variant: 'outline' },
       onConfirm: () => {
         isLeaving = true;
-        blocker.proceed();
+        isAsking.current = false;
+        latest.current.proceed?.();
       },
       // The dialog also closes after its answer, by Escape and by its cross.
       onClose: () => {
-        if (!isLeaving) blocker.reset();
+        isAsking.current = false;
+        if (!isLeaving) latest.current.reset?.();
       },
     });
   }, [blocker, what]);

@@ -140,7 +140,9 @@ export const theme = createTheme({
     Tabs: Tabs.extend({ classNames: { list: parts.tabs ?? '', tab: parts.tab ?? '' } }),
     Badge: Badge.extend({ classNames: { root: parts.badge ?? '' }, defaultProps: { radius: 'sm' } }),
     Paper: Paper.extend({ classNames: { root: parts.paper ?? '' }, defaultProps: { radius: 'lg' } }),
-    Modal: Modal.extend({ classNames: { title: parts.modalTitle ?? '', content: parts.paper ?? '' } }),
+    Modal: Modal.extend({
+      classNames: { title: parts.modalTitle ?? '', content: parts.paper ?? '', header: parts.paper ?? '' },
+    }),
     Menu: Menu.extend({
       classNames: { dropdown: parts.dropdown ?? '', item: parts.menuItem ?? '', label: parts.note ?? '' },
     }),

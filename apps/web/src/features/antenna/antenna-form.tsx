@@ -133,7 +133,7 @@ function BookingFields({ field, values, readOnly }: BookingFieldsProps) {
       <legend>Booking rules</legend>
       <NumberInput
         label="Least notice"
-        description={lengthOf(values.minNoticeMin, 60_000)}
+        {...(Number(values.minNoticeMin) >= 60 ? { description: lengthOf(values.minNoticeMin, 60_000) } : {})}
         suffix=" min"
         required
         {...field('minNoticeMin')}

@@ -111,7 +111,7 @@ export function BandForm({ band, onKeep }: BandFormProps) {
           <Chip.Group multiple {...form.getInputProps('polarisations')}>
             <Group gap={8} role="group" aria-labelledby="polarisation-label">
               {POLARISATIONS.map((one) => (
-                <Chip key={one} value={one} size="sm" radius="sm">
+                <Chip key={one} value={one} size="sm" radius="sm" variant="outline">
                   {one}
                 </Chip>
               ))}

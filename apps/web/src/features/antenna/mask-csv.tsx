@@ -72,10 +72,7 @@ function CsvDesk({ points, antennaName, mayWrite, onRead, onDone }: MaskCsvProps
       {faults.length > 0 && (
         <ProblemNotice
           title={`${faults.length} ${faults.length === 1 ? 'line' : 'lines'} cannot be used`}
-          items={faults.map((fault) => ({
-            where: `Line ${fault.line}`,
-            message: `${fault.message} Found: ${fault.found}`,
-          }))}
+          items={faults.map(({ message }) => ({ message }))}
         >
           Mend them above and read again{good.length > 0 && `, or take the ${good.length} good ones`}.
         </ProblemNotice>

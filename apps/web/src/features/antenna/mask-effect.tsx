@@ -105,11 +105,15 @@ function Touched({ before, now, sold }: Pick<MaskEffectProps, 'before' | 'now' |
   );
 }
 
-function touchWords({ startsLaterMs, endsSoonerMs, isLost }: MaskTouch): string {
+/** Less would be written as 0 s. */
+const LEAST_MS = 500;
+
+function touchWords({ startsLaterMs, endsSoonerMs, cutOutMs, isLost }: MaskTouch): string {
   if (isLost) return 'falls below the mask';
   const words = [
-    startsLaterMs > 0 ? `starts ${formatDuration(startsLaterMs)} later` : '',
-    endsSoonerMs > 0 ? `ends ${formatDuration(endsSoonerMs)} sooner` : '',
+    startsLaterMs > LEAST_MS ? `starts ${formatDuration(startsLaterMs)} later` : '',
+    cutOutMs > LEAST_MS ? `loses ${formatDuration(cutOutMs)} between` : '',
+    endsSoonerMs > LEAST_MS ? `ends ${formatDuration(endsSoonerMs)} sooner` : '',
   ];
   return words.filter(Boolean).join(', ');
 }

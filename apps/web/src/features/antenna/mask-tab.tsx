@@ -68,7 +68,7 @@ export function MaskTab({ antenna, mayWrite }: TabProps) {
         <p className={classes.caption}>
           {minutes
             ? `Outer bars: minutes of the next ${tracks.length} sold contacts above the mask, in each 10° of azimuth.`
-            : mayWrite && 'Drag a point; double-click adds one. With keys: arrows move by 0.1°, with Shift by 1°.'}
+            : mayWrite && 'Drag a point, double-click to add one, or use arrow keys for 0.1°.'}
         </p>
       </div>
       <MaskTable

@@ -27,7 +27,38 @@ describe('sold contacts under a new mask', () => {
 
   it('says how much falls away at each end, straight between the instants', () => {
     // 6 degrees a minute: 11 degrees is reached 110 s after the start, 60 s after AOS.
-    expect(touchOf(sold, flat(5), flat(11))).toEqual({ startsLaterMs: 60_000, endsSoonerMs: 60_000, isLost: false });
+    expect(touchOf(sold, flat(5), flat(11))).toEqual({
+      startsLaterMs: 60_000,
+      endsSoonerMs: 60_000,
+      cutOutMs: 0,
+      isLost: false,
+    });
+  });
+
+  it('sees a mast that cuts a piece out of the middle', () => {
+    const mast = pointsOf([
+      [0, 5],
+      [90, 5],
+      [90, 25],
+      [100, 25],
+      [100, 5],
+    ]);
+    // East of it the climb is clear from 25 degrees on; what was above 5 before that is lost at the beginning.
+    const touch = touchOf(sold, flat(5), mast);
+    expect(touch?.startsLaterMs).toBe(200_000);
+    const low = touchOf(
+      { ...sold, track: sold.track.map((p, i) => ({ ...p, azimuthDeg: i === 5 ? 270 : p.azimuthDeg })) },
+      flat(5),
+      pointsOf([
+        [0, 5],
+        [260, 5],
+        [265, 40],
+        [275, 40],
+        [280, 5],
+      ]),
+    );
+    expect(low?.startsLaterMs).toBe(0);
+    expect(low?.cutOutMs).toBeGreaterThan(30_000);
   });
 
   it('is lost where nothing stays above it', () => {

@@ -14,6 +14,8 @@ export interface MaskTouch {
   /** Time at the beginning that falls below the new mask. */
   readonly startsLaterMs: number;
   readonly endsSoonerMs: number;
+  /** Time between its ends that falls below the new mask. */
+  readonly cutOutMs: number;
   /** Nothing of it is left above the new mask. */
   readonly isLost: boolean;
 }
@@ -21,32 +23,30 @@ export interface MaskTouch {
 interface Span {
   readonly fromMs: number;
   readonly toMs: number;
+  /** Time above the mask within it. */
+  readonly aboveMs: number;
 }
 
-/** First and last moment above the mask within the sold time, straight between the instants of the track. */
+/** What of the sold time lies above the mask, straight between the instants of the track. */
 function visibleSpan({ track, aosUtc, losUtc }: SoldTrack, mask: readonly EditableMaskPoint[]): Span | null {
   const [aosMs, losMs] = [Date.parse(aosUtc), Date.parse(losUtc)];
   const heights = track.map((place) => ({
     atMs: Date.parse(place.timeUtc),
     overDeg: place.elevationDeg - maskElevationAt(mask, place.azimuthDeg),
   }));
-  let fromMs = Number.POSITIVE_INFINITY;
-  let toMs = Number.NEGATIVE_INFINITY;
-  heights.forEach((here, index) => {
-    const before = heights[index - 1];
-    if (before && before.overDeg >= 0 !== here.overDeg >= 0) {
-      const share = before.overDeg / (before.overDeg - here.overDeg);
-      const crossingMs = before.atMs + share * (here.atMs - before.atMs);
-      fromMs = Math.min(fromMs, crossingMs);
-      toMs = Math.max(toMs, crossingMs);
-    }
-    if (here.overDeg >= 0) {
-      fromMs = Math.min(fromMs, here.atMs);
-      toMs = Math.max(toMs, here.atMs);
-    }
+  let [firstMs, lastMs, aboveMs] = [losMs, aosMs, 0];
+  heights.forEach((to, index) => {
+    const from = heights[index - 1];
+    if (!from || (from.overDeg < 0 && to.overDeg < 0)) return;
+    const crossingMs = from.atMs + (from.overDeg / (from.overDeg - to.overDeg)) * (to.atMs - from.atMs);
+    const startMs = Math.max(aosMs, from.overDeg < 0 ? crossingMs : from.atMs);
+    const endMs = Math.min(losMs, to.overDeg < 0 ? crossingMs : to.atMs);
+    if (endMs <= startMs) return;
+    firstMs = Math.min(firstMs, startMs);
+    lastMs = Math.max(lastMs, endMs);
+    aboveMs += endMs - startMs;
   });
-  const span = { fromMs: Math.max(fromMs, aosMs), toMs: Math.min(toMs, losMs) };
-  return span.toMs > span.fromMs ? span : null;
+  return aboveMs > 0 ? { fromMs: firstMs, toMs: lastMs, aboveMs } : null;
 }
 
 /** How the sold time shrinks from the mask in force to the new one; null where it does not. */
@@ -58,10 +58,12 @@ export function touchOf(
   const old = visibleSpan(sold, before);
   if (!old) return null;
   const left = visibleSpan(sold, now);
-  if (!left) return { startsLaterMs: 0, endsSoonerMs: 0, isLost: true };
+  if (!left) return { startsLaterMs: 0, endsSoonerMs: 0, cutOutMs: 0, isLost: true };
   const startsLaterMs = Math.max(0, left.fromMs - old.fromMs);
   const endsSoonerMs = Math.max(0, old.toMs - left.toMs);
-  return startsLaterMs > SAME_MS || endsSoonerMs > SAME_MS ? { startsLaterMs, endsSoonerMs, isLost: false } : null;
+  const cutOutMs = Math.max(0, old.aboveMs - left.aboveMs - startsLaterMs - endsSoonerMs);
+  const isTouched = [startsLaterMs, endsSoonerMs, cutOutMs].some((lostMs) => lostMs > SAME_MS);
+  return isTouched ? { startsLaterMs, endsSoonerMs, cutOutMs, isLost: false } : null;
 }
 
 /** Minutes of the sold contacts above each mask in every 10 degrees of azimuth, for the bars outside the rose. */

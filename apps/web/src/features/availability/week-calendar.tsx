@@ -1,10 +1,11 @@
 /** Mantine's week, fed with the station's wall times: open hours behind, blackouts and contacts in front. */
+import { Box, UnstyledButton } from '@mantine/core';
 import { modals } from '@mantine/modals';
 import { notifications } from '@mantine/notifications';
 import { type ScheduleEventData, WeekView } from '@mantine/schedule';
 import { type Antenna, type BookingSummary, routes } from '@skyberth/shared';
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useMemo } from 'react';
+import { type ComponentPropsWithoutRef, useEffect, useMemo, useRef } from 'react';
 import { useNavigate } from 'react-router-dom';
 import { call } from '../../lib/api-client.js';
 import { paths } from '../../lib/paths.js';
@@ -25,9 +26,15 @@ interface WeekCalendarProps {
   readonly onSelect: (span: WallSpan) => void;
 }
 
-/** A part that ends at midnight ends a second before it, or the calendar would count the next day too. */
+/** A pass of eight minutes must still be a thing one can hit. */
+const SLOT_PX = 96;
+/** Where the day begins to be looked at when it is not today. */
+const MORNING_HOUR = 7;
+const HOUR_MS = 3_600_000;
+
+/** A part that ends at midnight ends a minute before it: a whole day would move into a row of its own. */
 const lastMomentOf = (span: CalendarSpan): number =>
-  span.toWallMs % 86_400_000 === 0 ? span.toWallMs - 1000 : span.toWallMs;
+  span.toWallMs % (24 * HOUR_MS) === 0 ? span.toWallMs - 60_000 : span.toWallMs;
 
 const eventOf = (span: CalendarSpan): ScheduleEventData => ({
   id: span.id,
@@ -46,6 +53,7 @@ export function WeekCalendar(props: WeekCalendarProps) {
   const { antenna, bookings, timeZone, weekStartMs, mayWrite, onSelect } = props;
   const navigate = useNavigate();
   const askOpen = useOpenAgain();
+  const viewport = useScrollToHour(weekStartMs, timeZone);
   const events = useMemo(
     () =>
       [
@@ -70,10 +78,8 @@ export function WeekCalendar(props: WeekCalendarProps) {
         withHeader={false}
         withAllDaySlots={false}
         withWeekNumber={false}
-        weekdayFormat="ddd D MMM"
         slotLabelFormat="HH:mm"
-        slotHeight={44}
-        startScrollTime="06:00:00"
+        slotHeight={SLOT_PX}
         getCurrentTime={() => wallText(wallTimeOf(serverNowMs(), timeZone))}
         withDragSlotSelect={mayWrite}
         onSlotDragEnd={(from, to) => onSelect({ fromWallMs: readWallText(from), toWallMs: endOf(to) })}
@@ -81,14 +87,15 @@ export function WeekCalendar(props: WeekCalendarProps) {
           mayWrite && onSelect({ fromWallMs: readWallText(slotStart), toWallMs: endOf(slotEnd) })
         }
         onEventClick={open}
-        renderEvent={(event, { children, ...rest }) => (
-          <button {...rest} data-kind={spanOf(event)?.kind} aria-label={labelOf(event)}>
-            {children}
-          </button>
-        )}
+        renderEvent={(event, parts) => <EventFrame event={event} parts={parts} />}
         renderEventBody={(event) => <EventBody event={event} />}
-        scrollAreaProps={{ mah: 620 }}
-        classNames={{ weekViewBackgroundEvent: classes.open ?? '' }}
+        scrollAreaProps={{ mah: 620, viewportRef: viewport }}
+        highlightToday
+        classNames={{
+          weekView: classes.grid ?? '',
+          weekViewBackgroundEvent: classes.open ?? '',
+          currentTimeIndicatorTimeBubble: classes.nowPlate ?? '',
+        }}
       />
       <Legend />
     </div>
@@ -105,6 +112,15 @@ function labelOf(event: ScheduleEventData): string {
   if (!span) return event.title;
   const kind = { open: 'Open', blackout: 'Blackout', contact: 'Contact', asked: 'Request' }[span.kind];
   return `${kind} ${span.title}, ${wallText(span.fromWallMs).slice(0, 16)} to ${clock(span.toWallMs)}`;
+}
+
+type EventParts = ComponentPropsWithoutRef<'button'>;
+
+/** Opening hours are ground and take no click; the rest are buttons with the whole of it in their name. */
+function EventFrame({ event, parts }: { readonly event: ScheduleEventData; readonly parts: EventParts }) {
+  const kind = spanOf(event)?.kind;
+  if (kind === 'open') return <Box {...(parts as object)} data-kind="open" aria-hidden="true" />;
+  return <UnstyledButton {...parts} data-kind={kind} aria-label={labelOf(event)} />;
 }
 
 function EventBody({ event }: { readonly event: ScheduleEventData }) {
@@ -153,4 +169,18 @@ function useOpenAgain(): (id: string, title: string) => void {
       labels: { confirm: 'Open it again', cancel: 'Leave it closed' },
       onConfirm: () => remove.mutate(id),
     });
+}
+
+/** Opens the calendar near the present hour, or in the morning of another week. */
+function useScrollToHour(weekStartMs: number, timeZone: string) {
+  const viewport = useRef<HTMLDivElement>(null);
+  useEffect(() => {
+    const nowWallMs = wallTimeOf(serverNowMs(), timeZone);
+    const isThisWeek = nowWallMs >= weekStartMs && nowWallMs < weekStartMs + 7 * 24 * HOUR_MS;
+    const hour = isThisWeek ? new Date(nowWallMs).getUTCHours() - 1 : MORNING_HOUR;
+    // The scroll area learns its height one frame after it is drawn.
+    const frame = requestAnimationFrame(() => viewport.current?.scrollTo({ top: Math.max(0, hour) * SLOT_PX }));
+    return () => cancelAnimationFrame(frame);
+  }, [weekStartMs, timeZone]);
+  return viewport;
 }
