@@ -1,5 +1,4 @@
-/** One invoice with everything that stands on it. */
-import { Anchor, Button, Skeleton, Table } from '@mantine/core';
+import { Anchor, Button, Paper, Skeleton, Table } from '@mantine/core';
 import { type Invoice, routes } from '@skyberth/shared';
 import { useQuery } from '@tanstack/react-query';
 import { Link, useParams } from 'react-router-dom';
@@ -10,128 +9,177 @@ import { useTitle } from '../../lib/use-title.js';
 import { DayTime } from '../../ui/day-time.js';
 import { PageTitle } from '../../ui/page-title.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
-import { Figure, Figures, MoneyText } from '../../ui/values.js';
+import { MoneyText } from '../../ui/values.js';
 import { invoiceQueries } from './invoice-queries.js';
+import { addressLines, titleOf, vatWords } from './invoice-words.js';
 import classes from './invoices.module.css';
 
+/** `/invoices/:id` */
 export function InvoicePage() {
   const { id = '' } = useParams();
-  const { data, error, refetch } = useQuery(invoiceQueries.one(id));
-  useTitle(data ? `${kindWord(data)} ${data.number}` : 'Invoice');
-  if (error)
+  const invoice = useQuery(invoiceQueries.one(id));
+  useTitle(invoice.data ? titleOf(invoice.data) : 'Invoice');
+  if (invoice.error)
     return (
-      <ProblemNotice title="This invoice could not be opened" onRetry={() => void refetch()}>
-        {sentenceOf(error)}
+      <ProblemNotice title="The invoice could not be read" onRetry={() => void invoice.refetch()}>
+        {sentenceOf(invoice.error)}
       </ProblemNotice>
     );
-  return data ? <OneInvoice invoice={data} /> : <Skeleton height={480} aria-label="Loading the invoice" />;
+  if (!invoice.data) return <Skeleton height={560} />;
+  return <OneInvoice invoice={invoice.data} />;
 }
-
-const kindWord = (invoice: Invoice): string => (invoice.kind === 'credit note' ? 'Credit note' : 'Invoice');
 
 function OneInvoice({ invoice }: { readonly invoice: Invoice }) {
   return (
-    <article className={classes.sheet}>
+    <>
       <PageTitle
-        title={`${kindWord(invoice)} ${invoice.number}`}
+        title={titleOf(invoice)}
         actions={
-          <Button component="a" variant="default" href={addressOf(routes.invoicePdf, { params: { id: invoice.id } })}>
-            Open the PDF
-          </Button>
+          <div className="sk-no-print">
+            <Button component="a" href={addressOf(routes.invoicePdf, { params: { id: invoice.id } })} target="_blank">
+              Open as PDF
+            </Button>
+          </div>
         }
       >
-        {invoice.subject}
-        {invoice.creditsNumber && <> It corrects invoice {invoice.creditsNumber}.</>}
+        <Anchor component={Link} to={paths.invoices} className="sk-no-print">
+          All invoices
+        </Anchor>
       </PageTitle>
-      <Figures columns={3} ruled>
-        <Figure label="Issued" value={<DayTime atMs={Date.parse(invoice.issuedUtc)} show="day" />} />
-        <Figure label="Supplied on" value={<DayTime atMs={Date.parse(invoice.suppliedOnUtc)} show="day" />} />
-        <Figure
-          label="Berth"
-          value={
-            <Anchor component={Link} to={paths.booking(invoice.bookingId)}>
-              {invoice.bookingNumber}
-            </Anchor>
-          }
-        />
-      </Figures>
-      <div className={classes.parties}>
-        <Party title="Supplier" party={invoice.supplier} />
-        <Party title="Customer" party={invoice.customer} />
-      </div>
-      <Lines invoice={invoice} />
-    </article>
+      <Paper withBorder className={classes.sheet}>
+        <Head invoice={invoice} />
+        <h2 className={classes.subject}>{invoice.subject}</h2>
+        <div className={classes.scroll}>
+          <Lines invoice={invoice} />
+        </div>
+        <p className={classes.vatNote}>{invoice.vatNote}</p>
+      </Paper>
+    </>
   );
 }
 
-function Party({ title, party }: { readonly title: string; readonly party: Invoice['supplier'] }) {
-  const { line1, line2, postalCode, city, country } = party.address;
+function Head({ invoice }: { readonly invoice: Invoice }) {
   return (
-    <section>
-      <h2 className={classes.heading}>{title}</h2>
-      <address className={classes.address}>
-        <strong>{party.name}</strong>
-        <br />
-        {line1}
-        {line2 && (
+    <div className={classes.head}>
+      <PartyBlock label="From" party={invoice.supplier} />
+      <PartyBlock label="To" party={invoice.customer} />
+      <dl className={classes.facts}>
+        <dt>Number</dt>
+        <dd>{invoice.number}</dd>
+        <dt>Issued</dt>
+        <dd>
+          <DayTime atMs={Date.parse(invoice.issuedUtc)} />
+        </dd>
+        <dt>Supplied</dt>
+        <dd>
+          <DayTime atMs={Date.parse(invoice.suppliedOnUtc)} />
+        </dd>
+        <dt>Contact</dt>
+        <dd>
+          <Anchor component={Link} to={paths.booking(invoice.bookingId)}>
+            Berth {invoice.bookingNumber}
+          </Anchor>
+        </dd>
+        {invoice.creditsNumber && (
           <>
-            <br />
-            {line2}
+            <dt>Credits</dt>
+            <dd>{invoice.creditsNumber}</dd>
           </>
         )}
-        <br />
-        {postalCode} {city}, {country}
-        <br />
-        {party.vatNumber ? `VAT number ${party.vatNumber}` : 'No VAT number'}
+      </dl>
+    </div>
+  );
+}
+
+function PartyBlock({ label, party }: { readonly label: string; readonly party: Invoice['customer'] }) {
+  return (
+    <section aria-label={label}>
+      <div className={classes.quiet}>{label}</div>
+      <address className={classes.address}>
+        <strong>{party.name}</strong>
+        {addressLines(party.address).map((line) => (
+          <span key={line}>{line}</span>
+        ))}
+        {party.vatNumber && <span>VAT {party.vatNumber}</span>}
       </address>
     </section>
   );
 }
 
 function Lines({ invoice }: { readonly invoice: Invoice }) {
-  const { currency } = invoice;
-  const money = (amountMinor: number) => <MoneyText amountMinor={amountMinor} currency={currency} />;
+  const { currency, lines } = invoice;
+  const hasUnits = lines.some((line) => line.unitMinor !== null);
+  const hasDiscounts = lines.some((line) => line.discountMinor !== 0);
+  const before = 2 + Number(hasUnits) + Number(hasDiscounts);
   return (
-    <div className={classes.scroll}>
-      <Table>
-        <Table.Thead>
-          <Table.Tr>
-            <Table.Th>What</Table.Th>
-            <Table.Th ta="right">Quantity</Table.Th>
-            <Table.Th ta="right">Each</Table.Th>
-            <Table.Th ta="right">Discount</Table.Th>
-            <Table.Th ta="right">Amount</Table.Th>
+    <Table className={classes.lines}>
+      <Table.Thead>
+        <Table.Tr>
+          <Table.Th>What</Table.Th>
+          <Table.Th ta="right">Quantity</Table.Th>
+          {hasUnits && <Table.Th ta="right">Each</Table.Th>}
+          {hasDiscounts && <Table.Th ta="right">Discount, taken off</Table.Th>}
+          <Table.Th ta="right">Amount</Table.Th>
+        </Table.Tr>
+      </Table.Thead>
+      <Table.Tbody>
+        {lines.map((line) => (
+          <Table.Tr key={`${line.description} ${line.quantity} ${line.amountMinor}`}>
+            <Table.Td>{line.description}</Table.Td>
+            <Table.Td ta="right">{line.quantity}</Table.Td>
+            {hasUnits && (
+              <Table.Td ta="right">
+                {line.unitMinor !== null && <MoneyText amountMinor={line.unitMinor} currency={currency} />}
+              </Table.Td>
+            )}
+            {hasDiscounts && (
+              <Table.Td ta="right">
+                <MoneyText amountMinor={line.discountMinor} currency={currency} quietZero />
+              </Table.Td>
+            )}
+            <Table.Td ta="right">
+              <MoneyText amountMinor={line.amountMinor} currency={currency} />
+            </Table.Td>
           </Table.Tr>
-        </Table.Thead>
-        <Table.Tbody>
-          {invoice.lines.map((line) => (
-            <Table.Tr key={line.description}>
-              <Table.Td>{line.description}</Table.Td>
-              <Table.Td ta="right">{line.quantity}</Table.Td>
-              <Table.Td ta="right">{line.unitMinor === null ? '' : money(line.unitMinor)}</Table.Td>
-              <Table.Td ta="right">{line.discountMinor === 0 ? '' : money(-line.discountMinor)}</Table.Td>
-              <Table.Td ta="right">{money(line.amountMinor)}</Table.Td>
-            </Table.Tr>
-          ))}
-        </Table.Tbody>
-        <Table.Tfoot className={classes.totals}>
-          <Total label="Net" value={money(invoice.netMinor)} />
-          <Total label={`VAT ${invoice.vatRatePercent} %`} value={money(invoice.vatMinor)} />
-          <Total label="Total" value={money(invoice.grossMinor)} isLast />
-        </Table.Tfoot>
-      </Table>
-      {invoice.vatNote && <p className={classes.note}>{invoice.vatNote}</p>}
-    </div>
+        ))}
+      </Table.Tbody>
+      <Table.Tfoot>
+        <SumRow label="Before VAT" span={before} amountMinor={invoice.netMinor} currency={currency} />
+        <SumRow
+          label={vatWords(invoice.vatRatePercent)}
+          span={before}
+          amountMinor={invoice.vatMinor}
+          currency={currency}
+        />
+        <SumRow
+          label={invoice.kind === 'invoice' ? 'Total' : 'Total given back'}
+          span={before}
+          amountMinor={invoice.grossMinor}
+          currency={currency}
+          isTotal
+        />
+      </Table.Tfoot>
+    </Table>
   );
 }
 
-function Total({ label, value, isLast }: { label: string; value: React.ReactNode; isLast?: boolean }) {
+interface SumRowProps {
+  readonly label: string;
+  readonly span: number;
+  readonly amountMinor: number;
+  readonly currency: string;
+  readonly isTotal?: boolean;
+}
+
+function SumRow({ label, span, amountMinor, currency, isTotal }: SumRowProps) {
   return (
-    <Table.Tr data-last={isLast || undefined}>
-      <Table.Th scope="row" colSpan={4} ta="right">
+    <Table.Tr className={classes.sum} data-total={isTotal || undefined}>
+      <Table.Th scope="row" colSpan={span} ta="right">
         {label}
       </Table.Th>
-      <Table.Td ta="right">{value}</Table.Td>
+      <Table.Td ta="right">
+        <MoneyText amountMinor={amountMinor} currency={currency} />
+      </Table.Td>
     </Table.Tr>
   );
 }

@@ -1,15 +1,15 @@
 import { routes } from '@skyberth/shared';
-import { keepPreviousData, queryOptions } from '@tanstack/react-query';
+import { queryOptions } from '@tanstack/react-query';
 import { call } from '../../lib/api-client.js';
 
-export const PAGE_SIZE = 25;
+export const INVOICES_PER_PAGE = 50;
 
 export const invoiceQueries = {
+  all: ['invoices'] as const,
   list: (page: number) =>
     queryOptions({
       queryKey: ['invoices', 'list', page],
-      queryFn: ({ signal }) => call(routes.listInvoices, { query: { page, pageSize: PAGE_SIZE }, signal }),
-      placeholderData: keepPreviousData,
+      queryFn: ({ signal }) => call(routes.listInvoices, { query: { page, pageSize: INVOICES_PER_PAGE }, signal }),
     }),
   one: (id: string) =>
     queryOptions({
