@@ -5,6 +5,7 @@ import { WeightedCache } from './weighted-cache.js';
 
 export interface Horizon {
   readonly frame: SiteFrame;
+  /** With the floor in it. */
   readonly mask: CompiledMask;
   readonly maskDeg: (azimuthDeg: number) => number;
 }
@@ -15,11 +16,12 @@ const MAX_KEPT = 5_000;
 export class Horizons {
   private readonly kept = new WeightedCache<Horizon>(MAX_KEPT);
 
-  of(antenna: AntennaInput): Horizon {
-    const key = antennaKey(antenna);
+  /** The mask of an antenna, with nothing open below `floorDeg`. */
+  of(antenna: AntennaInput, floorDeg: number): Horizon {
+    const key = `${antennaKey(antenna)}|${floorDeg}`;
     const known = this.kept.get(key);
     if (known !== undefined) return known;
-    const mask = compileMask(antenna.mask);
+    const mask = compileMask(antenna.mask, floorDeg);
     const horizon: Horizon = {
       frame: siteFrame(antenna.site),
       mask,

@@ -3,6 +3,7 @@ import { type Offer, type PassOffers } from '@skyberth/market';
 import type { Reason } from '@skyberth/shared';
 import type { PassJob, PassOutcome } from '../workers/job-types.js';
 import { fitOf } from './objections.js';
+import { spanOf } from './pass-text.js';
 import { trackOf } from './pass-track.js';
 import { priceOf } from './price.js';
 import { offersOf, reasonOf, utc } from './sales.js';
@@ -129,8 +130,7 @@ function answer(
   reasons: readonly Reason[],
 ): PassOutcome {
   const { spacecraft: craft, antenna } = job;
-  const span = craft.spans.find((each) => each.elementSetId === stay.elementSetId);
-  if (span === undefined) throw new Error(`Pass ${stay.aosMs} was made from elements that are not among those given.`);
+  const span = spanOf(craft, stay);
   const source = tools.tables.source(span);
   const part = stretchOf({ stay, source, site: antenna.site, fromMs: stretch.aosMs, toMs: stretch.losMs });
   const forSale = !job.booked && reasons.length === 0;

@@ -3,7 +3,14 @@
  * whatever was asked before or with it, so a repeated or shifted search pays only for what is new, and a hold recomputes to
  * the very millisecond what the search has shown.
  */
-import { OrbitError, type Pass, passAt, searchPassesColumns } from '@skyberth/orbit';
+import {
+  type AosHighestLos,
+  CLIPPED_END,
+  CLIPPED_START,
+  OrbitError,
+  type PassColumns,
+  searchPassesColumns,
+} from '@skyberth/orbit';
 import type { AntennaInput, ElementsSpan } from '../workers/job-types.js';
 import { antennaKey, type Horizons } from './horizons.js';
 import { joinDays, type Stay } from './stay.js';
@@ -13,7 +20,7 @@ import { WeightedCache } from './weighted-cache.js';
 
 const DAY_MS = 86_400_000;
 /** What a kept pass weighs with the text made from it, roughly, in bytes. */
-const STAY_WEIGHT = 2_000;
+const STAY_WEIGHT = 3_500;
 const BLOCK_WEIGHT = 300;
 const MAX_WEIGHT = 96_000_000;
 
@@ -81,7 +88,8 @@ export class PassBlocks {
   /** The blocks of one day for some of the antennas; missing ones are computed together. */
   private day(span: ElementsSpan, antennas: readonly Viewpoint[], only: readonly number[], day: number): Block[] {
     const views = only.map((index) => antennas[index] as Viewpoint);
-    const keys = views.map((view) => `${span.digest}|${antennaKey(view.antenna)}|${view.floorDeg}|${day}`);
+    // By set and not by digest: two operators may hold equal elements, and a stay says whose set it was made from.
+    const keys = views.map((view) => `${span.elementSetId}|${antennaKey(view.antenna)}|${view.floorDeg}|${day}`);
     const blocks = keys.map((key) => this.kept.get(key));
     const missing = blocks.flatMap((block, place) => (block === undefined ? [place] : []));
     if (missing.length === 0) return blocks as Block[];
@@ -106,8 +114,7 @@ export class PassBlocks {
         satellites: [this.tables.source(span)],
         sites: views.map(({ antenna, floorDeg }) => ({
           site: antenna.site,
-          mask: this.horizons.of(antenna).mask,
-          minElevationDeg: floorDeg,
+          mask: this.horizons.of(antenna, floorDeg).mask,
         })),
         fromMs: day * DAY_MS,
         toMs: (day + 1) * DAY_MS,
@@ -115,7 +122,7 @@ export class PassBlocks {
       fault = found.faults[0]?.error.message ?? null;
       for (const block of found.blocks) {
         for (let row = 0; row < block.count; row += 1) {
-          stays[block.site[row] ?? 0]?.push(stayOf(passAt(block, row), span.elementSetId));
+          stays[block.site[row] ?? 0]?.push(stayOf(block, row, span.elementSetId));
         }
       }
     } catch (error) {
@@ -144,12 +151,28 @@ const reachesBack = (first: Stay | undefined, dayStartMs: number, fromMs: number
 const reachesOn = (last: Stay | undefined, dayEndMs: number, toMs: number): boolean =>
   last?.clippedEnd === true && last.losMs >= dayEndMs - 1 && last.aosMs < toMs;
 
-function stayOf(pass: Pass, elementSetId: string): Stay {
+/** A row of the engine's columns, its times rounded. */
+function stayOf(columns: PassColumns, row: number, elementSetId: string): Stay {
+  const { timeMs, elevationDeg, flags } = columns;
   return {
-    ...pass,
     elementSetId,
-    aosMs: Math.round(pass.aosMs),
-    tcaMs: Math.round(pass.tcaMs),
-    losMs: Math.round(pass.losMs),
+    shape: null,
+    answer: null,
+    aosMs: Math.round(timeMs[3 * row] ?? 0),
+    tcaMs: Math.round(timeMs[3 * row + 1] ?? 0),
+    losMs: Math.round(timeMs[3 * row + 2] ?? 0),
+    clippedStart: ((flags[row] ?? 0) & CLIPPED_START) !== 0,
+    clippedEnd: ((flags[row] ?? 0) & CLIPPED_END) !== 0,
+    maxElevationDeg: elevationDeg[3 * row + 1] ?? 0,
+    azimuthDeg: three(columns.azimuthDeg, row),
+    elevationDeg: three(elevationDeg, row),
+    rangeKm: three(columns.rangeKm, row),
+    rangeRateKmPerS: three(columns.rangeRateKmPerS, row),
   };
 }
+
+const three = (values: ArrayLike<number>, row: number): AosHighestLos<number> => [
+  values[3 * row] ?? 0,
+  values[3 * row + 1] ?? 0,
+  values[3 * row + 2] ?? 0,
+];

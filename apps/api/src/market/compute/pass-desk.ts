@@ -6,7 +6,8 @@ import { nightsOf } from './nights.js';
 import { onePass } from './one-pass.js';
 import { OpeningHours } from './opening-hours.js';
 import { PassBlocks } from './pass-blocks.js';
-import { ProfileTexts } from './profile-texts.js';
+import { PassTexts } from './pass-text.js';
+import { QuestionNames } from './sale-validity.js';
 import { type SearchTools, searchPasses } from './search.js';
 import { TrackTables } from './track-table.js';
 
@@ -18,9 +19,11 @@ export class PassDesk {
     const tables = new TrackTables();
     this.tools = {
       tables,
+      horizons,
       blocks: new PassBlocks(horizons, tables),
       hours: new OpeningHours(),
-      profiles: new ProfileTexts(tables, horizons),
+      names: new QuestionNames(),
+      texts: new PassTexts(tables),
     };
   }
 

@@ -1,48 +1,62 @@
 /** A whole search, within one thread: from elements and antennas to the text that travels to the browser. */
 import { OrbitError } from '@skyberth/orbit';
-import type { FoundPass } from '@skyberth/shared';
-import type { AntennaInput, CraftInput, SearchJob, SearchOutcome } from '../workers/job-types.js';
-import { joinObjects, type ObjectPieces } from './json-list.js';
+import type { CraftInput, SearchJob, SearchOutcome } from '../workers/job-types.js';
+import type { Horizons } from './horizons.js';
+import { JsonWriter } from './json-writer.js';
 import { fitOf } from './objections.js';
 import type { OpeningHours } from './opening-hours.js';
 import type { PassBlocks } from './pass-blocks.js';
-import type { ProfileTexts } from './profile-texts.js';
-import { offersOf, saleOf } from './sales.js';
-import type { Stay } from './stay.js';
+import { isForSale, type PassTexts, type Sent } from './pass-text.js';
+import { type QuestionNames, sameAnswer } from './sale-validity.js';
+import { offersOf, type Sale, saleOf } from './sales.js';
+import type { SentAnswer, Stay } from './stay.js';
 import { staysOf } from './stays-of.js';
 import type { TrackTables } from './track-table.js';
 
 export interface SearchTools {
   readonly blocks: PassBlocks;
+  readonly horizons: Horizons;
   readonly hours: OpeningHours;
-  readonly profiles: ProfileTexts;
+  readonly names: QuestionNames;
   readonly tables: TrackTables;
+  readonly texts: PassTexts;
 }
 
-interface Found extends ObjectPieces {
-  readonly aosMs: number;
-}
+/** Room to begin with for each pass, so that the text rarely has to grow. */
+const BYTES_A_PASS = 1_400;
+
+/** A pass of the answer: its text from before, or what there is to write. */
+type Found = { readonly stay: Stay; readonly known: SentAnswer } | { readonly stay: Stay; readonly sent: Sent };
 
 /** Carries a search out. Elements that cannot be used are named; the other spacecraft are searched all the same. */
 export function searchPasses(job: SearchJob, tools: SearchTools): SearchOutcome {
   const cancel = job.cancel === null ? null : new Int32Array(job.cancel);
   const all: Found[] = [];
   const faults: { spacecraftId: string; sentence: string }[] = [];
-  let forSale = 0;
   for (const craft of job.spacecraft) {
     if (cancel !== null && Atomics.load(cancel, 0) !== 0) return { kind: 'cancelled' };
     try {
-      const { found, forSale: more, fault } = searchCraft(craft, job, tools, job.maxPasses - all.length);
+      const { found, fault } = searchCraft(craft, job, tools, job.maxPasses - all.length);
       if (found === 'too many') return { kind: 'too many' };
       for (const each of found) all.push(each);
-      forSale += more;
       if (fault !== null) faults.push({ spacecraftId: craft.id, sentence: fault });
     } catch (error) {
       if (!(error instanceof OrbitError)) throw error;
       faults.push({ spacecraftId: craft.id, sentence: error.message });
     }
   }
-  return { kind: 'found', json: joinObjects(all), passes: all.length, forSale, faults };
+  const forSale = all.filter((each) => ('known' in each ? each.known.forSale : isForSale(each.sent.sale))).length;
+  return { kind: 'found', json: jsonOf(all, tools), passes: all.length, forSale, faults };
+}
+
+function jsonOf(all: readonly Found[], { texts }: SearchTools): Uint8Array {
+  const out = new JsonWriter(all.length * BYTES_A_PASS);
+  all.forEach((each, index) => {
+    if (index > 0) out.ascii(',');
+    if ('known' in each) out.copy(each.known.text);
+    else texts.write(out, each.sent);
+  });
+  return out.finish();
 }
 
 /** Every pass of one spacecraft, sorted by AOS. */
@@ -51,50 +65,43 @@ function searchCraft(
   job: SearchJob,
   tools: SearchTools,
   room: number,
-): { found: Found[] | 'too many'; forSale: number; fault: string | null } {
+): { found: Found[] | 'too many'; fault: string | null } {
   const { wish, nowMs, fromMs, toMs } = job;
-  const fits = job.antennas.map((antenna) => fitOf(craft, antenna, wish));
+  const views = job.antennas.map((antenna) => ({ antenna, fit: fitOf(craft, antenna, wish) }));
   const { stays, fault } = staysOf(tools.blocks, {
     craft,
-    antennas: job.antennas.map((antenna, index) => ({ antenna, floorDeg: fits[index]?.floorDeg ?? 0 })),
+    antennas: views.map(({ antenna, fit }) => ({ antenna, floorDeg: fit.floorDeg })),
     fromMs,
     toMs,
   });
   const wanted = stays.map((each) => each.filter((stay) => isWanted(stay, job)));
-  if (wanted.reduce((sum, each) => sum + each.length, 0) > room) return { found: 'too many', forSale: 0, fault };
-  const found: Found[] = [];
-  let forSale = 0;
-  job.antennas.forEach((antenna, index) => {
-    const fit = fits[index];
+  if (wanted.reduce((sum, each) => sum + each.length, 0) > room) return { found: 'too many', fault };
+  const found = views.flatMap(({ antenna, fit }, index): Found[] => {
     const own = wanted[index];
-    if (fit === undefined || own === undefined || own.length === 0) return;
+    if (own === undefined || own.length === 0) return [];
+    const name = tools.names.of(craft, antenna, fit, wish);
+    const fresh = own.filter((stay) => !isKnown(stay, name, nowMs));
     const open = tools.hours.of(antenna, fromMs, toMs);
-    const question = { craft, antenna, fit, open, stays: own, nowMs, wish };
-    offersOf(question).forEach((offers, place) => {
-      const stay = own[place];
-      if (stay === undefined) return;
-      const sale = saleOf(stay, offers, question);
-      if (sale.parts.length > 0 && sale.bookingId === null) forSale += 1;
-      const pass: Omit<FoundPass, 'geometry' | 'profile'> = {
-        key: keyOf(craft, antenna, stay),
-        antennaId: antenna.id,
-        spacecraftId: craft.id,
-        currency: antenna.price.currency,
-        ...sale,
-      };
-      const members = tools.profiles.of({ craft, antenna, floorDeg: fit.floorDeg, stay });
-      found.push({ aosMs: stay.aosMs, head: JSON.stringify(pass).slice(0, -1), members });
+    const horizon = tools.horizons.of(antenna, fit.floorDeg);
+    const question = { craft, antenna, fit, open, stays: fresh, nowMs, wish };
+    const sales = offersOf(question).map((offers, place) => saleOf(fresh[place] as Stay, offers, question));
+    let next = 0;
+    return own.map((stay) => {
+      if (stay.answer !== null && isKnown(stay, name, nowMs)) return { stay, known: stay.answer };
+      const sale = sales[next++] as Sale;
+      const at = sameAnswer(stay, antenna, nowMs);
+      const keep = at === null ? null : { question: name, at };
+      return { stay, sent: { stay, craft, antenna, horizon, sale, keep } };
     });
   });
-  found.sort((a, b) => a.aosMs - b.aosMs);
-  return { found, forSale, fault };
+  found.sort((a, b) => a.stay.aosMs - b.stay.aosMs);
+  return { found, fault };
+}
+
+function isKnown({ answer }: Stay, question: string, nowMs: number): boolean {
+  return answer !== null && answer.question === question && nowMs >= answer.at.fromMs && nowMs <= answer.at.toMs;
 }
 
 function isWanted(stay: Stay, { wish }: SearchJob): boolean {
   return stay.maxElevationDeg >= wish.lowestElevationDeg && stay.losMs - stay.aosMs >= wish.shortestS * 1000;
-}
-
-/** Short enough for an address, and the same whoever asks: AOS to the millisecond and the random ends of both ids. */
-function keyOf(craft: CraftInput, antenna: AntennaInput, stay: Stay): string {
-  return `${stay.aosMs.toString(36)}-${antenna.id.slice(-12)}-${craft.id.slice(-12)}`;
 }

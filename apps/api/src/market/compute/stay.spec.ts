@@ -8,6 +8,8 @@ const stay = (
   cut: { start?: boolean; end?: boolean } = {},
 ): Stay => ({
   elementSetId: 'e',
+  shape: null,
+  answer: null,
   aosMs,
   tcaMs: (aosMs + losMs) / 2,
   losMs,

@@ -1,10 +1,25 @@
 /** A stay above the mask in whole milliseconds, as the market sells it. */
+import type { Interval } from '@skyberth/market';
 import type { AosHighestLos, Pass } from '@skyberth/orbit';
 import type { PassGeometry } from '@skyberth/shared';
+import type { WrittenText } from './json-writer.js';
 
 /** The engine's pass with its three instants rounded once, so that search, hold and contact page speak of the same time. */
 export interface Stay extends Pass {
   readonly elementSetId: string;
+  /** Geometry and profile as they travel, from the first time they were sent; null until then. */
+  shape: WrittenText | null;
+  /** The whole pass as it was last sent, and for which question; null until then. */
+  answer: SentAnswer | null;
+}
+
+export interface SentAnswer {
+  /** Of `QuestionNames`. */
+  readonly question: string;
+  /** The instants of asking at which it is the answer. */
+  readonly at: Interval;
+  readonly text: WrittenText;
+  readonly forSale: boolean;
 }
 
 /** Two pieces of one stay meet at a day's end; the engine may place each edge a rounding away from it. */
@@ -54,7 +69,11 @@ function join(first: Stay, second: Stay): Stay {
     of(second)[2],
   ];
   return {
-    ...first,
+    elementSetId: first.elementSetId,
+    shape: null,
+    answer: null,
+    aosMs: first.aosMs,
+    clippedStart: first.clippedStart,
     tcaMs: higher.tcaMs,
     losMs: second.losMs,
     clippedEnd: second.clippedEnd,

@@ -29,6 +29,8 @@ export function stretchOf(question: {
   const looks = [at(fromMs), at(tcaMs), at(toMs)] as const;
   return {
     elementSetId: stay.elementSetId,
+    shape: null,
+    answer: null,
     aosMs: fromMs,
     tcaMs,
     losMs: toMs,

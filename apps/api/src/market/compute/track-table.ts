@@ -15,16 +15,17 @@ const MAX_DAYS = 400;
 /** Propagators kept. */
 const MAX_SOURCES = 500;
 
+/** Written anew for each instant, since a search asks for hundreds of thousands. */
 export interface Look {
-  readonly azimuthDeg: number;
-  readonly elevationDeg: number;
+  azimuthDeg: number;
+  elevationDeg: number;
 }
 
 export class TrackTables {
   private readonly days = new WeightedCache<Float64Array>(MAX_DAYS);
   private readonly sources = new WeightedCache<TrajectorySource>(MAX_SOURCES);
   /** The table used last, since a pass asks for many instants of one day. */
-  private current: { readonly key: string; readonly table: Float64Array } | null = null;
+  private current: { readonly span: ElementsSpan; readonly day: number; readonly table: Float64Array } | null = null;
 
   /** The propagator of an element set. Throws `OrbitError` for elements that cannot be used. */
   source(span: ElementsSpan): TrajectorySource {
@@ -35,7 +36,8 @@ export class TrackTables {
     return source;
   }
 
-  look(span: ElementsSpan, { positionKm, east, north, up }: SiteFrame, timeMs: number): Look {
+  /** Direction of the spacecraft from a site, into `out`. */
+  look(span: ElementsSpan, { positionKm, east, north, up }: SiteFrame, timeMs: number, out: Look): void {
     const day = Math.floor(timeMs / DAY_MS);
     const table = this.day(span, day);
     const at = (timeMs - day * DAY_MS) / STEP_MS;
@@ -49,21 +51,19 @@ export class TrackTables {
     const northKm = x * north[0] + y * north[1] + z * north[2];
     const upKm = x * up[0] + y * up[1] + z * up[2];
     const azimuth = Math.atan2(eastKm, northKm) * DEG;
-    return {
-      azimuthDeg: azimuth < 0 ? azimuth + 360 : azimuth,
-      elevationDeg: Math.atan2(upKm, Math.sqrt(eastKm * eastKm + northKm * northKm)) * DEG,
-    };
+    out.azimuthDeg = azimuth < 0 ? azimuth + 360 : azimuth;
+    out.elevationDeg = Math.atan2(upKm, Math.sqrt(eastKm * eastKm + northKm * northKm)) * DEG;
   }
 
   private day(span: ElementsSpan, day: number): Float64Array {
+    if (this.current?.span === span && this.current.day === day) return this.current.table;
     const key = `${span.digest}|${day}`;
-    if (this.current?.key === key) return this.current.table;
     let table = this.days.get(key);
     if (table === undefined) {
       table = tabulate(this.source(span), day);
       this.days.set(key, table, 1);
     }
-    this.current = { key, table };
+    this.current = { span, day, table };
     return table;
   }
 }
@@ -97,9 +97,10 @@ function usable(source: TrajectorySource, timeMs: number, state: Float64Array): 
 /** Cubic through two places with the velocities there (Hermite). `share` runs from 0 to 1 between the nodes. */
 function cubic(table: Float64Array, index: number, share: number): number {
   const stepS = STEP_MS / 1000;
-  const [p0 = 0, v0 = 0, p1 = 0, v1 = 0] = [table[index], table[index + 3], table[index + 6], table[index + 9]];
-  const m0 = v0 * stepS;
-  const m1 = v1 * stepS;
+  const p0 = table[index] as number;
+  const m0 = (table[index + 3] as number) * stepS;
+  const p1 = table[index + 6] as number;
+  const m1 = (table[index + 9] as number) * stepS;
   const s2 = share * share;
   const s3 = s2 * share;
   return (2 * s3 - 3 * s2 + 1) * p0 + (s3 - 2 * s2 + share) * m0 + (3 * s2 - 2 * s3) * p1 + (s3 - s2) * m1;
