@@ -33,8 +33,102 @@ const openPages: RouteObject[] = [
 /** Pages behind the sign-in, inside the frame. */
 const memberPages: RouteObject[] = [
   {
+    path: paths.findTime,
+    lazy: async () => ({ Component: (await import('../features/find-time/find-time-page.js')).FindTimePage }),
+  },
+  {
+    path: paths.bookings,
+    lazy: async () => ({ Component: (await import('../features/bookings/bookings-page.js')).BookingsPage }),
+  },
+  {
+    path: paths.booking(':id'),
+    lazy: async () => ({ Component: (await import('../features/contact/contact-page.js')).ContactPage }),
+  },
+  {
+    path: paths.spacecraft,
+    lazy: async () => ({ Component: (await import('../features/spacecraft/spacecraft-page.js')).SpacecraftPage }),
+  },
+  {
+    path: paths.newSpacecraft,
+    lazy: async () => ({
+      Component: (await import('../features/spacecraft/spacecraft-edit-page.js')).NewSpacecraftPage,
+    }),
+  },
+  {
+    path: paths.addElements,
+    lazy: async () => ({ Component: (await import('../features/spacecraft/elements-page.js')).ElementsPage }),
+  },
+  {
+    path: paths.oneSpacecraft(':id'),
+    lazy: async () => ({
+      Component: (await import('../features/spacecraft/one-spacecraft-page.js')).OneSpacecraftPage,
+    }),
+  },
+  {
+    path: paths.editSpacecraft(':id'),
+    lazy: async () => ({
+      Component: (await import('../features/spacecraft/spacecraft-edit-page.js')).EditSpacecraftPage,
+    }),
+  },
+  {
+    path: paths.invoices,
+    lazy: async () => ({ Component: (await import('../features/invoices/invoices-page.js')).InvoicesPage }),
+  },
+  {
+    path: paths.invoice(':id'),
+    lazy: async () => ({ Component: (await import('../features/invoices/invoice-page.js')).InvoicePage }),
+  },
+  {
     path: paths.organisation,
     lazy: async () => ({ Component: (await import('../features/organisation/organisation-page.js')).OrganisationPage }),
+  },
+  {
+    path: paths.stations,
+    lazy: async () => ({ Component: (await import('../features/stations/stations-page.js')).StationsPage }),
+  },
+  {
+    path: paths.newStation,
+    lazy: async () => ({ Component: (await import('../features/stations/station-edit-page.js')).NewStationPage }),
+  },
+  {
+    path: paths.station(':id'),
+    lazy: async () => ({ Component: (await import('../features/stations/station-page.js')).StationPage }),
+  },
+  {
+    path: paths.editStation(':id'),
+    lazy: async () => ({ Component: (await import('../features/stations/station-edit-page.js')).EditStationPage }),
+  },
+  {
+    path: paths.newAntenna(':id'),
+    lazy: async () => ({ Component: (await import('../features/antenna/new-antenna-page.js')).NewAntennaPage }),
+  },
+  {
+    path: paths.antenna(':id'),
+    lazy: async () => ({ Component: (await import('../features/antenna/antenna-page.js')).AntennaPage }),
+  },
+  {
+    path: paths.availability,
+    lazy: async () => ({ Component: (await import('../features/availability/availability-page.js')).AvailabilityPage }),
+  },
+  {
+    path: paths.requests,
+    lazy: async () => ({ Component: (await import('../features/requests/requests-page.js')).RequestsPage }),
+  },
+  {
+    path: paths.approvals,
+    lazy: async () => ({ Component: (await import('../features/approvals/approvals-page.js')).ApprovalsPage }),
+  },
+  {
+    path: paths.approval(':id'),
+    lazy: async () => ({ Component: (await import('../features/approvals/approval-page.js')).ApprovalPage }),
+  },
+  {
+    path: paths.ledger,
+    lazy: async () => ({ Component: (await import('../features/ledger/ledger-page.js')).LedgerPage }),
+  },
+  {
+    path: paths.system,
+    lazy: async () => ({ Component: (await import('../features/system/system-page.js')).SystemPage }),
   },
 ];
 

@@ -72,31 +72,33 @@ export function WeekCalendar(props: WeekCalendarProps) {
   };
   return (
     <div className={classes.week}>
-      <WeekView
-        date={wallText(weekStartMs)}
-        events={events}
-        withHeader={false}
-        withAllDaySlots={false}
-        withWeekNumber={false}
-        slotLabelFormat="HH:mm"
-        slotHeight={SLOT_PX}
-        getCurrentTime={() => wallText(wallTimeOf(serverNowMs(), timeZone))}
-        withDragSlotSelect={mayWrite}
-        onSlotDragEnd={(from, to) => onSelect({ fromWallMs: readWallText(from), toWallMs: endOf(to) })}
-        onTimeSlotClick={({ slotStart, slotEnd }) =>
-          mayWrite && onSelect({ fromWallMs: readWallText(slotStart), toWallMs: endOf(slotEnd) })
-        }
-        onEventClick={open}
-        renderEvent={(event, parts) => <EventFrame event={event} parts={parts} />}
-        renderEventBody={(event) => <EventBody event={event} />}
-        scrollAreaProps={{ mah: 620, viewportRef: viewport }}
-        highlightToday
-        classNames={{
-          weekView: classes.grid ?? '',
-          weekViewBackgroundEvent: classes.open ?? '',
-          currentTimeIndicatorTimeBubble: classes.nowPlate ?? '',
-        }}
-      />
+      <div className={classes.wide}>
+        <WeekView
+          date={wallText(weekStartMs)}
+          events={events}
+          withHeader={false}
+          withAllDaySlots={false}
+          withWeekNumber={false}
+          slotLabelFormat="HH:mm"
+          slotHeight={SLOT_PX}
+          getCurrentTime={() => wallText(wallTimeOf(serverNowMs(), timeZone))}
+          withDragSlotSelect={mayWrite}
+          onSlotDragEnd={(from, to) => onSelect({ fromWallMs: readWallText(from), toWallMs: endOf(to) })}
+          onTimeSlotClick={({ slotStart, slotEnd }) =>
+            mayWrite && onSelect({ fromWallMs: readWallText(slotStart), toWallMs: endOf(slotEnd) })
+          }
+          onEventClick={open}
+          renderEvent={(event, parts) => <EventFrame event={event} parts={parts} />}
+          renderEventBody={(event) => <EventBody event={event} />}
+          scrollAreaProps={{ mah: 620, viewportRef: viewport }}
+          highlightToday
+          classNames={{
+            weekView: classes.grid ?? '',
+            weekViewBackgroundEvent: classes.open ?? '',
+            currentTimeIndicatorTimeBubble: classes.nowPlate ?? '',
+          }}
+        />
+      </div>
       <Legend />
     </div>
   );

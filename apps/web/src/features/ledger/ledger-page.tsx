@@ -129,7 +129,11 @@ function BalanceCard({ balances, picked, onPick }: BalanceCardProps) {
       <table className={classes.balances}>
         <tbody>
           {rows.map((row, index) => (
-            <tr key={row.account} data-picked={row.account === picked || undefined}>
+            <tr
+              key={row.account}
+              data-picked={row.account === picked || undefined}
+              data-first={row.side !== rows[index - 1]?.side || undefined}
+            >
               <th scope="row">
                 {row.side !== rows[index - 1]?.side && row.side && <small>{SIDE_WORDS[row.side]}</small>}
                 <Anchor

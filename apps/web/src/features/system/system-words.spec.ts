@@ -10,7 +10,7 @@ const view: SystemView = {
   providerEvents: { received: 3, processed: 3 },
   services: [
     { name: '127.0.0.1:1', ok: true, detail: 'answered 200' },
-    { name: 'job: bookings', ok: true, detail: 'has not run yet' },
+    { name: 'job: bookings', ok: true, detail: 'last done 2026-12-01T14:12:39.741Z' },
   ],
 };
 
@@ -18,7 +18,7 @@ describe('the state of the system', () => {
   it('parts services from jobs', () => {
     const { services, jobs } = servicesAndJobs(view.services);
     expect(services.map((one) => one.name)).toEqual(['127.0.0.1:1']);
-    expect(jobs.map((one) => one.name)).toEqual(['bookings']);
+    expect(jobs).toEqual([{ name: 'bookings', ok: true, detail: 'last done 2026-335 14:12:39' }]);
   });
 
   it('names what is not fine', () => {

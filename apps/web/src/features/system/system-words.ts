@@ -1,9 +1,11 @@
 /** Readings of the system page. */
 import type { SystemView } from '@skyberth/shared';
+import { formatDayTime } from '../../ui/format.js';
 
 type Service = SystemView['services'][number];
 
 const JOB = 'job: ';
+const ISO_TIME = /\d{4}-\d{2}-\d{2}T[\d:.]+Z/g;
 
 /** Services beside the server, and the jobs it runs; the API lists both together. */
 export function servicesAndJobs(services: readonly Service[]): {
@@ -14,9 +16,12 @@ export function servicesAndJobs(services: readonly Service[]): {
     services: services.filter((one) => !one.name.startsWith(JOB)),
     jobs: services
       .filter((one) => one.name.startsWith(JOB))
-      .map((one) => ({ ...one, name: one.name.slice(JOB.length) })),
+      .map((one) => ({ ...one, name: one.name.slice(JOB.length), detail: readable(one.detail) })),
   };
 }
+
+/** Instants as the rest of the page writes them. */
+const readable = (detail: string): string => detail.replaceAll(ISO_TIME, (time) => formatDayTime(Date.parse(time)));
 
 /** What is not fine, a sentence each; empty when all is well. */
 export function faultsOf(view: SystemView): string[] {
