@@ -22,6 +22,8 @@ import { PASS_ENGINE, type PassEngine } from './workers/pass-engine.js';
 
 /** A board of more passes than this serves nobody, and its answer would be tens of megabytes. */
 export const MOST_PASSES = 10_000;
+/** Spacecraft in one job of a lane: some tenths of a second of work at the most. */
+const CRAFT_AT_ONCE = 4;
 /** What lies just outside the period may bear on its first and last passes. */
 const ABOUT_MS = 86_400_000;
 
@@ -35,6 +37,7 @@ export interface BookedContact {
   readonly losMs: number;
 }
 
+type Found = Extract<SearchOutcome, { kind: 'found' }>;
 const Head = SearchResult.omit({ passes: true });
 
 @Injectable()
@@ -91,13 +94,11 @@ export class MarketService {
       maxPasses: MOST_PASSES,
       cancel,
     });
-    const [outcomes, stations] = await Promise.all([
+    const [found, stations] = await Promise.all([
       this.inLanes(craft, job, signal),
       this.foundStations(sale, antennas, period),
     ]);
-    const found = outcomes.map(foundOrRefused);
     const passes = found.reduce((sum, each) => sum + each.passes, 0);
-    if (passes > MOST_PASSES) throw tooMany();
     const faults = new Map(found.flatMap((each) => each.faults.map((fault) => [fault.spacecraftId, fault.sentence])));
     const head = Head.parse({
       computedUtc: utc(nowMs),
@@ -131,23 +132,38 @@ export class MarketService {
     return { ...detailView(answer, booking.need), reasons: [], quote: null };
   }
 
-  /** Runs the spacecraft of each lane in that lane. When the asker hangs up, all of them stop at the next spacecraft. */
+  /**
+   * Runs the spacecraft of each lane in that lane, a few at a time, so that others get their turn between. When the asker
+   * hangs up, all of them stop at the next spacecraft.
+   */
   private async inLanes(
     craft: readonly CraftInput[],
     job: (some: readonly CraftInput[], cancel: SharedArrayBuffer) => SearchJob,
     signal: AbortSignal,
-  ): Promise<SearchOutcome[]> {
+  ): Promise<Found[]> {
     const cancel = new SharedArrayBuffer(4);
     const stop = (): void => {
       Atomics.store(new Int32Array(cancel), 0, 1);
     };
     signal.addEventListener('abort', stop, { once: true });
-    const lanes = groupBy(craft, (each) => String(this.engine.laneOf(each.id)));
+    let passes = 0;
+    const runLane = async (ours: readonly CraftInput[]): Promise<Found[]> => {
+      const found: Found[] = [];
+      for (let i = 0; i < ours.length; i += CRAFT_AT_ONCE) {
+        const some = ours.slice(i, i + CRAFT_AT_ONCE);
+        const outcome = foundOrRefused(await this.engine.run(job(some, cancel), some[0]?.id ?? ''));
+        passes += outcome.passes;
+        if (passes > MOST_PASSES) throw tooMany();
+        found.push(outcome);
+      }
+      return found;
+    };
     try {
-      return await Promise.all(
-        [...lanes.values()].map((some) => this.engine.run(job(some, cancel), some[0]?.id ?? '')),
-      );
+      const lanes = groupBy(craft, (each) => String(this.engine.laneOf(each.id)));
+      return (await Promise.all([...lanes.values()].map(runLane))).flat();
     } finally {
+      // Where one lane was refused, the others need not go on.
+      stop();
       signal.removeEventListener('abort', stop);
     }
   }
@@ -160,7 +176,9 @@ export class MarketService {
     const busy = new Map(antennas.map((antenna) => [antenna.id, antenna.busy]));
     const stations = [...groupBy(sale, (antenna) => antenna.stationId).values()];
     const sites = stations.flatMap(([first]) => (first === undefined ? [] : [first.site]));
-    const { nights } = await this.engine.run({ kind: 'nights', ...period, sites }, 'nights');
+    // A day more on either side, so that a night that runs into the period begins at its own sunset.
+    const around = { fromMs: period.fromMs - DAY_MS, toMs: period.toMs + DAY_MS };
+    const { nights } = await this.engine.run({ kind: 'nights', ...around, sites }, 'nights');
     return stations.flatMap((some, index) => {
       const [first] = some;
       if (first === undefined) return [];
@@ -173,7 +191,9 @@ export class MarketService {
           timeZone: first.timeZone,
           latitudeDeg: first.site.latitudeDeg,
           longitudeDeg: first.site.longitudeDeg,
-          nights: (nights[index] ?? []).map(utcInterval),
+          nights: (nights[index] ?? [])
+            .filter((night) => night.fromMs < period.toMs && night.toMs > period.fromMs)
+            .map(utcInterval),
           antennas: some.map((antenna) => foundAntenna(antenna, busy.get(antenna.id) ?? [], period)),
         },
       ];
@@ -181,6 +201,7 @@ export class MarketService {
   }
 }
 
+const DAY_MS = 86_400_000;
 const utc = (timeMs: number): string => new Date(timeMs).toISOString();
 
 const tooMany = (): DomainError =>
@@ -189,7 +210,7 @@ const tooMany = (): DomainError =>
     `That search finds more than ${MOST_PASSES.toLocaleString('en')} passes. Choose a shorter period, fewer spacecraft, or some of the stations.`,
   );
 
-function foundOrRefused(outcome: SearchOutcome): Extract<SearchOutcome, { kind: 'found' }> {
+function foundOrRefused(outcome: SearchOutcome): Found {
   if (outcome.kind === 'found') return outcome;
   if (outcome.kind === 'too many') throw tooMany();
   throw new DomainError('unavailable', 'The search was given up because nobody waited for it.');

@@ -5,10 +5,10 @@
 import type { Interval } from '@skyberth/market';
 import { type GeodeticSite, gmstRad, type SunPath, sunPath } from '@skyberth/orbit';
 
-/** Elevation of the Sun's centre at sunrise and sunset: 34' refraction and 16' of disc, as the almanacs define them. */
-const SUNSET_DEG = -0.833;
 const STEP_MS = 600_000;
 const DEG = Math.PI / 180;
+/** Elevation of the Sun's centre at sunrise and sunset: 34' refraction and 16' of disc, as the almanacs define them. */
+const SIN_SUNSET = Math.sin(-0.833 * DEG);
 
 /** For each site, the stretches of `[fromMs, toMs)` with the Sun below the horizon, to a few seconds. */
 export function nightsOf(sites: readonly GeodeticSite[], fromMs: number, toMs: number): Interval[][] {
@@ -38,15 +38,15 @@ function nightsAt(site: GeodeticSite, times: readonly number[], suns: readonly V
     Math.cos(site.latitudeDeg * DEG) * Math.sin(site.longitudeDeg * DEG),
     Math.sin(site.latitudeDeg * DEG),
   ];
-  const elevations = suns.map((sun) => Math.asin(dot(up, sun)) / DEG);
+  const sines = suns.map((sun) => dot(up, sun));
   const nights: Interval[] = [];
-  let darkSinceMs: number | null = (elevations[0] ?? 0) < SUNSET_DEG ? (times[0] ?? 0) : null;
+  let darkSinceMs: number | null = (sines[0] ?? 0) < SIN_SUNSET ? (times[0] ?? 0) : null;
   for (let i = 1; i < times.length; i += 1) {
-    const [before, after] = [elevations[i - 1] ?? 0, elevations[i] ?? 0];
-    if (before < SUNSET_DEG === after < SUNSET_DEG) continue;
+    const [before, after] = [sines[i - 1] ?? 0, sines[i] ?? 0];
+    if (before < SIN_SUNSET === after < SIN_SUNSET) continue;
     const [startMs, endMs] = [times[i - 1] ?? 0, times[i] ?? 0];
-    // Over ten minutes the elevation is as good as straight.
-    const crossingMs = Math.round(startMs + ((SUNSET_DEG - before) / (after - before)) * (endMs - startMs));
+    // Over ten minutes so near the horizon the sine of the elevation is as good as straight.
+    const crossingMs = Math.round(startMs + ((SIN_SUNSET - before) / (after - before)) * (endMs - startMs));
     if (darkSinceMs === null) darkSinceMs = crossingMs;
     else {
       nights.push({ fromMs: darkSinceMs, toMs: crossingMs });
@@ -58,4 +58,4 @@ function nightsAt(site: GeodeticSite, times: readonly number[], suns: readonly V
   return nights;
 }
 
-const dot = (a: Vector, b: Vector): number => Math.max(-1, Math.min(1, a[0] * b[0] + a[1] * b[1] + a[2] * b[2]));
+const dot = (a: Vector, b: Vector): number => a[0] * b[0] + a[1] * b[1] + a[2] * b[2];

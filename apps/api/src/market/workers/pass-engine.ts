@@ -4,7 +4,8 @@ import type { EngineJob, OutcomeOf } from './job-types.js';
 export interface PassEngine {
   /**
    * Carries a job out. `lane` names what the work is about (a spacecraft): the same name always reaches the same cache,
-   * different names may run at the same time. Rejects only for a fault of ours; what is wrong with elements is an outcome.
+   * different names may run at the same time. What is wrong with elements is an outcome. Throws `unavailable` where too
+   * many jobs are waiting already.
    */
   run<J extends EngineJob>(job: J, lane: string): Promise<OutcomeOf<J>>;
   /** How many jobs can run at the same time. */

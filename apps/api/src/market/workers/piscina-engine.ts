@@ -6,6 +6,7 @@
 import { existsSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { Piscina } from 'piscina';
+import { DomainError } from '../../platform/domain-error.js';
 import type { EngineJob, OutcomeOf } from './job-types.js';
 import { laneOf, type PassEngine } from './pass-engine.js';
 
@@ -34,13 +35,16 @@ export class PiscinaEngine implements PassEngine {
     const filename = workerFile();
     this.pools = Array.from(
       { length: lanes },
-      () => new Piscina({ filename, minThreads: 1, maxThreads: 1, maxQueue: MAX_WAITING, execArgv: [] }),
+      () => new Piscina({ filename, minThreads: 1, maxThreads: 1, execArgv: [] }),
     );
   }
 
   async run<J extends EngineJob>(job: J, lane: string): Promise<OutcomeOf<J>> {
     const pool = this.pools[this.laneOf(lane)];
     if (pool === undefined) throw new Error(`There is no lane for ${lane}.`);
+    if (pool.queueSize >= MAX_WAITING) {
+      throw new DomainError('unavailable', 'Too many searches are waiting. Try again in a minute.');
+    }
     const outcome: OutcomeOf<J> = await pool.run(job);
     return outcome;
   }
