@@ -102,10 +102,15 @@ export interface SaleOptions {
   readonly price?: Partial<BodyInput<typeof routes.setPrice>>;
 }
 
+/** As much of a running server as it takes to put an antenna on sale. */
+type Marketplace = Pick<Skyberth, 'call'> & {
+  readonly people: { staff(role: 'admin'): Promise<Pick<Person, 'jar'>> };
+};
+
 /** An approved station with one antenna on sale. */
 export async function antennaOnSale(
-  skyberth: Skyberth,
-  owner: Person,
+  skyberth: Marketplace,
+  owner: Pick<Person, 'jar'>,
   options: SaleOptions = {},
 ): Promise<{ station: Station; antenna: Antenna }> {
   const { call } = skyberth;

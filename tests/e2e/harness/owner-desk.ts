@@ -63,6 +63,14 @@ interface ReceiveBand {
   readonly polarisations: readonly string[];
 }
 
+export const S_BAND: ReceiveBand = {
+  band: 'S',
+  fromMhz: '2200',
+  toMhz: '2300',
+  gOverTDbK: '16.5',
+  polarisations: ['right', 'left'],
+};
+
 export async function addReceiveBand(page: Page, band: ReceiveBand): Promise<void> {
   await page.getByRole('tab', { name: 'Bands' }).click();
   await press(page, 'Add a band');

@@ -1,0 +1,149 @@
+/** Every page that matters, judged by axe-core in both colour schemes, wide and on a phone. Criteria: WCAG 2.2 A and AA. */
+import { AxeBuilder } from '@axe-core/playwright';
+import { routes } from '@skyberth/shared';
+import type { Browser, Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { must } from '../api/harness/client.js';
+import { DESKTOP, type Desk, launchBrowser, openDesk, PHONE } from './harness/browser.js';
+import { seen } from './harness/fields.js';
+import { type Harbour, startHarbour } from './harness/harbour.js';
+import { buyerWithSpacecraft, type Market, openMarket } from './harness/market.js';
+import * as buying from './harness/operator-desk.js';
+import { signIn } from './harness/people.js';
+import { bookingIdIn } from './harness/records.js';
+import { step } from './harness/steps.js';
+
+const RULES = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
+const LOOKS = [
+  { name: 'wide, by day', viewport: DESKTOP, colorScheme: 'light' },
+  { name: 'wide, night watch', viewport: DESKTOP, colorScheme: 'dark' },
+  { name: 'phone, by day', viewport: PHONE, colorScheme: 'light' },
+  { name: 'phone, night watch', viewport: PHONE, colorScheme: 'dark' },
+] as const;
+
+interface Screen {
+  readonly name: string;
+  readonly path: string;
+  /** What stands on it once it has loaded. */
+  readonly shows: (page: Page) => ReturnType<Page['locator']>;
+}
+
+const heading = (name: string | RegExp) => (page: Page) => page.getByRole('heading', { level: 1, name });
+
+describe('for everybody', () => {
+  let harbour: Harbour;
+  let browser: Browser;
+  let market: Market;
+  let emails: Readonly<Record<'operator' | 'owner' | 'admin' | 'finance', string>>;
+  let bookingId: string;
+  beforeAll(async () => {
+    [harbour, browser] = await Promise.all([startHarbour(), launchBrowser()]);
+    market = await openMarket(harbour);
+    const buyer = await buyerWithSpacecraft(harbour, 'Whimbrel Orbits', 99_601);
+    const [admin, finance] = [await harbour.people.staff('admin'), await harbour.people.staff('finance')];
+    emails = { operator: buyer.email, owner: market.owner.email, admin: admin.email, finance: finance.email };
+    await waitingStation();
+    bookingId = await soldContact(buyer.email);
+  });
+  afterAll(async () => {
+    await browser?.close();
+    await harbour?.stop();
+  });
+
+  /** Something for the approvals page to show. */
+  async function waitingStation(): Promise<void> {
+    const as = market.owner;
+    const { name: _name, id: _id, ...place } = market.station;
+    const { id } = await must(harbour.call(routes.createStation, { body: { ...place, name: 'Skerry' }, as }));
+    await must(harbour.call(routes.submitStation, { params: { id }, as }));
+  }
+
+  /** One contact that is paid for, one pass that is held. */
+  async function soldContact(email: string): Promise<string> {
+    const desk = await openDesk(browser);
+    return step('buying a contact', desk, async () => {
+      const { page } = desk;
+      await signIn(page, harbour.url, email);
+      await buying.findTime(page);
+      await buying.pickPass(page);
+      await buying.holdPass(page);
+      await buying.tray(page).getByRole('button', { name: 'Pay and confirm' }).click();
+      await buying.payByCard(page, buying.GOOD_CARD);
+      await seen(page.getByText('Paid and confirmed.'));
+      return bookingIdIn(page.url());
+    });
+  }
+
+  const screens = (): Readonly<Record<keyof typeof emails, readonly Screen[]>> => ({
+    operator: [
+      {
+        name: 'find time',
+        path: '/find-time',
+        shows: (page) => page.getByRole('status').filter({ hasText: /for sale of \d+ pass/ }),
+      },
+      { name: 'bookings', path: '/bookings', shows: (page) => page.getByText('Confirmed', { exact: true }) },
+      {
+        name: 'bookings in the calendar',
+        path: '/bookings?view=calendar',
+        shows: (page) => page.getByText('Times in UTC.'),
+      },
+      {
+        name: 'contact',
+        path: `/bookings/${bookingId}`,
+        shows: (page) => page.getByRole('heading', { name: 'Files' }),
+      },
+      { name: 'spacecraft', path: '/spacecraft', shows: (page) => page.getByText('Pipit 99601') },
+    ],
+    owner: [
+      { name: 'stations', path: '/stations', shows: (page) => page.getByText('Skerry') },
+      ...['overview', 'mask', 'bands', 'prices', 'hours'].map((tab) => ({
+        name: `antenna, ${tab}`,
+        path: `/antennas/${market.antenna.id}?tab=${tab}`,
+        shows: heading(market.antenna.name),
+      })),
+      { name: 'requests', path: '/requests', shows: heading('Requests') },
+    ],
+    admin: [{ name: 'approvals', path: '/approvals', shows: (page) => page.getByText('Skerry') }],
+    finance: [{ name: 'ledger', path: '/ledger', shows: heading('Ledger') }],
+  });
+
+  it('shows nothing serious to an accessibility checker on any page, in any look', async () => {
+    const found: string[] = [];
+    const looked: string[] = [];
+    for (const look of LOOKS) {
+      const { viewport, colorScheme } = look;
+      for (const [role, list] of Object.entries(screens())) {
+        const desk = await openDesk(browser, { viewport, colorScheme });
+        await step(`signing in, ${look.name}`, desk, async () => {
+          await desk.page.goto(`${harbour.url}/sign-in`);
+          await seen(desk.page.getByRole('heading', { name: 'Sign in' }));
+          if (role === 'operator') found.push(...(await judge(desk.page, `sign-in, ${look.name}`)));
+          await signIn(desk.page, harbour.url, emails[role as keyof typeof emails]);
+        });
+        for (const screen of list) {
+          found.push(...(await lookAt(desk, screen, look.name)));
+          looked.push(`${screen.name}, ${look.name}`);
+        }
+        expect(desk.faults).toEqual([]);
+        await desk.context.close();
+      }
+    }
+    expect(found).toEqual([]);
+    expect(looked).toHaveLength(LOOKS.length * Object.values(screens()).flat().length);
+  }, 900_000);
+
+  const lookAt = (desk: Desk, screen: Screen, look: string) =>
+    step(`looking at ${screen.name}, ${look}`, desk, async () => {
+      await desk.page.goto(`${harbour.url}${screen.path}`);
+      await seen(screen.shows(desk.page));
+      return judge(desk.page, `${screen.name}, ${look}`);
+    });
+});
+
+/** One line for each serious or critical finding, with the first place where it is. */
+async function judge(page: Page, where: string): Promise<string[]> {
+  const { violations } = await new AxeBuilder({ page }).withTags(RULES).analyze();
+  return violations
+    .filter(({ impact }) => impact === 'serious' || impact === 'critical')
+    .map(({ id, nodes }) => `${where}: ${id}, ${nodes.length} times, first ${nodes[0]?.html.slice(0, 160)}`);
+}
