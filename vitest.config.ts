@@ -19,6 +19,7 @@ export default defineConfig({
         ssr,
         test: {
           name: 'unit',
+          testTimeout: 30_000,
           include: ['{shared,drizzle,packages,apps,infra}/**/*.spec.{ts,tsx}'],
           exclude: ['**/node_modules/**', '**/dist/**'],
         },
