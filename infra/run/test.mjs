@@ -87,6 +87,7 @@ function ring(project) {
 if (!check('Packages', () => install(log))) finish();
 const toolsFound = check('Tools', tools);
 const built = check('Type-check and build', () => build(log));
+check('Type-check the tests', () => run(bin('tsc'), ['-p', 'tests']) === 0);
 check('Format and lint', () => run(bin('biome'), ['check', '--config-path=.config', '--error-on-warnings', '.']) === 0);
 check('Import directions', () => run(process.execPath, [join(ROOT, 'infra/run/check-imports.mjs')]) === 0);
 for (const project of ['unit', 'reference', 'api']) ring(project);
