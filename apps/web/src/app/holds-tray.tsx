@@ -3,12 +3,14 @@ import { notifications } from '@mantine/notifications';
 import { type BookingSummary, routes } from '@skyberth/shared';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { type ReactNode, useEffect } from 'react';
+import { useLocation, useNavigate } from 'react-router-dom';
 import { call } from '../lib/api-client.js';
-import { bookingQueries } from '../lib/booking-queries.js';
+import { bookingQueries, paymentQueries } from '../lib/booking-queries.js';
+import { paths } from '../lib/paths.js';
 import { sentenceOf } from '../lib/problem-fields.js';
 import { serverNowMs } from '../lib/server-clock.js';
 import { useCan, useSession } from '../lib/session.js';
-import { useCheckout } from '../lib/use-checkout.js';
+import { type CheckoutChoice, useCheckout } from '../lib/use-checkout.js';
 import { formatDuration, formatMoney, formatTime } from '../ui/format.js';
 import { HoldTray, TrayButton } from '../ui/hold-tray.js';
 
@@ -29,6 +31,7 @@ function OneHold({ booking, others }: { readonly booking: BookingSummary; readon
   const client = useQueryClient();
   const mayBuy = useCan()('bookings.buy');
   const checkout = useCheckout();
+  const payment = usePaying(booking, checkout.mutate);
   const refresh = () =>
     client.invalidateQueries({
       predicate: (query) => query.queryKey[0] === 'bookings' || query.queryKey[0] === 'passes',
@@ -63,11 +66,30 @@ function OneHold({ booking, others }: { readonly booking: BookingSummary; readon
           <TrayButton onClick={() => letGo.mutate()} disabled={letGo.isPending}>
             Let it go
           </TrayButton>
-          <TrayButton main onClick={() => checkout.mutate({ bookingId: booking.id })} disabled={checkout.isPending}>
-            {checkout.isPending ? 'Opening ...' : 'Pay and confirm'}
-          </TrayButton>
+          {payment && (
+            <TrayButton main onClick={payment.pay} disabled={checkout.isPending}>
+              {checkout.isPending ? 'Opening ...' : payment.words}
+            </TrayButton>
+          )}
         </>
       )}
     </HoldTray>
   );
+}
+
+/**
+ * What the main button does: with a saved card the choice of cards stands on the contact's own page, which needs no button
+ * here while it is open; otherwise straight to the payment page. Keeping a card is asked for on the contact's page only.
+ */
+function usePaying(
+  booking: BookingSummary,
+  checkout: (choice: CheckoutChoice) => void,
+): { words: string; pay: () => void } | null {
+  const navigate = useNavigate();
+  const { pathname } = useLocation();
+  const { data } = useQuery({ ...paymentQueries.cards(), enabled: useCan()('bookings.buy') });
+  const page = paths.booking(booking.id);
+  if (pathname === page) return null;
+  if ((data?.items.length ?? 0) > 0) return { words: 'Choose card and pay', pay: () => navigate(page) };
+  return { words: 'Pay and confirm', pay: () => checkout({ bookingId: booking.id }) };
 }

@@ -31,6 +31,9 @@ const COLOURS: Readonly<Record<BookingSummary['state'], string>> = {
   'in dispute': 'brass',
 };
 
+/** No year: the bookings fetched are those around one month. */
+const VIEWS = { views: ['day', 'week', 'month'] } as const satisfies { views: readonly ScheduleViewLevel[] };
+
 export default function BookingsCalendar({ filter, nowMs, onChange }: BookingsViewProps) {
   const navigate = useNavigate();
   const { mode, timeZone } = useTimeDisplay();
@@ -56,12 +59,13 @@ export default function BookingsCalendar({ filter, nowMs, onChange }: BookingsVi
         date={filter.day ?? wallText(wallTimeOf(nowMs, zone)).slice(0, 10)}
         onDateChange={(day) => onChange({ day })}
         view={view}
-        onViewChange={setView}
+        onViewChange={(next) => setView(next === 'year' ? 'month' : next)}
         events={events}
         onEventClick={(event) => navigate(paths.booking(String(event.id)))}
         layout="responsive"
-        monthViewProps={{ maxEventsPerDay: 3, firstDayOfWeek: 1 }}
-        weekViewProps={{ firstDayOfWeek: 1 }}
+        dayViewProps={{ viewSelectProps: VIEWS }}
+        weekViewProps={{ firstDayOfWeek: 1, weekendDays: [], viewSelectProps: VIEWS }}
+        monthViewProps={{ maxEventsPerDay: 3, firstDayOfWeek: 1, weekendDays: [], viewSelectProps: VIEWS }}
       />
     </>
   );

@@ -17,7 +17,7 @@ export function PaySection({ booking }: { readonly booking: Booking }) {
   const checkout = useCheckout();
   const cards = data?.items ?? [];
   const [chosen, setChosen] = useState<string | null>(null);
-  const [keeps, setKeeps] = useState(true);
+  const [keeps, setKeeps] = useState(false);
   const card = cards.find((one) => one.id === (chosen ?? cards[0]?.id));
   const price = formatMoney({ amountMinor: booking.toPayMinor, currency: booking.currency });
   return (
