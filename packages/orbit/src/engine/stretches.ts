@@ -9,6 +9,8 @@ const PROBE_MS = DAY_MS / 4;
 const MOST_PROBES = 400;
 /** An end found by halving is this sharp. */
 const SHARP_MS = 1;
+/** A decay shows first at one perigee, at the next one earlier in the search; each attempt ends the path before the one met. */
+const MOST_ATTEMPTS = 60;
 /** Shorter than this nothing can be sampled. */
 const LEAST_STRETCH_MS = 10;
 
@@ -65,18 +67,22 @@ function soundPart({ source, fromMs, toMs }: SourcePiece): SoundPart {
   const anchorMs = Math.min(toMs, Math.max(fromMs, epochMs));
   const lost = firstFailure(source, epochMs, anchorMs);
   if (lost) return { ephemeris: undefined, fault: lost.fault };
-  try {
-    return { ephemeris: Ephemeris.of(source, fromMs, toMs), fault: undefined };
-  } catch (error) {
-    if (!(error instanceof OrbitError)) throw error;
+  let [startMs, endMs] = [fromMs, toMs];
+  let fault: OrbitError | undefined;
+  for (let attempt = 0; attempt < MOST_ATTEMPTS && endMs - startMs >= LEAST_STRETCH_MS; attempt += 1) {
+    try {
+      return { ephemeris: Ephemeris.of(source, startMs, endMs), fault };
+    } catch (error) {
+      if (!(error instanceof OrbitError)) throw error;
+      const failedMs = error.data['timeMs'];
+      if (typeof failedMs !== 'number') return { ephemeris: undefined, fault: error };
+      const failure = firstFailure(source, anchorMs, failedMs) ?? { lastGoodMs: anchorMs, fault: error };
+      fault = failure.fault;
+      if (failedMs > anchorMs) endMs = Math.min(failure.lastGoodMs, endMs - SHARP_MS);
+      else startMs = Math.max(failure.lastGoodMs, startMs + SHARP_MS);
+    }
   }
-  const after = firstFailure(source, anchorMs, toMs);
-  const before = firstFailure(source, anchorMs, fromMs);
-  const endMs = after ? after.lastGoodMs : toMs;
-  const startMs = before ? before.lastGoodMs : fromMs;
-  const fault = after?.fault ?? before?.fault;
-  if (endMs - startMs < LEAST_STRETCH_MS || !fault) return { ephemeris: undefined, fault };
-  return { ephemeris: Ephemeris.of(source, startMs, endMs), fault };
+  return { ephemeris: undefined, fault };
 }
 
 interface Failure {
