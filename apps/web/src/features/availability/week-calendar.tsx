@@ -95,6 +95,7 @@ export function WeekCalendar(props: WeekCalendarProps) {
           classNames={{
             weekView: classes.grid ?? '',
             weekViewBackgroundEvent: classes.open ?? '',
+            weekViewDaySlot: classes.slot ?? '',
             currentTimeIndicatorTimeBubble: classes.nowPlate ?? '',
           }}
         />

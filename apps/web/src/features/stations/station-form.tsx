@@ -30,7 +30,7 @@ const rules = formRules(StationInput);
 
 export function StationForm({ initial, submitLabel, onSave, onSaved, onCancel, note }: StationFormProps) {
   const form = useForm<StationValues>({ initialValues: initial, validate: rules, validateInputOnBlur: true });
-  const zones = useMemo(() => timeZoneChoices(serverNowMs()), []);
+  const zones = useMemo(() => timeZoneChoices(serverNowMs(), initial.timeZone), [initial.timeZone]);
   const currencies = useMemo(currencyChoices, []);
   useLeaveGuard(form.isDirty() && !form.submitting, 'this station');
   const submit = form.onSubmit(

@@ -47,9 +47,9 @@ export const hasMoved = (station: Station, values: StationValues): boolean =>
   station.longitudeDeg !== values.longitudeDeg ||
   station.altitudeM !== values.altitudeM;
 
-/** IANA zones with their present distance from UTC, for a searchable list. */
-export function timeZoneChoices(nowMs: number): { value: string; label: string }[] {
-  return Intl.supportedValuesOf('timeZone').map((value) => {
+/** IANA zones with their present distance from UTC, for a searchable list; `chosen` is in it even as an older name. */
+export function timeZoneChoices(nowMs: number, chosen: string): { value: string; label: string }[] {
+  return [...new Set([chosen, 'UTC', ...Intl.supportedValuesOf('timeZone')])].map((value) => {
     const parts = new Intl.DateTimeFormat('en-GB', { timeZone: value, timeZoneName: 'longOffset' }).formatToParts(
       nowMs,
     );
