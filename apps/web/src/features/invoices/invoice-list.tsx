@@ -36,6 +36,9 @@ export function InvoiceTable({ items, withCustomer }: ListProps) {
             <Table.Tr className={classes.month}>
               <Table.Th scope="rowgroup" colSpan={withCustomer ? 4 : 3}>
                 {month.title}
+                <span className={classes.sumNote}>
+                  {month.items.length === 1 ? 'sum of 1' : `sums of ${month.items.length}`}
+                </span>
               </Table.Th>
               <SumCells sums={sumsOf(month.items)} />
             </Table.Tr>
@@ -102,14 +105,15 @@ export function InvoiceCards({ items, withCustomer }: ListProps) {
                 <MoneyText amountMinor={item.grossMinor} currency={item.currency} />
               </strong>
             </div>
+            {withCustomer && <div>{item.customerName}</div>}
             <div className={classes.cardLine}>
-              <DayTime atMs={Date.parse(item.issuedUtc)} />
+              <span>
+                <DayTime atMs={Date.parse(item.issuedUtc)} show="day" />, <ContactLink item={item} />
+              </span>
               <span className={classes.quiet}>
-                VAT <MoneyText amountMinor={item.vatMinor} currency={item.currency} />
+                of it VAT <MoneyText amountMinor={item.vatMinor} currency={item.currency} />
               </span>
             </div>
-            {withCustomer && <div>{item.customerName}</div>}
-            <ContactLink item={item} />
           </Paper>
         ))}
       </ul>

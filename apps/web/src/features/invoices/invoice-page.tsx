@@ -70,7 +70,7 @@ function Head({ invoice }: { readonly invoice: Invoice }) {
         <dd>
           <DayTime atMs={Date.parse(invoice.issuedUtc)} />
         </dd>
-        <dt>Supplied</dt>
+        <dt>Supply</dt>
         <dd>
           <DayTime atMs={Date.parse(invoice.suppliedOnUtc)} />
         </dd>

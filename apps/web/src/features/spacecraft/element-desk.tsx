@@ -11,6 +11,7 @@ import { ProblemNotice } from '../../ui/problem-notice.js';
 import { ElementReading } from './element-reading.js';
 import { ElementSaving } from './element-saving.js';
 import { ElementText, type ElementTextHandle } from './element-text.js';
+import elementClasses from './elements.module.css';
 import classes from './spacecraft.module.css';
 import type { ElementDeskState } from './use-element-desk.js';
 
@@ -41,9 +42,9 @@ export function ElementDesk({ desk, attachTo, onAttach }: ElementDeskProps) {
   const showLine = (line: number) => text.current?.showLine(line);
   const attachedTo = craft.data?.items.find((one) => one.id === attachTo) ?? null;
   return (
-    <div className={classes.desk}>
+    <div className={elementClasses.desk}>
       <DropArea onFile={takeFile}>
-        <div className={classes.textHead}>
+        <div className={elementClasses.textHead}>
           <label className={classes.heading} htmlFor="elements-text">
             Element sets
           </label>
@@ -59,7 +60,7 @@ export function ElementDesk({ desk, attachTo, onAttach }: ElementDeskProps) {
           faultyLines={faultyLines}
         />
       </DropArea>
-      <div className={classes.deskActs}>
+      <div className={elementClasses.deskActs}>
         <AttachSelect
           items={craft.data?.items ?? []}
           attachTo={attachTo}
@@ -151,7 +152,7 @@ interface AttachSelectProps {
 function AttachSelect({ items, attachTo, onAttach }: AttachSelectProps) {
   return (
     <Select
-      className={classes.attach}
+      className={elementClasses.attach}
       label="Belongs to"
       data={[
         { value: '', label: 'The spacecraft that each set names' },
@@ -186,13 +187,11 @@ function ReadActs({ desk, onFile }: Pick<ElementDeskProps, 'desk'> & { readonly 
           </Button>
         </>
       ) : (
-        <Button
-          variant={isRead ? 'default' : 'filled'}
-          onClick={() => desk.readAgain()}
-          disabled={desk.desk.text.trim() === '' || desk.isTooLong}
-        >
-          {desk.hasChangedSince ? 'Read again' : 'Read'}
-        </Button>
+        !isRead && (
+          <Button onClick={() => desk.readAgain()} disabled={desk.desk.text.trim() === '' || desk.isTooLong}>
+            {desk.hasChangedSince ? 'Read again' : 'Read'}
+          </Button>
+        )
       )}
     </div>
   );
@@ -210,7 +209,7 @@ function DropArea({ onFile, children }: DropAreaProps) {
   return (
     <fieldset
       aria-label="Element sets; a file may be dropped here"
-      className={classes.drop}
+      className={elementClasses.drop}
       data-over={isOver || undefined}
       onDragOver={(event) => {
         if (!hasFile(event)) return;

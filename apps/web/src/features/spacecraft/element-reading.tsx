@@ -2,10 +2,12 @@
 import { Pagination, Table } from '@mantine/core';
 import type { ElementFault, ReadElement } from '@skyberth/shared';
 import { type ReactNode, useState } from 'react';
+import { useIsPhone } from '../../lib/use-phone.js';
 import { DayTime } from '../../ui/day-time.js';
 import { Sign, type SignShape } from '../../ui/signs.js';
 import { ageWords, fateWords } from './element-words.js';
-import { goodWords } from './reading-words.js';
+import elementClasses from './elements.module.css';
+import { goodWords, ownSentence } from './reading-words.js';
 import classes from './spacecraft.module.css';
 
 interface ReadingProps {
@@ -15,22 +17,24 @@ interface ReadingProps {
 }
 
 export function ElementReading({ good, faults, onShowLine }: ReadingProps) {
+  const isPhone = useIsPhone();
+  const [Faults, Good] = isPhone ? [FaultList, GoodList] : [FaultTable, GoodTable];
   return (
     <>
       {faults.length > 0 && (
-        <section aria-labelledby="faults" className={classes.found}>
+        <section aria-labelledby="faults" className={elementClasses.found}>
           <h2 id="faults" className={classes.heading}>
             {faults.length} {faults.length === 1 ? 'thing is' : 'things are'} wrong
           </h2>
-          <FaultTable faults={faults} onShowLine={onShowLine} />
+          <Faults faults={faults} onShowLine={onShowLine} />
         </section>
       )}
       {good.length > 0 && (
-        <section aria-labelledby="good" className={classes.found}>
+        <section aria-labelledby="good" className={elementClasses.found}>
           <h2 id="good" className={classes.heading}>
             {goodWords(good)}
           </h2>
-          <GoodTable good={good} onShowLine={onShowLine} />
+          <Good good={good} onShowLine={onShowLine} />
         </section>
       )}
     </>
@@ -43,6 +47,38 @@ const FATE_SIGNS: Readonly<Record<ReadElement['fate'], SignShape>> = {
   older: 'half',
   duplicate: 'dashed',
 };
+
+function Fate({ each }: { readonly each: ReadElement }) {
+  return (
+    <span className={elementClasses.fate} data-fate={each.fate}>
+      <Sign shape={FATE_SIGNS[each.fate]} sizePx={12} />
+      {fateWords(each)}
+    </span>
+  );
+}
+
+function GoodList({ good, onShowLine }: Pick<ReadingProps, 'good' | 'onShowLine'>) {
+  return (
+    <InPages items={good}>
+      {(shown) => (
+        <ul className={elementClasses.readList}>
+          {shown.map((each) => (
+            <li key={`${each.line} ${each.catalogNumber} ${each.epochUtc}`}>
+              <LineButton line={each.line} onShowLine={onShowLine} />
+              <div>
+                <strong>{each.objectName}</strong>
+                <div className={classes.quiet}>
+                  <DayTime atMs={Date.parse(each.epochUtc)} />, {ageWords(each.ageH)}
+                </div>
+                <Fate each={each} />
+              </div>
+            </li>
+          ))}
+        </ul>
+      )}
+    </InPages>
+  );
+}
 
 function GoodTable({ good, onShowLine }: Pick<ReadingProps, 'good' | 'onShowLine'>) {
   return (
@@ -74,15 +110,41 @@ function GoodTable({ good, onShowLine }: Pick<ReadingProps, 'good' | 'onShowLine
                   <div className={classes.quiet}>{ageWords(each.ageH)}</div>
                 </Table.Td>
                 <Table.Td>
-                  <span className={classes.fate} data-fate={each.fate}>
-                    <Sign shape={FATE_SIGNS[each.fate]} sizePx={12} />
-                    {fateWords(each)}
-                  </span>
+                  <Fate each={each} />
                 </Table.Td>
               </Table.Tr>
             ))}
           </Table.Tbody>
         </Table>
+      )}
+    </InPages>
+  );
+}
+
+function OwnSentence({ fault }: { readonly fault: ElementFault }) {
+  const sentence = ownSentence(fault);
+  return sentence && <div className={classes.quiet}>{sentence}</div>;
+}
+
+function FaultList({ faults, onShowLine }: Pick<ReadingProps, 'faults' | 'onShowLine'>) {
+  return (
+    <InPages items={faults}>
+      {(shown) => (
+        <ul className={elementClasses.readList}>
+          {shown.map((fault) => (
+            <li key={`${fault.line} ${fault.field} ${fault.message}`}>
+              <LineButton line={fault.line} onShowLine={onShowLine} />
+              <div>
+                <strong>{fault.field}</strong>
+                <OwnSentence fault={fault} />
+                <div>
+                  Found {fault.found ? <code className={elementClasses.code}>{fault.found}</code> : 'nothing'}, expected{' '}
+                  {fault.expected}
+                </div>
+              </div>
+            </li>
+          ))}
+        </ul>
       )}
     </InPages>
   );
@@ -99,7 +161,6 @@ function FaultTable({ faults, onShowLine }: Pick<ReadingProps, 'faults' | 'onSho
               <Table.Th>Field</Table.Th>
               <Table.Th>Found</Table.Th>
               <Table.Th>Expected</Table.Th>
-              <Table.Th>What is wrong</Table.Th>
             </Table.Tr>
           </Table.Thead>
           <Table.Tbody>
@@ -113,13 +174,15 @@ function FaultTable({ faults, onShowLine }: Pick<ReadingProps, 'faults' | 'onSho
                 </Table.Td>
                 <Table.Td>
                   {fault.found ? (
-                    <code className={classes.code}>{fault.found}</code>
+                    <code className={elementClasses.code}>{fault.found}</code>
                   ) : (
                     <span className={classes.quiet}>nothing</span>
                   )}
                 </Table.Td>
-                <Table.Td>{fault.expected}</Table.Td>
-                <Table.Td>{fault.message}</Table.Td>
+                <Table.Td>
+                  {fault.expected}
+                  <OwnSentence fault={fault} />
+                </Table.Td>
               </Table.Tr>
             ))}
           </Table.Tbody>
@@ -133,7 +196,7 @@ function LineButton({ line, onShowLine }: { readonly line: number; readonly onSh
   return (
     <button
       type="button"
-      className={classes.lineButton}
+      className={elementClasses.lineButton}
       onClick={() => onShowLine(line)}
       aria-label={`Show line ${line}`}
     >

@@ -2,6 +2,7 @@
 import { Button, Checkbox } from '@mantine/core';
 import type { ReadElement, Spacecraft } from '@skyberth/shared';
 import { useState } from 'react';
+import elementClasses from './elements.module.css';
 import { countToSave, listWords, newCraftNames, saveBlock, saveLabel } from './reading-words.js';
 import classes from './spacecraft.module.css';
 
@@ -27,7 +28,7 @@ export function ElementSaving({ good, faultCount, attachedTo, isSaving, onSave }
   const count = countToSave(good, addSpacecraft);
   const choice = { keepGoodOnes: faultCount > 0 ? keepGoodOnes : !addSpacecraft, addSpacecraft };
   return (
-    <div className={classes.saving}>
+    <div className={elementClasses.saving}>
       <NumberNote good={good} attachedTo={attachedTo} />
       {names.length > 0 && (
         <Checkbox
@@ -37,7 +38,7 @@ export function ElementSaving({ good, faultCount, attachedTo, isSaving, onSave }
           description="Without it their sets are left out."
         />
       )}
-      {faultCount > 0 && good.length > 0 && (
+      {faultCount > 0 && count > 0 && (
         <Checkbox
           checked={keepGoodOnes}
           onChange={(event) => setKeepGoodOnes(event.currentTarget.checked)}

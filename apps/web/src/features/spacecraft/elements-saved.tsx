@@ -4,6 +4,7 @@ import type { ResponseOf, routes } from '@skyberth/shared';
 import { Link } from 'react-router-dom';
 import { paths } from '../../lib/paths.js';
 import { StateBadge } from '../../ui/state-badge.js';
+import elementClasses from './elements.module.css';
 import { savedWords } from './reading-words.js';
 import classes from './spacecraft.module.css';
 
@@ -22,7 +23,7 @@ export function ElementsSaved({ result, onAgain }: ElementsSavedProps) {
     <Paper withBorder className={classes.card} role="status">
       <h2 className={classes.heading}>{savedWords(result)}</h2>
       {faults.length > 0 && <div>{faults.length} faulty or unknown parts were left out.</div>}
-      <ul className={classes.savedList}>
+      <ul className={elementClasses.savedList}>
         {spacecraft.slice(0, MOST_NAMES).map((one) => (
           <li key={one.id}>
             <Anchor component={Link} to={paths.oneSpacecraft(one.id)}>

@@ -1,10 +1,11 @@
 /** The fields of one radio, with their units. */
-import { Button, NumberInput, SegmentedControl, Select, TextInput } from '@mantine/core';
+import { Button, Input, NumberInput, SegmentedControl, Select, TextInput } from '@mantine/core';
 import { BANDS, POLARISATIONS } from '@skyberth/shared';
 import { Caution } from '../../ui/caution.js';
 import { polarisationWords } from './craft-words.js';
 import { RateInput } from './rate-input.js';
 import classes from './spacecraft.module.css';
+import formClasses from './spacecraft-form.module.css';
 import type { RadioValues } from './spacecraft-values.js';
 
 interface RadioFieldsProps {
@@ -20,8 +21,8 @@ interface RadioFieldsProps {
 export function RadioFields({ index, radio, field, canCopy, onCopy, onRemove }: RadioFieldsProps) {
   const title = radio.name.trim() || `Radio ${index + 1}`;
   return (
-    <fieldset className={`${classes.group} ${classes.radioGroup}`} aria-label={title}>
-      <div className={classes.radioHead}>
+    <fieldset className={`${formClasses.group} ${formClasses.radioGroup}`} aria-label={title}>
+      <div className={formClasses.radioHead}>
         <h3 className={classes.radioName}>
           {title}
           <span className={classes.quiet}>
@@ -37,16 +38,18 @@ export function RadioFields({ index, radio, field, canCopy, onCopy, onRemove }: 
           </Button>
         </div>
       </div>
-      <SegmentedControl
-        className={classes.two}
-        aria-label={`Direction of ${title}`}
-        data={[
-          { value: 'downlink', label: 'Downlink: it sends' },
-          { value: 'uplink', label: 'Uplink: it hears' },
-        ]}
-        {...field('direction')}
-      />
-      <TextInput className={classes.two} label="Name" placeholder="Payload" required {...field('name')} />
+      <Input.Wrapper className={formClasses.two} label="Direction" labelElement="div">
+        <SegmentedControl
+          fullWidth
+          aria-label={`Direction of ${title}`}
+          data={[
+            { value: 'downlink', label: 'Downlink: it sends' },
+            { value: 'uplink', label: 'Uplink: it hears' },
+          ]}
+          {...field('direction')}
+        />
+      </Input.Wrapper>
+      <TextInput className={formClasses.two} label="Name" required {...field('name')} />
       <SignalFields field={field} rateBps={radio.dataRateBps} />
       {radio.direction === 'downlink' ? <DownlinkFields field={field} /> : <UplinkFields field={field} />}
       <NumberInput
@@ -89,8 +92,8 @@ function SignalFields({ field, rateBps }: FieldOf & { readonly rateBps: RadioVal
         allowDeselect={false}
         {...field('polarisation')}
       />
-      <TextInput label="Modulation" placeholder="OQPSK" required {...field('modulation')} />
-      <TextInput label="Coding" placeholder="CCSDS convolutional 1/2" required {...field('coding')} />
+      <TextInput label="Modulation" description="Such as OQPSK" required {...field('modulation')} />
+      <TextInput label="Coding" description="Such as CCSDS convolutional 1/2" required {...field('coding')} />
       <RateInput label="Data rate" required rateBps={rateBps} {...field('dataRateBps')} />
     </>
   );
@@ -131,7 +134,7 @@ function UplinkFields({ field }: FieldOf) {
 
 function UplinkCaution() {
   return (
-    <div className={classes.wide}>
+    <div className={formClasses.wide}>
       <Caution title="Only what your licence allows">
         <p>
           Frequency, bandwidth and power of an uplink stand in your licence and its coordination. No uplink is sold

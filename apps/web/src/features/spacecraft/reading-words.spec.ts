@@ -1,5 +1,14 @@
 import { describe, expect, it } from 'vitest';
-import { countToSave, goodWords, listWords, newCraftNames, saveBlock, savedWords, saveLabel } from './reading-words.js';
+import {
+  countToSave,
+  goodWords,
+  listWords,
+  newCraftNames,
+  ownSentence,
+  saveBlock,
+  savedWords,
+  saveLabel,
+} from './reading-words.js';
 
 const set = (fate: 'new' | 'new-spacecraft' | 'duplicate' | 'older', objectName = 'A', catalogNumber = 1) => ({
   fate,
@@ -31,6 +40,17 @@ describe('what was read', () => {
     expect(countToSave(good, true)).toBe(3);
     expect(countToSave(good, false)).toBe(2);
     expect(saveLabel(1)).toBe('Save 1 element set');
+  });
+});
+
+describe('what is wrong', () => {
+  it('is not said twice', () => {
+    const fault = { found: '4', expected: '1 in column 69' };
+    expect(ownSentence({ ...fault, message: 'Line 5, checksum: found "4", expected 1 in column 69.' })).toBeNull();
+    expect(ownSentence({ ...fault, message: 'The two lines carry different numbers.' })).toContain('two lines');
+    expect(ownSentence({ found: '', expected: '', message: 'The rest is not listed.' })).toBe(
+      'The rest is not listed.',
+    );
   });
 });
 

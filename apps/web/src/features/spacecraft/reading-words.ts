@@ -1,5 +1,5 @@
 /** What was read, in words, and what may be saved of it. Pure. */
-import type { ReadElement } from '@skyberth/shared';
+import type { ElementFault, ReadElement } from '@skyberth/shared';
 
 type Read = Pick<ReadElement, 'fate' | 'objectName' | 'objectId' | 'catalogNumber'>;
 
@@ -66,4 +66,13 @@ export function listWords(names: readonly string[], most = 4): string {
   const shown = rest > 1 ? [...names.slice(0, most), `${rest} more`] : [...names];
   const last = shown.pop();
   return shown.length > 0 ? `${shown.join(', ')} and ${last ?? ''}` : (last ?? '');
+}
+
+/** The sentence of a fault where it says more than what was found and what was expected, which stand beside it; else null. */
+export function ownSentence({
+  message,
+  found,
+  expected,
+}: Pick<ElementFault, 'message' | 'found' | 'expected'>): string | null {
+  return expected !== '' && message.includes(expected) && message.includes(found) ? null : message;
 }

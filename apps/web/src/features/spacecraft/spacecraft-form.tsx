@@ -9,6 +9,7 @@ import { useLeaveGuard } from '../../lib/use-leave-guard.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import { RadioFields } from './radio-fields.js';
 import classes from './spacecraft.module.css';
+import formClasses from './spacecraft-form.module.css';
 import {
   emptyRadio,
   radioLike,
@@ -52,11 +53,11 @@ export function SpacecraftForm({ initial, submitLabel, onSave, onSaved, onCancel
     (errors) => form.getInputNode(Object.keys(errors)[0] ?? '')?.focus(),
   );
   return (
-    <form onSubmit={submit} noValidate className={classes.form}>
+    <form onSubmit={submit} noValidate className={formClasses.form}>
       {form.errors[''] && <ProblemNotice title="The spacecraft was not saved">{form.errors['']}</ProblemNotice>}
-      <fieldset className={classes.group}>
+      <fieldset className={formClasses.group}>
         <legend>The spacecraft</legend>
-        <TextInput className={classes.two} label="Name" required {...form.getInputProps('name')} />
+        <TextInput label="Name" required {...form.getInputProps('name')} />
         <TextInput
           label="Short name"
           description="At most 6 characters, for the board"
@@ -127,14 +128,17 @@ function RadiosPart({ form }: RadiosPartProps) {
           canCopy={radios.length < MOST_RADIOS}
         />
       ))}
-      <div>
-        <Button
-          variant="default"
-          disabled={radios.length >= MOST_RADIOS}
-          onClick={() => form.insertListItem('radios', emptyRadio(newKey()))}
-        >
-          {radios.length === 0 ? 'Add a radio' : 'Add another radio'}
-        </Button>
+      <div className={classes.acts}>
+        {(['downlink', 'uplink'] as const).map((direction) => (
+          <Button
+            key={direction}
+            variant="default"
+            disabled={radios.length >= MOST_RADIOS}
+            onClick={() => form.insertListItem('radios', emptyRadio(newKey(), direction))}
+          >
+            {direction === 'downlink' ? 'Add a downlink' : 'Add an uplink'}
+          </Button>
+        ))}
       </div>
     </section>
   );

@@ -61,8 +61,10 @@ export function SpacecraftCards({ items, mayWrite }: ListProps) {
         <Paper component="li" withBorder key={craft.id} className={classes.card}>
           <NameCell craft={craft} />
           <ElementAge freshness={craft.freshness} elements={craft.elements} />
-          <OrbitCell craft={craft} />
-          <RadiosCell craft={craft} mayWrite={mayWrite} />
+          <div className={classes.cardPair}>
+            <OrbitCell craft={craft} />
+            <RadiosCell craft={craft} mayWrite={mayWrite} />
+          </div>
           <NextActs craft={craft} mayWrite={mayWrite} />
         </Paper>
       ))}

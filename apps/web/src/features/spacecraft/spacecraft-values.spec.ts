@@ -10,7 +10,7 @@ import {
 } from './spacecraft-values.js';
 
 const radio = (part: Partial<RadioValues> = {}): RadioValues => ({
-  ...emptyRadio('a'),
+  ...emptyRadio('a', 'downlink'),
   name: 'Payload',
   centreFrequencyMhz: 8_212.5,
   bandwidthKhz: 60_000,

@@ -38,10 +38,10 @@ export const emptySpacecraft = (): SpacecraftValues => ({
   radios: [],
 });
 
-export const emptyRadio = (key: string): RadioValues => ({
+export const emptyRadio = (key: string, direction: Radio['direction']): RadioValues => ({
   key,
   name: '',
-  direction: 'downlink',
+  direction,
   band: 'S',
   centreFrequencyMhz: '',
   bandwidthKhz: '',

@@ -14,6 +14,7 @@ const BOTTOM = HEIGHT - 24;
 const LEFT = 44;
 const RIGHT_GAP = 8;
 const DAY_MARK_PX = 56;
+const WORDS_PX = 60;
 /** The scale of seconds is one of powers of ten: each tenfold error is one step up. */
 const LEAST_S = 0.1;
 
@@ -79,6 +80,8 @@ function Drawing({ curve, ageH, errorS, width }: DrawingProps) {
   };
   const path = curve.points.map((point) => `${x(point.ageH).toFixed(1)} ${y(point.errorS).toFixed(1)}`).join(' L');
   const [ageingY, staleY] = [y(FRESHNESS_FROM_S.ageing), y(FRESHNESS_FROM_S.stale)];
+  // The curve begins low at the left, so the upper words stand there, beside the line of now where it is near.
+  const wordsX = x(ageH) < LEFT + WORDS_PX ? x(ageH) + 10 : LEFT + 8;
   const band = (top: number, bottom: number, colour: string) => (
     <rect x={LEFT} y={top} width={right - LEFT} height={bottom - top} fill={`var(--sk-${colour})`} />
   );
@@ -98,19 +101,36 @@ function Drawing({ curve, ageH, errorS, width }: DrawingProps) {
       <text x={LEFT - 8} y={staleY + 4} className={classes.scale}>
         {FRESHNESS_FROM_S.stale} s
       </text>
-      <text x={right - 8} y={TOP + 14} className={classes.band}>
+      <text x={wordsX} y={TOP + 14}>
         stale
       </text>
-      <text x={right - 8} y={staleY + 15} className={classes.band}>
+      <text x={wordsX} y={staleY + 15}>
         ageing
       </text>
       <text x={right - 8} y={BOTTOM - 7} className={classes.band}>
         fresh
       </text>
       <path d={`M${path}`} className={classes.curve} />
+      {curve.ageingH !== null && <TurnMark atX={x(curve.ageingH)} atY={ageingY} />}
+      {curve.staleH !== null && <TurnMark atX={x(curve.staleH)} atY={staleY} />}
       <DayMarks curve={curve} x={x} right={right} />
       <NowMark atX={x(ageH)} atY={y(errorS)} errorS={errorS} right={right} />
     </svg>
+  );
+}
+
+/** Where the curve passes a limit: a diamond with a line down to its day. */
+function TurnMark({ atX, atY }: { readonly atX: number; readonly atY: number }) {
+  return (
+    <g>
+      <path d={`M${atX} ${atY} V${BOTTOM}`} className={elementClasses.drop} />
+      <path
+        d={`M${atX} ${atY - 5} l5 5 l-5 5 l-5 -5 Z`}
+        fill="var(--sk-sheet)"
+        stroke="var(--sk-ink)"
+        strokeWidth="1.7"
+      />
+    </g>
   );
 }
 
