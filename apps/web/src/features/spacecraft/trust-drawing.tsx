@@ -123,7 +123,7 @@ function Drawing({ curve, ageH, errorS, width }: DrawingProps) {
 function TurnMark({ atX, atY }: { readonly atX: number; readonly atY: number }) {
   return (
     <g>
-      <path d={`M${atX} ${atY} V${BOTTOM}`} className={elementClasses.drop} />
+      <path d={`M${atX} ${atY} V${BOTTOM}`} className={classes.drop} />
       <path
         d={`M${atX} ${atY - 5} l5 5 l-5 5 l-5 -5 Z`}
         fill="var(--sk-sheet)"
