@@ -3,6 +3,7 @@ import { AxeBuilder } from '@axe-core/playwright';
 import { routes } from '@skyberth/shared';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { paths } from '../../apps/web/src/lib/paths.js';
 import { must } from '../api/harness/client.js';
 import { DESKTOP, type Desk, launchBrowser, openDesk, PHONE } from './harness/browser.js';
 import { seen } from './harness/fields.js';
@@ -78,33 +79,33 @@ describe('for everybody', () => {
     operator: [
       {
         name: 'find time',
-        path: '/find-time',
+        path: paths.findTime,
         shows: (page) => page.getByRole('status').filter({ hasText: /for sale of \d+ pass/ }),
       },
-      { name: 'bookings', path: '/bookings', shows: (page) => page.getByText('Confirmed', { exact: true }) },
+      { name: 'bookings', path: paths.bookings, shows: (page) => page.getByText('Confirmed', { exact: true }) },
       {
         name: 'bookings in the calendar',
-        path: '/bookings?view=calendar',
+        path: `${paths.bookings}?view=calendar`,
         shows: (page) => page.getByText('Times in UTC.'),
       },
       {
         name: 'contact',
-        path: `/bookings/${bookingId}`,
+        path: paths.booking(bookingId),
         shows: (page) => page.getByRole('heading', { name: 'Files' }),
       },
-      { name: 'spacecraft', path: '/spacecraft', shows: (page) => page.getByText('Pipit 99601') },
+      { name: 'spacecraft', path: paths.spacecraft, shows: (page) => page.getByText('Pipit 99601') },
     ],
     owner: [
-      { name: 'stations', path: '/stations', shows: (page) => page.getByText('Skerry') },
+      { name: 'stations', path: paths.stations, shows: (page) => page.getByText('Skerry') },
       ...['overview', 'mask', 'bands', 'prices', 'hours'].map((tab) => ({
         name: `antenna, ${tab}`,
-        path: `/antennas/${market.antenna.id}?tab=${tab}`,
+        path: paths.antennaTab(market.antenna.id, tab),
         shows: heading(market.antenna.name),
       })),
-      { name: 'requests', path: '/requests', shows: heading('Requests') },
+      { name: 'requests', path: paths.requests, shows: heading('Requests') },
     ],
-    admin: [{ name: 'approvals', path: '/approvals', shows: (page) => page.getByText('Skerry') }],
-    finance: [{ name: 'ledger', path: '/ledger', shows: heading('Ledger') }],
+    admin: [{ name: 'approvals', path: paths.approvals, shows: (page) => page.getByText('Skerry') }],
+    finance: [{ name: 'ledger', path: paths.ledger, shows: heading('Ledger') }],
   });
 
   it('shows nothing serious to an accessibility checker on any page, in any look', async () => {
@@ -115,7 +116,7 @@ describe('for everybody', () => {
       for (const [role, list] of Object.entries(screens())) {
         const desk = await openDesk(browser, { viewport, colorScheme });
         await step(`signing in, ${look.name}`, desk, async () => {
-          await desk.page.goto(`${harbour.url}/sign-in`);
+          await desk.page.goto(`${harbour.url}${paths.signIn}`);
           await seen(desk.page.getByRole('heading', { name: 'Sign in' }));
           if (role === 'operator') found.push(...(await judge(desk.page, `sign-in, ${look.name}`)));
           await signIn(desk.page, harbour.url, emails[role as keyof typeof emails]);

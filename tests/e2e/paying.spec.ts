@@ -91,7 +91,8 @@ describe('between the hold and the money', () => {
     });
     await step('letting it go from the contact page', desk, async () => {
       await page.getByRole('button', { name: 'Let the hold go' }).click();
-      await seen(page.getByText('Lapsed', { exact: true }));
+      await seen(page.getByText('Cancelled', { exact: true }));
+      await seen(page.getByText('The hold was let go.'));
     });
     expect(await harbour.mail.subjectsTo('knot.orbits@people.example')).not.toContainEqual(
       expect.stringMatching(/Confirmed|Invoice/),
