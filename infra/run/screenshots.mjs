@@ -40,7 +40,7 @@ async function openFirstBooking(page) {
   await page.waitForLoadState('networkidle');
 }
 async function openFirstMask(page) {
-  await page.locator('main a[href^="/antennas/"]').first().click();
+  await page.locator('main a[href^="/stations/antennas/"]').first().click();
   await page.waitForLoadState('networkidle');
   await page.goto(`${page.url().split('?')[0]}?tab=mask`);
 }

@@ -32,6 +32,7 @@ export function serverEnvironment({ dataDir, port, payments, smtpPort, mailPort,
     STRIPE_SECRET_KEY: secrets.paymentKey,
     STRIPE_WEBHOOK_SECRET: secrets.webhookSecret,
     SMTP_URL: `smtp://127.0.0.1:${smtpPort}`,
+    ELEMENT_FEED_URL: `http://127.0.0.1:${elementsPort}/elements/omm.json`,
     STAND_IN_HEALTH_URLS: [payments, mailPort, elementsPort].map((one) => `http://127.0.0.1:${one}/health`).join(','),
   };
 }

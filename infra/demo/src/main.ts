@@ -1,7 +1,7 @@
 /** Loads the demo scenario into the data folder named by the environment, from nothing. */
-import { rmSync, writeFileSync } from 'node:fs';
+import { mkdirSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { loadDemo } from './index.js';
+import { feedElements, loadDemo } from './index.js';
 
 const dataDir = process.env['SKYBERTH_DATA_DIR'];
 if (!dataDir) throw new Error('SKYBERTH_DATA_DIR is not set; the demo is loaded by npm start.');
@@ -15,6 +15,8 @@ const signIns = await loadDemo({
   days: Number(process.env['SKYBERTH_DEMO_DAYS'] ?? 92),
   say: (text) => console.log(text),
 });
+mkdirSync(join(dataDir, 'elements'), { recursive: true });
+writeFileSync(join(dataDir, 'elements', 'elements.json'), JSON.stringify(feedElements(Date.now()), null, 2));
 writeFileSync(
   join(dataDir, 'demo-loaded.json'),
   JSON.stringify({ loadedUtc: new Date().toISOString(), signIns }, null, 2),

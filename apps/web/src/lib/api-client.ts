@@ -79,10 +79,17 @@ async function send(route: RouteContract, input: LooseInput): Promise<Response> 
 
 let refreshing: Promise<boolean> | null = null;
 
+/** Another tab is renewing the same session just now; its new cookie is ours too, a moment later. */
+const OTHER_TAB_MS = 300;
+
 /** One refresh for all calls that found the session's short token gone. */
 function refreshSession(): Promise<boolean> {
   refreshing ??= send(routes.refresh, {})
-    .then((response) => response.ok)
+    .then(async (response) => {
+      if (response.status !== 409) return response.ok;
+      await new Promise((resolve) => setTimeout(resolve, OTHER_TAB_MS));
+      return true;
+    })
     .catch(() => false)
     .finally(() => {
       refreshing = null;

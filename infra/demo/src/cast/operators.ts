@@ -64,7 +64,7 @@ export const OPERATORS: readonly CastOperator[] = [
       'X',
       'S up',
     ]),
-    contactsPerDay: 1.6,
+    contactsPerDay: 0.9,
   },
   {
     name: 'Dunnage Weather',
@@ -77,7 +77,7 @@ export const OPERATORS: readonly CastOperator[] = [
       'S',
       'X',
     ]),
-    contactsPerDay: 1.1,
+    contactsPerDay: 0.6,
   },
   {
     name: 'Lanternfish Institute',
@@ -90,7 +90,7 @@ export const OPERATORS: readonly CastOperator[] = [
       'S',
       'UHF',
     ]),
-    contactsPerDay: 0.7,
+    contactsPerDay: 0.35,
   },
   {
     name: 'Groyne Maritime Signals',
@@ -100,6 +100,6 @@ export const OPERATORS: readonly CastOperator[] = [
       { name: 'Sina Faleolo', email: 'sina@groyne.example', role: 'member' },
     ],
     spacecraft: series('Groyne', 'G', 4, 82301, { altitudeKm: 600, inclinationDeg: 51.6, raanDeg: 300 }, ['S', 'UHF']),
-    contactsPerDay: 0.5,
+    contactsPerDay: 0.25,
   },
 ];

@@ -46,6 +46,7 @@ export class Stage {
     const config = readConfig({
       ...environment,
       JOBS: 'off',
+      ELEMENT_FEED_URL: undefined,
       PASS_WORKERS: '0',
       SKYBERTH_ADMIN_EMAIL: STAFF.admin,
       SKYBERTH_FINANCE_EMAIL: STAFF.finance,
