@@ -29,7 +29,12 @@ interface Screen {
   readonly shows: (page: Page) => ReturnType<Page['locator']>;
 }
 
+/** Four looks at some fifteen pages; a busy machine takes seconds for each. */
+const LOOK_MS = 900_000;
+
 const heading = (name: string | RegExp) => (page: Page) => page.getByRole('heading', { level: 1, name });
+
+const SIGN_IN: Screen = { name: 'sign-in', path: paths.signIn, shows: heading('Sign in') };
 
 describe('for everybody', () => {
   let harbour: Harbour;
@@ -105,39 +110,41 @@ describe('for everybody', () => {
       { name: 'requests', path: paths.requests, shows: heading('Requests') },
     ],
     admin: [{ name: 'approvals', path: paths.approvals, shows: (page) => page.getByText('Skerry') }],
-    finance: [{ name: 'ledger', path: paths.ledger, shows: heading('Ledger') }],
+    finance: [{ name: 'ledger', path: paths.ledger, shows: (page) => page.getByText('Every account is empty.') }],
   });
 
-  it('shows nothing serious to an accessibility checker on any page, in any look', async () => {
-    const found: string[] = [];
-    const looked: string[] = [];
-    for (const look of LOOKS) {
-      const { viewport, colorScheme } = look;
+  it(
+    'shows nothing serious to an accessibility checker on any page, in any look',
+    async () => {
+      const found: string[] = [];
       for (const [role, list] of Object.entries(screens())) {
-        const desk = await openDesk(browser, { viewport, colorScheme });
-        await step(`signing in, ${look.name}`, desk, async () => {
-          await desk.page.goto(`${harbour.url}${paths.signIn}`);
-          await seen(desk.page.getByRole('heading', { name: 'Sign in' }));
-          if (role === 'operator') found.push(...(await judge(desk.page, `sign-in, ${look.name}`)));
-          await signIn(desk.page, harbour.url, emails[role as keyof typeof emails]);
-        });
-        for (const screen of list) {
-          found.push(...(await lookAt(desk, screen, look.name)));
-          looked.push(`${screen.name}, ${look.name}`);
-        }
-        expect(desk.faults).toEqual([]);
+        const desk = await openDesk(browser);
+        if (role === 'operator') found.push(...(await lookAt(desk, SIGN_IN)));
+        const email = emails[role as keyof typeof emails];
+        await step(`signing in as ${role}`, desk, () => signIn(desk.page, harbour.url, email));
+        for (const screen of list) found.push(...(await lookAt(desk, screen)));
+        found.push(...desk.faults);
         await desk.context.close();
       }
-    }
-    expect(found).toEqual([]);
-    expect(looked).toHaveLength(LOOKS.length * Object.values(screens()).flat().length);
-  }, 900_000);
+      expect(found).toEqual([]);
+    },
+    LOOK_MS,
+  );
 
-  const lookAt = (desk: Desk, screen: Screen, look: string) =>
-    step(`looking at ${screen.name}, ${look}`, desk, async () => {
-      await desk.page.goto(`${harbour.url}${screen.path}`);
-      await seen(screen.shows(desk.page));
-      return judge(desk.page, `${screen.name}, ${look}`);
+  /** Loads the page once and judges it in every look; the page follows the window and the device's colours by itself. */
+  const lookAt = (desk: Desk, screen: Screen) =>
+    step(`looking at ${screen.name}`, desk, async () => {
+      const { page } = desk;
+      const found: string[] = [];
+      await page.goto(`${harbour.url}${screen.path}`);
+      for (const { name, viewport, colorScheme } of LOOKS) {
+        await page.setViewportSize(viewport);
+        await page.emulateMedia({ colorScheme });
+        await seen(page.locator(`html[data-mantine-color-scheme="${colorScheme}"]`));
+        await seen(screen.shows(page));
+        found.push(...(await judge(page, `${screen.name}, ${name}`)));
+      }
+      return found;
     });
 });
 
