@@ -63,6 +63,7 @@ export default function BookingsCalendar({ filter, nowMs, onChange }: BookingsVi
         events={events}
         onEventClick={(event) => navigate(paths.booking(String(event.id)))}
         layout="responsive"
+        className={classes.calendar ?? ''}
         dayViewProps={{ viewSelectProps: VIEWS }}
         weekViewProps={{ firstDayOfWeek: 1, weekendDays: [], viewSelectProps: VIEWS }}
         monthViewProps={{ maxEventsPerDay: 3, firstDayOfWeek: 1, weekendDays: [], viewSelectProps: VIEWS }}

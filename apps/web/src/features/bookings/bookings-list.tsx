@@ -1,4 +1,4 @@
-import { Anchor, Button, Pagination, Skeleton, Table } from '@mantine/core';
+import { Anchor, Button, Skeleton, Table } from '@mantine/core';
 import type { BookingSummary } from '@skyberth/shared';
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
@@ -9,6 +9,7 @@ import { useCan, useSession } from '../../lib/session.js';
 import { BookingBadge } from '../../ui/booking-badge.js';
 import { DayTime } from '../../ui/day-time.js';
 import { EmptyState } from '../../ui/empty-state.js';
+import { Pager } from '../../ui/pager.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import { Degrees, Duration, MoneyText } from '../../ui/values.js';
 import classes from './bookings.module.css';
@@ -65,9 +66,7 @@ export function BookingsList({ filter, nowMs, onChange }: BookingsViewProps) {
         <span role="status">
           {data.total} {data.total === 1 ? 'booking' : 'bookings'}
         </span>
-        {pages > 1 && (
-          <Pagination total={pages} value={filter.page} onChange={(page) => onChange({ page })} size="sm" withEdges />
-        )}
+        <Pager pages={pages} page={filter.page} onChange={(page) => onChange({ page })} />
       </div>
     </>
   );

@@ -1,7 +1,8 @@
 /** One contact, from the hold to the report: where it goes, what it costs, what happened and what may be done now. */
 import { Skeleton } from '@mantine/core';
 import type { Booking, PassDetail } from '@skyberth/shared';
-import { useQuery } from '@tanstack/react-query';
+import { useQuery, useQueryClient } from '@tanstack/react-query';
+import { useEffect, useState } from 'react';
 import { useParams, useSearchParams } from 'react-router-dom';
 import { bookingQueries } from '../../lib/booking-queries.js';
 import { sentenceOf } from '../../lib/problem-fields.js';
@@ -36,6 +37,7 @@ export function ContactPage() {
     // Back from the payment page the provider's word may be seconds behind; otherwise things change slowly.
     refetchInterval: ({ state }) => (isBack && state.data?.state === 'held' ? POLL_MS : LOOK_AGAIN_MS),
   });
+  useListsFollow(booking.data?.state);
   useTitle(booking.data ? `Berth ${booking.data.number}` : 'Contact');
   if (booking.error && !booking.data)
     return (
@@ -45,6 +47,19 @@ export function ContactPage() {
     );
   if (!booking.data) return <Skeleton height={600} aria-label="Loading the contact" />;
   return <Contact booking={booking.data} isBack={isBack} />;
+}
+
+/** A state that changed while the page looked on (paid, begun, ended) is news for the tray, the lists and the board. */
+function useListsFollow(state: Booking['state'] | undefined): void {
+  const client = useQueryClient();
+  const [known, setKnown] = useState(state);
+  useEffect(() => {
+    if (state === known) return;
+    setKnown(state);
+    if (known === undefined) return;
+    void client.invalidateQueries({ queryKey: ['bookings', 'list'] });
+    void client.invalidateQueries({ queryKey: ['passes'] });
+  }, [client, state, known]);
 }
 
 function Contact({ booking, isBack }: { readonly booking: Booking; readonly isBack: boolean }) {

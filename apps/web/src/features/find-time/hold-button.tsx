@@ -56,7 +56,7 @@ export function HoldButton({ detail, quote, request, onHeld }: HoldButtonProps) 
         onClick={() => hold.mutate()}
       >
         <span>Hold for 10 minutes</span>
-        <span className={classes.holdPrice}>{price}</span>
+        <span>{price}</span>
       </Button>
       <p className={classes.small}>
         Holds the antenna and the price. Nothing is charged yet.

@@ -1,8 +1,9 @@
-import { Pagination, Switch, Table } from '@mantine/core';
+import { Switch, Table } from '@mantine/core';
 import { useMemo, useState } from 'react';
 import { StateGlyph } from '../../drawing/tide-board/state-glyph.js';
 import { DayTime } from '../../ui/day-time.js';
 import { EmptyState } from '../../ui/empty-state.js';
+import { Pager } from '../../ui/pager.js';
 import { Degrees, Duration, MoneyText } from '../../ui/values.js';
 import classes from './find-time.module.css';
 import { type PassRow, passRows, type Sort, sortRows } from './pass-rows.js';
@@ -78,7 +79,7 @@ export function PassTable({ rows, pickedKey, onPick }: PassTableProps) {
           </Table.Tbody>
         </Table>
       </div>
-      {pages > 1 && <Pagination total={pages} value={at} onChange={setPage} mt="md" size="sm" withEdges />}
+      <Pager pages={pages} page={at} onChange={setPage} />
     </>
   );
 }
