@@ -11,7 +11,7 @@ import { PageTitle } from '../../ui/page-title.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import { MoneyText } from '../../ui/values.js';
 import { invoiceQueries } from './invoice-queries.js';
-import { addressLines, titleOf, vatWords } from './invoice-words.js';
+import { addressLines, subjectWords, titleOf, vatWords } from './invoice-words.js';
 import classes from './invoices.module.css';
 
 /** `/invoices/:id` */
@@ -48,7 +48,7 @@ function OneInvoice({ invoice }: { readonly invoice: Invoice }) {
       </PageTitle>
       <Paper withBorder className={classes.sheet}>
         <Head invoice={invoice} />
-        <h2 className={classes.subject}>{invoice.subject}</h2>
+        <h2 className={classes.subject}>{subjectWords(invoice.subject)}</h2>
         <div className={classes.scroll}>
           <Lines invoice={invoice} />
         </div>

@@ -1,6 +1,6 @@
 import type { InvoiceSummary } from '@skyberth/shared';
 import { describe, expect, it } from 'vitest';
-import { addressLines, byMonth, sumsOf, titleOf, vatWords } from './invoice-words.js';
+import { addressLines, byMonth, subjectWords, sumsOf, titleOf, vatWords } from './invoice-words.js';
 
 const invoice = (part: Partial<InvoiceSummary>): InvoiceSummary => ({
   id: '0193d2f0-0000-7000-8000-000000000001',
@@ -21,6 +21,10 @@ describe('words of invoices', () => {
   it('names the kind and the number', () => {
     expect(titleOf(invoice({}))).toBe('Invoice SKB-2026-000001');
     expect(titleOf(invoice({ kind: 'credit note', number: 'SKC-2026-000003' }))).toBe('Credit note SKC-2026-000003');
+  });
+
+  it('begins a heading with a capital', () => {
+    expect(subjectWords('cancelled 2026-335')).toBe('Cancelled 2026-335');
   });
 
   it('leaves out empty lines of an address', () => {

@@ -7,6 +7,9 @@ export function titleOf({ kind, number }: Pick<InvoiceSummary, 'kind' | 'number'
   return `${kind === 'invoice' ? 'Invoice' : 'Credit note'} ${number}`;
 }
 
+/** What was sold or credited, written as the heading that it is here. */
+export const subjectWords = (subject: string): string => subject.charAt(0).toUpperCase() + subject.slice(1);
+
 /** `Norway` for `NO`; the code itself where the browser has no name for it. */
 export function countryWords(country: string): string {
   return new Intl.DisplayNames('en', { type: 'region', fallback: 'code' }).of(country) ?? country;

@@ -35,6 +35,8 @@ describe('words of spacecraft', () => {
     expect(rateWords(150_000_000)).toBe('150\u00a0Mbit/s');
     expect(rateWords(1_250_000_000)).toBe('1.25\u00a0Gbit/s');
     expect(rateWords(300)).toBe('300\u00a0bit/s');
+    expect(rateWords(1_500_500)).toBe('1\u202f500.5\u00a0kbit/s');
+    expect(rateWords(0)).toBe('0\u00a0bit/s');
   });
 
   it('finds by name, number or designator, whatever the case', () => {

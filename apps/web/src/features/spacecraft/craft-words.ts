@@ -44,17 +44,17 @@ export function radioWords(radios: readonly Pick<Radio, 'band' | 'direction'>[])
     .join(', ');
 }
 
-/** `9.6 kbit/s`, `150 Mbit/s`: decimal units, no figure lost above three. */
+const RATE_UNITS = ['bit/s', 'kbit/s', 'Mbit/s', 'Gbit/s'] as const;
+const DECIMALS = [0, 1, 2, 3] as const;
+
+/** `9.6 kbit/s`, `150 Mbit/s`: the largest decimal unit that loses no figure of a whole rate within three decimals. */
 export function rateWords(rateBps: number): string {
-  const units = ['bit/s', 'kbit/s', 'Mbit/s', 'Gbit/s'] as const;
-  let value = rateBps;
-  let index = 0;
-  while (value >= 1_000 && index < units.length - 1) {
-    value /= 1_000;
-    index += 1;
+  for (const [index, unit] of [...RATE_UNITS.entries()].reverse()) {
+    const value = rateBps / 1_000 ** index;
+    const decimals = DECIMALS.find((count) => Number(value.toFixed(count)) === value);
+    if (value >= 1 && decimals !== undefined) return `${formatNumber(value, decimals)}\u00a0${unit}`;
   }
-  const decimals = [0, 1, 2, 3].find((count) => Number(value.toFixed(count)) === value) ?? 3;
-  return `${formatNumber(value, decimals)}\u00a0${units[index] ?? 'bit/s'}`;
+  return `${formatNumber(rateBps)}\u00a0bit/s`;
 }
 
 const POLARISATION_WORDS: Readonly<Record<Radio['polarisation'], string>> = {
