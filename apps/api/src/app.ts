@@ -21,13 +21,21 @@ export interface AppOptions {
 
 /** Creates the application without listening. Close it with `app.close()`, which stops jobs and the database. */
 export async function createApp(config: Config, options: AppOptions = {}): Promise<NestExpressApplication> {
-  const app = await NestFactory.create<NestExpressApplication>(AppModule.forRoot(config, options.clock ?? systemClock), {
-    rawBody: true,
-    logger: options.quiet ? false : ['error', 'warn', 'log'],
-    abortOnError: false,
-  });
+  const app = await NestFactory.create<NestExpressApplication>(
+    AppModule.forRoot(config, options.clock ?? systemClock),
+    {
+      rawBody: true,
+      logger: options.quiet ? false : ['error', 'warn', 'log'],
+      abortOnError: false,
+    },
+  );
   app.useBodyParser('json', { limit: BODY_LIMIT });
-  app.use(helmet({ contentSecurityPolicy: { directives: contentPolicy() }, strictTransportSecurity: config.publicUrl.startsWith('https:') }));
+  app.use(
+    helmet({
+      contentSecurityPolicy: { directives: contentPolicy() },
+      strictTransportSecurity: config.publicUrl.startsWith('https:'),
+    }),
+  );
   app.use(cookieParser());
   app.set('query parser', 'simple');
   app.set('trust proxy', 'loopback');
@@ -59,7 +67,10 @@ function serveWeb(app: NestExpressApplication, webDir: string): void {
   app.useStaticAssets(webDir, {
     index: false,
     setHeaders: (response, path) => {
-      response.setHeader('Cache-Control', path.includes('/assets/') ? 'public, max-age=31536000, immutable' : 'no-cache');
+      response.setHeader(
+        'Cache-Control',
+        path.includes('/assets/') ? 'public, max-age=31536000, immutable' : 'no-cache',
+      );
     },
   });
   app.use((request: Request, response: Response, next: NextFunction) => {

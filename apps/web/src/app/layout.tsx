@@ -74,6 +74,7 @@ const initialsOf = (name: string): string =>
 
 /** A new page begins at its heading, for a keyboard and for a reader of the screen. */
 function useFocusOnNewPage(path: string): void {
+  // biome-ignore lint/correctness/useExhaustiveDependencies: a new path is the reason to run, though its text is not read.
   useEffect(() => {
     const heading = document.querySelector<HTMLElement>('#page h1');
     if (document.activeElement === document.body) heading?.focus({ preventScroll: true });
