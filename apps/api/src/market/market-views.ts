@@ -18,16 +18,12 @@ export const utcInterval = (each: Period): { fromUtc: string; toUtc: string } =>
   toUtc: utc(each.toMs),
 });
 
-/** Puts the passes, which are text already, into the object that the head begins. */
-export function withPasses(head: string, passes: readonly Uint8Array[]): Uint8Array {
-  const some = passes.filter((each) => each.byteLength > 0);
-  const parts: Uint8Array[] = [Buffer.from(`${head.slice(0, -1)},"passes":[`)];
-  some.forEach((each, index) => {
-    if (index > 0) parts.push(Buffer.from(','));
-    parts.push(each);
-  });
-  parts.push(Buffer.from(']}'));
-  return Buffer.concat(parts);
+/** Puts the passes, which are text already and each behind a comma, into the object that the head begins. */
+export function withPasses(head: string, passes: readonly Uint8Array[]): Uint8Array[] {
+  const [first, ...rest] = passes;
+  const opening = Buffer.from(`${head.slice(0, -1)},"passes":[`);
+  const inside = first === undefined ? [] : [first.subarray(1), ...rest];
+  return [opening, ...inside, Buffer.from(']}')];
 }
 
 export function foundCraft(craft: CraftInput, fault: string | null, period: Period, nowMs: number): FoundCraft {

@@ -1,4 +1,5 @@
 /** Translates between HTTP and the market. */
+import { Readable } from 'node:stream';
 import { Controller, Res, StreamableFile } from '@nestjs/common';
 import { type PassDetail, type ResponseOf, routes } from '@skyberth/shared';
 import type { Response } from 'express';
@@ -20,8 +21,9 @@ export class MarketController {
     @Input() input: HandlerInput<typeof routes.searchPasses>,
     @Res({ passthrough: true }) response: Response,
   ): Promise<StreamableFile> {
-    const bytes = await this.market.search(input.caller.organisationId, input.body, gone(response));
-    return new StreamableFile(bytes, { type: 'application/json; charset=utf-8', length: bytes.byteLength });
+    const pieces = await this.market.search(input.caller.organisationId, input.body, gone(response));
+    const length = pieces.reduce((sum, piece) => sum + piece.byteLength, 0);
+    return new StreamableFile(Readable.from(pieces), { type: 'application/json; charset=utf-8', length });
   }
 
   @Handles(routes.passDetail)

@@ -74,10 +74,10 @@ export class MarketService {
   }
 
   /**
-   * The whole answer as JSON bytes, in the form of `SearchResult`. Throws `not-found` for someone else's spacecraft and
+   * The whole answer as JSON in pieces, in the form of `SearchResult`. Throws `not-found` for someone else's spacecraft and
    * `too-large` where there are more passes than can be shown.
    */
-  async search(operatorId: string, input: SearchInput, signal: AbortSignal): Promise<Uint8Array> {
+  async search(operatorId: string, input: SearchInput, signal: AbortSignal): Promise<Uint8Array[]> {
     const nowMs = this.clock.nowMs();
     const period: Period = { fromMs: Date.parse(input.fromUtc), toMs: Date.parse(input.toUtc) };
     const about: Period = { fromMs: period.fromMs - ABOUT_MS, toMs: period.toMs + ABOUT_MS };
@@ -108,7 +108,7 @@ export class MarketService {
     });
     return withPasses(
       JSON.stringify(head),
-      found.map((each) => each.json),
+      found.flatMap((each) => each.json),
     );
   }
 

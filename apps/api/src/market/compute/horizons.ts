@@ -25,7 +25,7 @@ export class Horizons {
     const horizon: Horizon = {
       frame: siteFrame(antenna.site),
       mask,
-      maskDeg: (azimuthDeg) => maskElevationDeg(mask, azimuthDeg),
+      maskDeg: mask.flat ? () => mask.lowestDeg : (azimuthDeg) => maskElevationDeg(mask, azimuthDeg),
     };
     this.kept.set(key, horizon, 1);
     return horizon;

@@ -5,7 +5,8 @@ import { JsonWriter } from './json-writer.js';
 const written = (work: (writer: JsonWriter) => void, capacity?: number): string => {
   const writer = new JsonWriter(capacity);
   work(writer);
-  return new TextDecoder().decode(writer.finish());
+  const { bytes, from, to } = writer.since(0);
+  return bytes.toString('utf8', from, to);
 };
 
 describe('JsonWriter', () => {

@@ -1,6 +1,7 @@
 /**
  * Writes JSON as bytes, number by number. Turning hundreds of thousands of fractions into the shortest text that reads back,
- * as `JSON.stringify` must, costs more than finding the passes; here the decimals are known beforehand.
+ * as `JSON.stringify` must, costs more than finding the passes; here the decimals are known beforehand. The bytes lie in
+ * shared memory, so that another thread can send them without a copy; they are never changed once written.
  */
 
 const FIRST_BYTES = 65_536;
@@ -25,7 +26,7 @@ export class JsonWriter {
   private dayText = '';
 
   constructor(capacity = FIRST_BYTES) {
-    this.bytes = Buffer.allocUnsafeSlow(capacity);
+    this.bytes = Buffer.from(new SharedArrayBuffer(capacity));
   }
 
   get length(): number {
@@ -98,14 +99,9 @@ export class JsonWriter {
     this.at += bytes.copy(this.bytes, this.at, from, to);
   }
 
-  /** Everything since `from`, to be copied later. Room is kept behind it, so that more can follow. */
+  /** Everything since `from`. More may be written behind it. */
   since(from: number): WrittenText {
     return { bytes: this.bytes, from, to: this.at };
-  }
-
-  /** What was written, in a buffer of its own that can be handed to another thread. */
-  finish(): Uint8Array {
-    return new Uint8Array(this.bytes.buffer as ArrayBuffer, this.bytes.byteOffset, this.at);
   }
 
   private whole(value: number): void {
@@ -126,7 +122,7 @@ export class JsonWriter {
 
   private reserve(more: number): void {
     if (this.at + more <= this.bytes.length) return;
-    const larger = Buffer.allocUnsafeSlow(Math.max(this.bytes.length * 2, this.at + more));
+    const larger = Buffer.from(new SharedArrayBuffer(Math.max(this.bytes.length * 2, this.at + more)));
     this.bytes.copy(larger, 0, 0, this.at);
     this.bytes = larger;
   }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { SAMPLE_NOW_MS, sampleAntenna, sampleFlying, sampleSearch } from '../testing/samples.js';
+import { jsonText, SAMPLE_NOW_MS, sampleAntenna, sampleFlying, sampleSearch } from '../testing/samples.js';
 import type { PassJob, PassOutcome } from '../workers/job-types.js';
 import { PassDesk } from './pass-desk.js';
 
@@ -9,7 +9,7 @@ const desk = new PassDesk();
 const whole = (() => {
   const outcome = desk.carryOut(sampleSearch());
   if (outcome.kind !== 'found') throw new Error(outcome.kind);
-  const passes = JSON.parse(`[${new TextDecoder().decode(outcome.json)}]`);
+  const passes = JSON.parse(jsonText(outcome.json));
   const { geometry, parts } = passes.find((pass: { state: string }) => pass.state === 'for sale');
   return { aosMs: Date.parse(geometry.aosUtc), losMs: Date.parse(geometry.losUtc), totalMinor: parts[0].totalMinor };
 })();

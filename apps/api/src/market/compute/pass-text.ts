@@ -3,13 +3,13 @@ import type { Interval } from '@skyberth/market';
 import type { FoundPass } from '@skyberth/shared';
 import type { AntennaInput, CraftInput, ElementsSpan } from '../workers/job-types.js';
 import type { Horizon } from './horizons.js';
-import { JsonWriter } from './json-writer.js';
+import { JsonWriter, type WrittenText } from './json-writer.js';
 import type { Sale } from './sales.js';
 import type { Stay } from './stay.js';
 import type { Look, TrackTables } from './track-table.js';
 
-/** Steps along a pass: enough for a smooth curve of a few hundred pixels. */
-export const PROFILE_STEPS = 32;
+/** Steps along a pass, and tenths of a degree: enough for a smooth curve of a few hundred pixels. */
+export const PROFILE_STEPS = 28;
 /** Passes are written into chunks of this size; one holds some three hundred. */
 const CHUNK_BYTES = 262_144;
 /** No pass without reasons and parts is longer; most are a third of it. */
@@ -36,18 +36,15 @@ export class PassTexts {
 
   constructor(private readonly tables: TrackTables) {}
 
-  /** Writes one pass in the form of `FoundPass`; the text stays with the pass where it may be given again. */
-  write(out: JsonWriter, sent: Sent): void {
+  /** Writes one pass in the form of `FoundPass`, behind a comma; the text stays with the pass where it may be given again. */
+  write(sent: Sent): WrittenText {
     const { stay, keep, sale } = sent;
-    if (keep === null) {
-      this.writePass(out, sent);
-      return;
-    }
     const chunk = this.roomFor(sent);
     const from = chunk.length;
     this.writePass(chunk, sent);
-    stay.answer = { ...keep, text: chunk.since(from), forSale: isForSale(sale) };
-    out.copy(stay.answer.text);
+    const text = chunk.since(from);
+    if (keep !== null) stay.answer = { ...keep, text, forSale: isForSale(sale) };
+    return text;
   }
 
   /** The chunk to write into; what is written never moves afterwards. */
@@ -60,7 +57,7 @@ export class PassTexts {
 
   private writePass(out: JsonWriter, sent: Sent): void {
     const { stay, craft, antenna, sale } = sent;
-    out.ascii(`{"key":"${antenna.id.slice(-12)}-${craft.id.slice(-12)}-`);
+    out.ascii(`,{"key":"${antenna.id.slice(-12)}-${craft.id.slice(-12)}-`);
     out.fixed(stay.aosMs, 0);
     out.ascii(`","antennaId":"${antenna.id}","spacecraftId":"${craft.id}","currency":"${antenna.price.currency}"`);
     out.ascii(`,"state":"${sale.state}","bookingId":${sale.bookingId === null ? 'null' : `"${sale.bookingId}"`}`);
@@ -86,7 +83,7 @@ export class PassTexts {
     writeGeometry(out, stay);
     out.ascii(',');
     this.writeProfile(out, sent);
-    if (sent.keep !== null) stay.shape = out.since(from);
+    stay.shape = out.since(from);
   }
 
   private writeProfile(out: JsonWriter, { stay, craft, horizon }: Sent): void {
@@ -103,9 +100,9 @@ export class PassTexts {
     out.ascii(',"stepS":');
     out.fixed(stepMs / 1000, 8);
     out.ascii(',"elevationDeg":[');
-    writeList(out, elevations, 2);
+    writeList(out, elevations, 1);
     out.ascii('],"maskDeg":[');
-    writeList(out, masks, 2);
+    writeList(out, masks, 1);
     out.ascii(']}');
   }
 }
@@ -151,7 +148,7 @@ function writeGeometry(out: JsonWriter, stay: Stay): void {
   out.ascii('}');
 }
 
-function writeList(out: JsonWriter, values: ArrayLike<number>, decimals: 2 | 3 | 4 | 6): void {
+function writeList(out: JsonWriter, values: ArrayLike<number>, decimals: 1 | 3 | 4 | 6): void {
   for (let i = 0; i < values.length; i += 1) {
     if (i > 0) out.ascii(',');
     out.fixed(values[i] ?? Number.NaN, decimals);

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { SAMPLE_NOW_MS, sampleAntenna, sampleFlying, sampleSearch } from '../testing/samples.js';
+import { jsonText, SAMPLE_NOW_MS, sampleAntenna, sampleFlying, sampleSearch } from '../testing/samples.js';
 import type { SearchJob } from '../workers/job-types.js';
 import { PassDesk } from './pass-desk.js';
 
@@ -9,7 +9,7 @@ const DAY_MS = 24 * HOUR_MS;
 const text = (desk: PassDesk, job: SearchJob): string => {
   const outcome = desk.carryOut(job);
   if (outcome.kind !== 'found') throw new Error(outcome.kind);
-  return `${outcome.forSale} ${new TextDecoder().decode(outcome.json)}`;
+  return `${outcome.forSale} ${jsonText(outcome.json)}`;
 };
 
 describe('answers given again', () => {

@@ -2,7 +2,7 @@
 import { OrbitError } from '@skyberth/orbit';
 import type { CraftInput, SearchJob, SearchOutcome } from '../workers/job-types.js';
 import type { Horizons } from './horizons.js';
-import { JsonWriter } from './json-writer.js';
+import type { WrittenText } from './json-writer.js';
 import { fitOf } from './objections.js';
 import type { OpeningHours } from './opening-hours.js';
 import type { PassBlocks } from './pass-blocks.js';
@@ -22,11 +22,8 @@ export interface SearchTools {
   readonly texts: PassTexts;
 }
 
-/** Room to begin with for each pass, so that the text rarely has to grow. */
-const BYTES_A_PASS = 1_400;
-
 /** A pass of the answer: its text from before, or what there is to write. */
-type Found = { readonly stay: Stay; readonly known: SentAnswer } | { readonly stay: Stay; readonly sent: Sent };
+type Found = { readonly known: SentAnswer } | { readonly sent: Sent };
 
 /** Carries a search out. Elements that cannot be used are named; the other spacecraft are searched all the same. */
 export function searchPasses(job: SearchJob, tools: SearchTools): SearchOutcome {
@@ -49,17 +46,22 @@ export function searchPasses(job: SearchJob, tools: SearchTools): SearchOutcome 
   return { kind: 'found', json: jsonOf(all, tools), passes: all.length, forSale, faults };
 }
 
-function jsonOf(all: readonly Found[], { texts }: SearchTools): Uint8Array {
-  const out = new JsonWriter(all.length * BYTES_A_PASS);
-  all.forEach((each, index) => {
-    if (index > 0) out.ascii(',');
-    if ('known' in each) out.copy(each.known.text);
-    else texts.write(out, each.sent);
-  });
-  return out.finish();
+/** The text of all passes in few pieces: what was written one after the other lies so in memory. */
+function jsonOf(all: readonly Found[], { texts }: SearchTools): Uint8Array[] {
+  const pieces: WrittenText[] = [];
+  for (const each of all) {
+    const text = 'known' in each ? each.known.text : texts.write(each.sent);
+    const last = pieces.at(-1);
+    if (last !== undefined && last.bytes === text.bytes && last.to === text.from) {
+      pieces[pieces.length - 1] = { ...last, to: text.to };
+    } else {
+      pieces.push(text);
+    }
+  }
+  return pieces.map(({ bytes, from, to }) => new Uint8Array(bytes.buffer, bytes.byteOffset + from, to - from));
 }
 
-/** Every pass of one spacecraft, sorted by AOS. */
+/** Every pass of one spacecraft, antenna by antenna, sorted by AOS. */
 function searchCraft(
   craft: CraftInput,
   job: SearchJob,
@@ -87,14 +89,13 @@ function searchCraft(
     const sales = offersOf(question).map((offers, place) => saleOf(fresh[place] as Stay, offers, question));
     let next = 0;
     return own.map((stay) => {
-      if (stay.answer !== null && isKnown(stay, name, nowMs)) return { stay, known: stay.answer };
+      if (stay.answer !== null && isKnown(stay, name, nowMs)) return { known: stay.answer };
       const sale = sales[next++] as Sale;
       const at = sameAnswer(stay, antenna, nowMs);
       const keep = at === null ? null : { question: name, at };
-      return { stay, sent: { stay, craft, antenna, horizon, sale, keep } };
+      return { sent: { stay, craft, antenna, horizon, sale, keep } };
     });
   });
-  found.sort((a, b) => a.stay.aosMs - b.stay.aosMs);
   return { found, fault };
 }
 

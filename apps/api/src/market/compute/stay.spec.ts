@@ -10,6 +10,7 @@ const stay = (
   elementSetId: 'e',
   shape: null,
   answer: null,
+  joined: null,
   aosMs,
   tcaMs: (aosMs + losMs) / 2,
   losMs,

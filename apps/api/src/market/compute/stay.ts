@@ -11,6 +11,8 @@ export interface Stay extends Pass {
   shape: WrittenText | null;
   /** The whole pass as it was last sent, and for which question; null until then. */
   answer: SentAnswer | null;
+  /** What joining it with the next day's piece has made, so that the whole is remembered like any other stay. */
+  joined: { readonly second: Stay; readonly whole: Stay } | null;
 }
 
 export interface SentAnswer {
@@ -62,6 +64,11 @@ export function joinDays(stays: readonly Stay[]): Stay[] {
 }
 
 function join(first: Stay, second: Stay): Stay {
+  if (first.joined?.second !== second) first.joined = { second, whole: joinAnew(first, second) };
+  return first.joined.whole;
+}
+
+function joinAnew(first: Stay, second: Stay): Stay {
   const higher = second.maxElevationDeg > first.maxElevationDeg ? second : first;
   const three = (of: (stay: Stay) => AosHighestLos<number>): AosHighestLos<number> => [
     of(first)[0],
@@ -72,6 +79,7 @@ function join(first: Stay, second: Stay): Stay {
     elementSetId: first.elementSetId,
     shape: null,
     answer: null,
+    joined: null,
     aosMs: first.aosMs,
     clippedStart: first.clippedStart,
     tcaMs: higher.tcaMs,

@@ -148,3 +148,8 @@ export function sampleSearch(changes: Partial<SearchJob> = {}): SearchJob {
     ...changes,
   };
 }
+
+/** What the pieces of a search's answer say, as a JSON list. */
+export function jsonText(pieces: readonly Uint8Array[]): string {
+  return `[${Buffer.concat(pieces).toString('utf8').slice(1)}]`;
+}

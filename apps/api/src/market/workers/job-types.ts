@@ -110,8 +110,11 @@ export interface SearchJob {
 export type SearchOutcome =
   | {
       readonly kind: 'found';
-      /** The passes as JSON, comma-separated, without the brackets around them. Objects this many would hold up the event loop. */
-      readonly json: Uint8Array;
+      /**
+       * The passes as JSON in pieces of shared memory, each pass behind a comma, without the brackets around them; by
+       * spacecraft, antenna and AOS. As objects, and even as copies, so many would hold up the event loop.
+       */
+      readonly json: readonly Uint8Array[];
       readonly passes: number;
       readonly forSale: number;
       /** What stopped a spacecraft's elements from being used, by spacecraft; the others are complete. */
