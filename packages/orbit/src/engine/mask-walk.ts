@@ -10,6 +10,8 @@ import { type CompiledMask, maskLineAt } from './mask.js';
 const TURN = 2 * Math.PI;
 const ENOUGH = 1e-8;
 const MOST_ROUNDS = 80;
+/** A 64th of a piece is passed corner by corner, whatever the mask. */
+const MOST_HALVINGS = 6;
 /** The second of two corners at a cliff. */
 const ON_CORNER = 1e-12;
 /** A sweep this close to a whole turn is none at all, seen through rounding. */
@@ -19,6 +21,13 @@ const NEARLY_TURN = TURN - 1e-6;
 export interface Gate {
   open(x: number): void;
   close(x: number): void;
+}
+
+/** Where the path stands in the sky at one place, radians. */
+interface Bearing {
+  readonly x: number;
+  readonly azimuth: number;
+  readonly elevation: number;
 }
 
 export class MaskWalk {
@@ -47,17 +56,64 @@ export class MaskWalk {
   /** Walks from x0 to x1. */
   walk(x0: number, x1: number): void {
     const { path } = this;
-    path.evaluateBearing(x0);
+    const start = this.bearingAt(x0);
     const rate0 = path.azimuthRate;
-    path.evaluateBearing(x1);
+    const end = this.bearingAt(x1);
     const rate1 = path.azimuthRate;
     if (rate0 * rate1 >= 0) {
-      this.sweep(x0, x1, rate0 + rate1 >= 0 ? 1 : -1);
+      this.narrow(start, end, rate0 + rate1 >= 0 ? 1 : -1, 0);
       return;
     }
-    const turn = this.solve(x0, x1, rate0, () => path.azimuthRate);
-    this.sweep(x0, turn, rate0 > 0 ? 1 : -1);
-    this.sweep(turn, x1, rate1 > 0 ? 1 : -1);
+    const turn = this.bearingAt(this.solve(x0, x1, rate0, () => path.azimuthRate));
+    this.narrow(start, turn, rate0 > 0 ? 1 : -1, 0);
+    this.narrow(turn, end, rate1 > 0 ? 1 : -1, 0);
+  }
+
+  private bearingAt(x: number): Bearing {
+    const { path } = this;
+    path.evaluateBearing(x);
+    return { x, azimuth: path.azimuth, elevation: path.elevation };
+  }
+
+  /**
+   * A piece along which elevation and azimuth each run one way. Most of it is far over or far under all of the horizon that it
+   * passes, and is settled by its two ends; what is not is halved, until a part meets a single line or is short.
+   */
+  private narrow(start: Bearing, end: Bearing, way: 1 | -1, halvings: number): void {
+    const { azimuths } = this;
+    const first = way === 1 ? start.azimuth : end.azimuth;
+    const last = way === 1 ? end.azimuth : start.azimuth;
+    const width = ahead(first, last, 1);
+    let line = maskLineAt(this.mask, ahead(0, first, 1) / DEG);
+    let lowest = this.heightOf(line, first);
+    let highest = lowest;
+    let corners = 0;
+    for (; corners < azimuths.length; corners += 1) {
+      const next = line + 1 === azimuths.length ? 0 : line + 1;
+      if (ahead(first, azimuths[next]!, 1) > width) break;
+      line = next;
+      lowest = Math.min(lowest, this.elevations[line]!);
+      highest = Math.max(highest, this.elevations[line]!);
+    }
+    const height = this.heightOf(line, last);
+    if (width > NEARLY_TURN) {
+      this.sweep(start.x, end.x, way);
+    } else if (Math.min(start.elevation, end.elevation) > Math.max(highest, height)) {
+      this.gate.open(start.x);
+    } else if (Math.max(start.elevation, end.elevation) < Math.min(lowest, height)) {
+      this.gate.close(start.x);
+    } else if (corners === 0 || halvings === MOST_HALVINGS) {
+      this.sweep(start.x, end.x, way);
+    } else {
+      const middle = this.bearingAt(0.5 * (start.x + end.x));
+      this.narrow(start, middle, way, halvings + 1);
+      this.narrow(middle, end, way, halvings + 1);
+    }
+  }
+
+  /** Height of a line in an azimuth. */
+  private heightOf(line: number, azimuth: number): number {
+    return this.elevations[line]! + this.slopes[line]! * signedAngle(azimuth - this.azimuths[line]!);
   }
 
   /** A piece along which the azimuth runs one way, corner by corner. */

@@ -18,10 +18,10 @@ const FALLBACK_STEP_S = 30;
 
 /**
  * Step in radians of the fastest turning in the path as the Earth sees it. The remainder of eight-point interpolation is
- * about 0.001 (step)^8 of the orbit's size: 0.26 rad leaves 16 cm in low orbit, 0.18 rad is for the slow high ones, whose
- * error in metres takes longer to pass a horizon.
+ * about 0.001 (step)^8 of the orbit's size: 0.2 rad leaves 2 cm in low orbit, which is a few microseconds of AOS, and still
+ * under a millisecond where a pass rises a thousandth of a degree over the mask; 0.18 rad leaves 5 cm in the slow high ones.
  */
-const STEP_LOW_RAD = 0.26;
+const STEP_LOW_RAD = 0.2;
 const STEP_HIGH_RAD = 0.18;
 /** Rad/s; a period of 225 minutes, where SGP4 itself divides near from deep space. */
 const SLOW_MOTION = TURN / (225 * 60);
