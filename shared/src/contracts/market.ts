@@ -142,7 +142,7 @@ export const SearchResult = z.object({
       fault: z.string().nullable(),
     }),
   ),
-  passes: z.array(FoundPass),
+  passes: z.array(FoundPass).describe('by spacecraft, within that by antenna, within that by AOS'),
   counts: z.object({ forSale: z.int(), passes: z.int() }),
 });
 export type SearchResult = z.infer<typeof SearchResult>;
