@@ -39,6 +39,8 @@ export default function BookingsCalendar({ filter, nowMs, onChange }: BookingsVi
   const { mode, timeZone } = useTimeDisplay();
   const zone = mode === 'utc' ? 'UTC' : timeZone;
   const [view, setView] = useState<ScheduleViewLevel>('month');
+  const day = filter.day ?? wallText(wallTimeOf(nowMs, zone)).slice(0, 10);
+  const [pickedDay, pickDay] = useState<string | null>(day);
   const { data, error, refetch } = useQuery({
     ...bookingQueries.list(calendarQuery(filter, nowMs)),
     placeholderData: keepPreviousData,
@@ -56,8 +58,8 @@ export default function BookingsCalendar({ filter, nowMs, onChange }: BookingsVi
         {data && data.total > data.items.length && ` The first ${data.items.length} of ${data.total} are shown.`}
       </p>
       <Schedule
-        date={filter.day ?? wallText(wallTimeOf(nowMs, zone)).slice(0, 10)}
-        onDateChange={(day) => onChange({ day })}
+        date={day}
+        onDateChange={(next) => onChange({ day: next })}
         view={view}
         onViewChange={(next) => setView(next === 'year' ? 'month' : next)}
         events={events}
@@ -67,6 +69,14 @@ export default function BookingsCalendar({ filter, nowMs, onChange }: BookingsVi
         dayViewProps={{ viewSelectProps: VIEWS }}
         weekViewProps={{ firstDayOfWeek: 1, weekendDays: [], viewSelectProps: VIEWS }}
         monthViewProps={{ maxEventsPerDay: 3, firstDayOfWeek: 1, weekendDays: [], viewSelectProps: VIEWS }}
+        mobileMonthViewProps={{
+          firstDayOfWeek: 1,
+          weekendDays: [],
+          selectedDate: pickedDay,
+          onSelectedDateChange: pickDay,
+          // The days are buttons, which are pressed; the component calls them selected, which a button cannot be.
+          getDayProps: (each) => ({ 'aria-selected': undefined, 'aria-pressed': each === pickedDay }),
+        }}
       />
     </>
   );
