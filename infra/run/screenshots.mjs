@@ -26,23 +26,23 @@ const SHOTS = [
 ];
 
 async function pickFirst(page) {
-  const hump = page.locator('[data-hump-state="forSale"]').first();
-  if (await hump.count()) await hump.click();
+  await page.getByRole('heading', { name: 'Next for sale' }).waitFor({ timeout: 60_000 });
+  await page
+    .locator('section, aside', { has: page.getByRole('heading', { name: 'Next for sale' }) })
+    .last()
+    .getByRole('button')
+    .first()
+    .click();
+  await page.waitForLoadState('networkidle');
 }
 async function openFirstBooking(page) {
-  await page
-    .getByRole('tab', { name: 'List' })
-    .or(page.getByRole('radio', { name: 'List' }))
-    .first()
-    .click()
-    .catch(() => {});
-  await page.locator('main a[href^="/bookings/"]').first().click();
+  await page.locator('main table a').first().click();
   await page.waitForLoadState('networkidle');
 }
 async function openFirstMask(page) {
-  await page.locator('main a[href^="/stations/antennas/"]').first().click();
+  await page.locator('main table a').first().click();
+  await page.getByRole('tab', { name: 'Mask' }).click();
   await page.waitForLoadState('networkidle');
-  await page.goto(`${page.url().split('?')[0]}?tab=mask`);
 }
 
 const dataDir = process.env.SKYBERTH_DATA_DIR ?? mkdtempSync(join(tmpdir(), 'skyberth-pictures-'));
