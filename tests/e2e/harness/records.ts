@@ -19,7 +19,7 @@ export async function bookingOf(context: BrowserContext, url: string, id: string
 export async function tryToHold(
   context: BrowserContext,
   url: string,
-  wish: Pick<Booking, 'antennaId' | 'spacecraftId' | 'aosUtc' | 'losUtc' | 'toPayMinor'>,
+  wish: Pick<Booking, 'antennaId' | 'aosUtc' | 'losUtc' | 'toPayMinor'> & { readonly spacecraftId: string },
 ): Promise<{ status: number; contentType: string; problem: Problem }> {
   const { antennaId, spacecraftId, aosUtc, losUtc, toPayMinor } = wish;
   const answer = await context.request.post(`${url}${routes.holdBerth.path}`, {
