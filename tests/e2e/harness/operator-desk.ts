@@ -18,9 +18,8 @@ export async function pasteElements(page: Page, text: string): Promise<void> {
 export async function addDownlinkRadio(page: Page, spacecraft: string): Promise<void> {
   await page.getByRole('link', { name: spacecraft, exact: true }).click();
   await page.getByRole('link', { name: 'Add a radio' }).click();
-  await press(page, 'Add a radio');
+  await press(page, 'Add a downlink');
   const radio = page.getByRole('group', { name: 'Radio 1' });
-  await pick(radio, 'Direction of Radio 1', 'Downlink: it sends');
   await choose(radio, 'Band', 'S');
   await choose(radio, 'Polarisation', 'right-hand circular');
   await fill(radio, {
