@@ -3,8 +3,6 @@ import type { Locator, Page } from 'playwright-core';
 
 type Place = Page | Locator;
 
-export const field = (place: Place, label: string): Locator => place.getByLabel(label, { exact: true });
-
 /** Types into text and number fields, by label. */
 export async function fill(place: Place, values: Readonly<Record<string, string>>): Promise<void> {
   for (const [label, value] of Object.entries(values)) await textBox(place, label).fill(value);
