@@ -4,6 +4,7 @@ import { ContactCurves } from '../../drawing/curves/contact-curves.js';
 import { SkyPlot } from '../../drawing/sky-plot/sky-plot.js';
 import { useNow } from '../../lib/use-now.js';
 import { formatDegrees, formatDuration, formatNumber } from '../../ui/format.js';
+import { sunText } from '../../ui/sun-text.js';
 import { Figure, Figures } from '../../ui/values.js';
 import classes from './contact.module.css';
 import { liveAt, trackOf } from './contact-live.js';
@@ -79,7 +80,7 @@ function LiveFigures({ booking, detail, nowMs }: ContactPictureProps & { readonl
         value={formatDuration(Date.parse(booking.losUtc) - Date.parse(booking.aosUtc))}
         size="large"
       />
-      <Figure label="Sun, at its closest" value={formatDegrees(detail.sun.closestDeg)} size="large" />
+      <Figure label="Sun, at its closest" value={sunText(detail.sun)} size="large" />
       <Figure label="Spacecraft" value={detail.illumination} />
     </Figures>
   );
