@@ -34,27 +34,36 @@ export function sgp4Source(set: ElementSet): Sgp4Source {
       catalogNumber: set.catalogNumber,
     });
   }
-  return {
-    startMs: Number.NEGATIVE_INFINITY,
-    stopMs: Number.POSITIVE_INFINITY,
-    epochMs: set.epochMs,
-    stateTeme(timeMs, out) {
-      const result = sgp4(record, (timeMs - set.epochMs) / MINUTE_MS);
-      if (result === null) throw sgp4Fault(label, record.error, timeMs);
-      const { position, velocity } = result;
-      out[0] = position.x;
-      out[1] = position.y;
-      out[2] = position.z;
-      out[3] = velocity.x;
-      out[4] = velocity.y;
-      out[5] = velocity.z;
-      // Long after a decay the theory's drag polynomial turns over and gives places again; they mean nothing.
-      if (record.tempa <= 0) throw sgp4Fault(label, 6, timeMs);
-      if (!Number.isFinite(position.x + position.y + position.z + velocity.x + velocity.y + velocity.z)) {
-        throw new OrbitError('bad elements', `${label}: SGP4 gives no number at ${isoOf(timeMs)}.`, { timeMs });
-      }
-    },
-  };
+  return new MeanElements(record, set.epochMs, label);
+}
+
+class MeanElements implements Sgp4Source {
+  readonly startMs = Number.NEGATIVE_INFINITY;
+  readonly stopMs = Number.POSITIVE_INFINITY;
+
+  constructor(
+    private readonly record: SatRec,
+    readonly epochMs: number,
+    private readonly label: string,
+  ) {}
+
+  stateTeme(timeMs: number, out: Float64Array): void {
+    const { record } = this;
+    const result = sgp4(record, (timeMs - this.epochMs) / MINUTE_MS);
+    if (result === null) throw sgp4Fault(this.label, record.error, timeMs);
+    const { position, velocity } = result;
+    out[0] = position.x;
+    out[1] = position.y;
+    out[2] = position.z;
+    out[3] = velocity.x;
+    out[4] = velocity.y;
+    out[5] = velocity.z;
+    // Long after a decay the theory's drag polynomial turns over and gives places again; they mean nothing.
+    if (record.tempa <= 0) throw sgp4Fault(this.label, 6, timeMs);
+    if (!Number.isFinite(position.x + position.y + position.z + velocity.x + velocity.y + velocity.z)) {
+      throw new OrbitError('bad elements', `${this.label}: SGP4 gives no number at ${isoOf(timeMs)}.`, { timeMs });
+    }
+  }
 }
 
 function recordOf(set: ElementSet): SatRec {

@@ -2,7 +2,8 @@
 import { temeToEcef } from '../frames/look-angles.js';
 import type { TrajectorySource } from '../types.js';
 import { INTERVAL_NUMBERS, POINTS, SAMPLES_AROUND, writeIntervalPowers } from './interpolation.js';
-import { evenPace, type Pace, paceOf } from './pace.js';
+import { EvenPace, type Pace, paceOf } from './pace.js';
+import { SampleRoom } from './sample-room.js';
 import { TurnTable } from './turn-table.js';
 
 /** Ten years of the lowest orbit; beyond it a request is a mistake and memory would go. */
@@ -44,9 +45,9 @@ export class Ephemeris {
     this.positions = samples.positions;
     this.velocities = samples.velocities;
     const count = samples.positions.length / 3;
-    this.powers = new Float64Array(INTERVAL_NUMBERS * (count - 1));
+    this.powers = samples.room.powers(count);
     this.velocityPowers = pace.slow ? new Float64Array(INTERVAL_NUMBERS * (count - 1)) : undefined;
-    this.known = new Uint8Array(count);
+    this.known = samples.room.known(count);
     this.startAt = Math.max(0, pace.sampleAt(fromMs) - samples.first);
     this.endAt = Math.min(count - 1, pace.sampleAt(toMs) - samples.first);
     const { longestStepRad, sagKm, leastRadiusKm, greatestRadiusKm } = measure(samples.positions);
@@ -59,9 +60,10 @@ export class Ephemeris {
   /**
    * Samples a period that the source answers for everywhere. Around the period three more samples are taken where the source
    * has them, so that interpolation is as good at the ends as in the middle.
+   * `room` lends the memory; an ephemeris that took its own may be kept.
    * @throws OrbitError of the source at the first instant inside the period that it cannot answer for.
    */
-  static of(source: TrajectorySource, fromMs: number, toMs: number): Ephemeris {
+  static of(source: TrajectorySource, fromMs: number, toMs: number, room = new SampleRoom()): Ephemeris {
     const pace = withEnoughSamples(paceOf(source, fromMs, toMs), fromMs, toMs);
     const last = Math.ceil(pace.sampleAt(toMs));
     if (last > MOST_SAMPLES)
@@ -69,7 +71,8 @@ export class Ephemeris {
     const around = { first: -SAMPLES_AROUND, last: last + SAMPLES_AROUND };
     const inside = pace.timeMs(around.first) >= source.startMs && pace.timeMs(around.last) <= source.stopMs;
     const samples =
-      (inside ? trySampling(source, pace, around) : undefined) ?? sampleWithin({ source, pace, fromMs, toMs });
+      (inside ? trySampling(source, pace, { ...around, room }) : undefined) ??
+      sampleWithin({ source, pace, fromMs, toMs, room });
     return new Ephemeris(fromMs, toMs, samples.pace, samples);
   }
 
@@ -94,7 +97,14 @@ export class Ephemeris {
   }
 }
 
+interface SampleRange {
+  readonly first: number;
+  readonly last: number;
+  readonly room: SampleRoom;
+}
+
 interface Samples {
+  readonly room: SampleRoom;
   readonly pace: Pace;
   readonly first: number;
   readonly positions: Float64Array;
@@ -108,25 +118,39 @@ function withEnoughSamples(pace: Pace, fromMs: number, toMs: number): Pace {
   if (factor >= 1) return pace;
   if (!(factor > 0)) {
     const stepMs = Math.max(toMs - fromMs, 1_000) / (POINTS - 1);
-    return evenPace(fromMs, stepMs, pace.slow);
+    return new EvenPace(fromMs, stepMs, pace.slow);
   }
-  return scaled(pace, factor);
+  return new ScaledPace(pace, factor);
 }
 
-function scaled(pace: Pace, factor: number): Pace {
-  return {
-    slow: pace.slow,
-    timeMs: (at) => pace.timeMs(at * factor),
-    msPerSample: (at) => pace.msPerSample(at * factor) * factor,
-    sampleAt: (timeMs) => pace.sampleAt(timeMs) / factor,
-  };
+/** Another pace with its samples nearer together or wider apart. */
+class ScaledPace implements Pace {
+  readonly slow: boolean;
+
+  constructor(
+    private readonly pace: Pace,
+    private readonly factor: number,
+    private readonly fromMs = Number.NEGATIVE_INFINITY,
+    private readonly toMs = Number.POSITIVE_INFINITY,
+  ) {
+    this.slow = pace.slow;
+  }
+
+  /** Never outside the bounds, where the source may have no answer a rounding away. */
+  timeMs(sample: number): number {
+    return Math.min(this.toMs, Math.max(this.fromMs, this.pace.timeMs(sample * this.factor)));
+  }
+
+  msPerSample(sample: number): number {
+    return this.pace.msPerSample(sample * this.factor) * this.factor;
+  }
+
+  sampleAt(timeMs: number): number {
+    return this.pace.sampleAt(timeMs) / this.factor;
+  }
 }
 
-function trySampling(
-  source: TrajectorySource,
-  pace: Pace,
-  range: { first: number; last: number },
-): Samples | undefined {
+function trySampling(source: TrajectorySource, pace: Pace, range: SampleRange): Samples | undefined {
   try {
     return sample(source, pace, range);
   } catch {
@@ -135,32 +159,51 @@ function trySampling(
   }
 }
 
+interface WithinQuestion {
+  readonly source: TrajectorySource;
+  readonly pace: Pace;
+  readonly fromMs: number;
+  readonly toMs: number;
+  readonly room: SampleRoom;
+}
+
 /** Samples that lie exactly between the period's two ends, for a source that ends there. */
-function sampleWithin(question: { source: TrajectorySource; pace: Pace; fromMs: number; toMs: number }): Samples {
-  const { source, pace, fromMs, toMs } = question;
+function sampleWithin(question: WithinQuestion): Samples {
+  const { source, pace, fromMs, toMs, room } = question;
   const span = pace.sampleAt(toMs);
   const last = Math.max(POINTS - 1, Math.ceil(span));
   const factor = span / last;
-  const even = scaled(pace, factor);
-  const fitted: Pace = { ...even, timeMs: (at) => Math.min(toMs, Math.max(fromMs, even.timeMs(at))) };
-  return sample(source, fitted, { first: 0, last });
+  const fitted = new ScaledPace(pace, factor, fromMs, toMs);
+  return sample(source, fitted, { first: 0, last, room });
 }
 
-function sample(source: TrajectorySource, pace: Pace, { first, last }: { first: number; last: number }): Samples {
+function sample(source: TrajectorySource, pace: Pace, { first, last, room }: SampleRange): Samples {
   const count = last - first + 1;
-  const positions = new Float64Array(3 * count);
-  const velocities = new Float64Array(3 * count);
-  const state = new Float64Array(6);
-  for (let index = 0; index < count; index += 1) {
-    const timeMs = pace.timeMs(first + index);
-    source.stateTeme(timeMs, state);
-    temeToEcef(timeMs, state);
-    for (let axis = 0; axis < 3; axis += 1) {
-      positions[3 * index + axis] = state[axis]!;
-      velocities[3 * index + axis] = state[axis + 3]!;
-    }
-  }
-  return { pace, first, positions, velocities };
+  const positions = room.positions(count);
+  const velocities = room.velocities(count);
+  const to = { state: new Float64Array(6), positions, velocities };
+  for (let index = 0; index < count; index += 1) writeSample(source, pace.timeMs(first + index), index, to);
+  return { pace, room, first, positions, velocities };
+}
+
+interface SampleTarget {
+  readonly state: Float64Array;
+  readonly positions: Float64Array;
+  readonly velocities: Float64Array;
+}
+
+/** On its own, because a loop as long as this is compiled while it runs, and thrown away at its end, for each path anew. */
+function writeSample(source: TrajectorySource, timeMs: number, index: number, to: SampleTarget): void {
+  const { state, positions, velocities } = to;
+  source.stateTeme(timeMs, state);
+  temeToEcef(timeMs, state);
+  const at = 3 * index;
+  positions[at] = state[0]!;
+  positions[at + 1] = state[1]!;
+  positions[at + 2] = state[2]!;
+  velocities[at] = state[3]!;
+  velocities[at + 1] = state[4]!;
+  velocities[at + 2] = state[5]!;
 }
 
 function measure(positions: Float64Array) {
@@ -170,7 +213,9 @@ function measure(positions: Float64Array) {
   let leastCosine = 1;
   let radiusBefore = 0;
   for (let at = 0; at < positions.length; at += 3) {
-    const [x, y, z] = [positions[at]!, positions[at + 1]!, positions[at + 2]!];
+    const x = positions[at]!;
+    const y = positions[at + 1]!;
+    const z = positions[at + 2]!;
     const radius2 = x * x + y * y + z * z;
     const radius = Math.sqrt(radius2);
     least2 = Math.min(least2, radius2);

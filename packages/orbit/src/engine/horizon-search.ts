@@ -29,6 +29,12 @@ export class HorizonSearch implements Gate {
   private readonly walk: MaskWalk | undefined;
   private readonly sinLowest: number;
   private readonly sinHighest: number;
+  private readonly upX: number;
+  private readonly upY: number;
+  private readonly upZ: number;
+  /** Up component that the path must exceed, and how many samples from the zenith it does so at most. */
+  private readonly threshold: number;
+  private readonly nearSamples: number;
   private interval = 0;
   private isOpen = false;
   /** A stay that has ended but may go on at the same place. */
@@ -48,48 +54,53 @@ export class HorizonSearch implements Gate {
 
   constructor(
     private readonly ephemeris: Ephemeris,
-    private readonly view: SiteView,
+    view: SiteView,
     private readonly found: (stay: Stay) => void,
   ) {
     this.path = new LocalPath(ephemeris, view);
     this.sinLowest = view.sinLowest;
     this.sinHighest = view.sinHighest;
+    [this.upX, this.upY, this.upZ] = view.frame.up;
+    this.threshold = view.upOfSiteKm + leastHeightKm(view, ephemeris);
+    this.nearSamples = ephemeris.turns.mostSamples(this.threshold);
     this.walk = view.mask.flat ? undefined : new MaskWalk(this.path, view.mask, this);
   }
 
   run(): void {
-    const { ephemeris, view } = this;
-    const { positions, turns, startAt, endAt } = ephemeris;
-    const { samplesFromZenith, lowestKm, binsPerKm } = turns;
-    const { up } = view.frame;
-    const [upX, upY, upZ] = up;
-    const threshold = view.upOfSiteKm + leastHeightKm(view, ephemeris);
-    const near = turns.mostSamples(threshold);
+    const { startAt, endAt } = this.ephemeris;
     const last = Math.max(0, Math.ceil(endAt) - 1);
-    let interval = Math.floor(startAt);
+    let interval = this.nextNear(Math.floor(startAt), last);
     while (interval <= last) {
-      const at = 3 * interval;
-      const upKm = upX * positions[at]! + upY * positions[at + 1]! + upZ * positions[at + 2]!;
-      if (upKm <= threshold) {
-        const skip = samplesFromZenith[((upKm - lowestKm) * binsPerKm) | 0]! - near;
-        if (skip >= 1) {
-          interval += skip | 0;
-          continue;
-        }
-        const nextKm = upX * positions[at + 3]! + upY * positions[at + 4]! + upZ * positions[at + 5]!;
-        if (nextKm <= threshold) {
-          interval += 1;
-          continue;
-        }
-      }
       this.lookAt(interval, Math.max(0, startAt - interval), Math.min(1, endAt - interval));
-      interval += 1;
+      interval = this.nextNear(interval + 1, last);
     }
     if (this.isOpen) {
       this.stay.clippedEnd = true;
       this.end(Math.min(1, endAt - last));
     }
     this.flush();
+  }
+
+  /** The next interval, from one on, in which the path may stand over the lowest part of the mask; beyond `last` if none. */
+  private nextNear(from: number, last: number): number {
+    const { upX, upY, upZ, threshold, nearSamples } = this;
+    const { positions, turns } = this.ephemeris;
+    const { samplesFromZenith, lowestKm, binsPerKm } = turns;
+    let interval = from;
+    while (interval <= last) {
+      const at = 3 * interval;
+      const upKm = upX * positions[at]! + upY * positions[at + 1]! + upZ * positions[at + 2]!;
+      if (upKm > threshold) return interval;
+      const skip = samplesFromZenith[((upKm - lowestKm) * binsPerKm) | 0]! - nearSamples;
+      if (skip >= 1) {
+        interval += skip | 0;
+        continue;
+      }
+      const nextKm = upX * positions[at + 3]! + upY * positions[at + 4]! + upZ * positions[at + 5]!;
+      if (nextKm > threshold) return interval;
+      interval += 1;
+    }
+    return interval;
   }
 
   /** One interval, from x0 to x1 of it. */

@@ -47,12 +47,16 @@ export function paceOf(source: TrajectorySource, fromMs: number, toMs: number): 
   const start = osculating(source, fromMs);
   const limited = stepLimit(source, start);
   if (!(start.eccentricity < MOST_ECCENTRICITY) || !(start.motionRadPerS > 0)) {
-    return evenPace(fromMs, Math.min(FALLBACK_STEP_S * 1000, source.longestStepMs ?? Number.POSITIVE_INFINITY), false);
+    return new EvenPace(
+      fromMs,
+      Math.min(FALLBACK_STEP_S * 1000, source.longestStepMs ?? Number.POSITIVE_INFINITY),
+      false,
+    );
   }
   if (start.eccentricity < ROUND_ECCENTRICITY) {
-    return evenPace(fromMs, (limited / start.motionRadPerS) * 1000, start.motionRadPerS < SLOW_MOTION);
+    return new EvenPace(fromMs, (limited / start.motionRadPerS) * 1000, start.motionRadPerS < SLOW_MOTION);
   }
-  return ellipticPace({ source, fromMs, toMs, start, stepRad: limited });
+  return new EllipticPace({ source, fromMs, toMs, start, stepRad: limited });
 }
 
 function stepLimit(source: TrajectorySource, { eccentricity, motionRadPerS }: Osculating): number {
@@ -63,13 +67,24 @@ function stepLimit(source: TrajectorySource, { eccentricity, motionRadPerS }: Os
 }
 
 /** Equal steps in time. */
-export function evenPace(fromMs: number, stepMs: number, slow: boolean): Pace {
-  return {
-    slow,
-    timeMs: (sample) => fromMs + sample * stepMs,
-    msPerSample: () => stepMs,
-    sampleAt: (timeMs) => (timeMs - fromMs) / stepMs,
-  };
+export class EvenPace implements Pace {
+  constructor(
+    private readonly fromMs: number,
+    private readonly stepMs: number,
+    readonly slow: boolean,
+  ) {}
+
+  timeMs(sample: number): number {
+    return this.fromMs + sample * this.stepMs;
+  }
+
+  msPerSample(_sample: number): number {
+    return this.stepMs;
+  }
+
+  sampleAt(timeMs: number): number {
+    return (timeMs - this.fromMs) / this.stepMs;
+  }
 }
 
 interface EllipticQuestion {
@@ -84,36 +99,52 @@ interface EllipticQuestion {
  * Mean anomaly as a quadratic of time, fitted to the rate over one revolution at each end of the period, so that drag and
  * resonance do not let the dense samples drift away from the true perigee.
  */
-function ellipticPace({ source, fromMs, toMs, start, stepRad }: EllipticQuestion): Pace {
-  const { eccentricity: e, meanAnomaly: startAnomaly } = start;
-  const periodS = TURN / start.motionRadPerS;
-  const spanS = (toMs - fromMs) / 1000;
-  let rate = start.motionRadPerS;
-  let change = 0;
-  if (spanS > 2 * periodS) {
-    rate = rateOver(source, fromMs, periodS);
-    const endRate = rateOver(source, toMs - periodS * 1000, periodS);
-    change = (endRate - rate) / (spanS - periodS);
+class EllipticPace implements Pace {
+  readonly slow: boolean;
+  private readonly fromMs: number;
+  private readonly stepRad: number;
+  private readonly eccentricity: number;
+  private readonly startAnomaly: number;
+  private readonly startE: number;
+  /** Rad/s at the start, and its growth in rad/s2. */
+  private readonly rate: number;
+  private readonly change: number;
+
+  constructor({ source, fromMs, toMs, start, stepRad }: EllipticQuestion) {
+    const periodS = TURN / start.motionRadPerS;
+    const spanS = (toMs - fromMs) / 1000;
+    const long = spanS > 2 * periodS;
+    this.slow = start.motionRadPerS < SLOW_MOTION;
+    this.fromMs = fromMs;
+    this.stepRad = stepRad;
+    this.eccentricity = start.eccentricity;
+    this.startAnomaly = start.meanAnomaly;
+    this.startE = eccentricAnomaly(start.meanAnomaly, start.eccentricity);
+    this.rate = long ? rateOver(source, fromMs, periodS) : start.motionRadPerS;
+    const endRate = long ? rateOver(source, toMs - periodS * 1000, periodS) : this.rate;
+    this.change = (endRate - this.rate) / Math.max(spanS - periodS, periodS);
   }
-  const startE = eccentricAnomaly(startAnomaly, e);
-  const timeS = (sample: number): number => {
-    const anomaly = startE + sample * stepRad;
-    const grown = anomaly - e * Math.sin(anomaly) - startAnomaly;
-    return (2 * grown) / (rate + Math.sqrt(rate * rate + 2 * change * grown));
-  };
-  return {
-    slow: start.motionRadPerS < SLOW_MOTION,
-    timeMs: (sample) => fromMs + timeS(sample) * 1000,
-    msPerSample: (sample) => {
-      const stretched = 1 - e * Math.cos(startE + sample * stepRad);
-      return (1000 * stepRad * stretched) / (rate + change * timeS(sample));
-    },
-    sampleAt: (timeMs) => {
-      const seconds = (timeMs - fromMs) / 1000;
-      const grown = (rate + 0.5 * change * seconds) * seconds;
-      return (eccentricAnomaly(startAnomaly + grown, e) - startE) / stepRad;
-    },
-  };
+
+  timeMs(sample: number): number {
+    return this.fromMs + this.secondsTo(sample) * 1000;
+  }
+
+  msPerSample(sample: number): number {
+    const stretched = 1 - this.eccentricity * Math.cos(this.startE + sample * this.stepRad);
+    return (1000 * this.stepRad * stretched) / (this.rate + this.change * this.secondsTo(sample));
+  }
+
+  sampleAt(timeMs: number): number {
+    const seconds = (timeMs - this.fromMs) / 1000;
+    const grown = (this.rate + 0.5 * this.change * seconds) * seconds;
+    return (eccentricAnomaly(this.startAnomaly + grown, this.eccentricity) - this.startE) / this.stepRad;
+  }
+
+  private secondsTo(sample: number): number {
+    const anomaly = this.startE + sample * this.stepRad;
+    const grown = anomaly - this.eccentricity * Math.sin(anomaly) - this.startAnomaly;
+    return (2 * grown) / (this.rate + Math.sqrt(this.rate * this.rate + 2 * this.change * grown));
+  }
 }
 
 function rateOver(source: TrajectorySource, timeMs: number, periodS: number): number {

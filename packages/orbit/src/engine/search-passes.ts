@@ -6,6 +6,7 @@ import type { Ephemeris } from './ephemeris.js';
 import { HorizonSearch, type PathPlace, type Stay } from './horizon-search.js';
 import type { CompiledMask } from './mask.js';
 import { CLIPPED_END, CLIPPED_START, type PassColumns, PassSink } from './pass-block.js';
+import type { SampleRoom } from './sample-room.js';
 import { type SearchSite, type SiteView, siteView } from './site-view.js';
 import { type SampledPath, samplePath } from './stretches.js';
 
@@ -46,13 +47,14 @@ export function searchPassesColumns(search: PassSearch): PassSearchResult {
   const views = search.sites.map(siteView);
   const sink = new PassSink();
   const faults: SearchFault[] = [];
+  const rooms: SampleRoom[] = [];
   let complete = true;
   for (const [satellite, source] of search.satellites.entries()) {
     if (search.goOn?.(satellite) === false) {
       complete = false;
       break;
     }
-    const path = samplePath(source, search.fromMs, search.toMs);
+    const path = samplePath(source, search.fromMs, search.toMs, rooms);
     if (path.fault) faults.push({ satellite, error: path.fault });
     for (const [site, view] of views.entries()) searchPath(path, view, { sink, satellite, site });
   }

@@ -2,6 +2,7 @@
 import { OrbitError } from '../orbit-error.js';
 import type { SourcePiece, TrajectorySource } from '../types.js';
 import { Ephemeris } from './ephemeris.js';
+import { SampleRoom } from './sample-room.js';
 
 const DAY_MS = 86_400_000;
 /** Between epoch and period the source is asked this often: a decay takes days to be passed through. */
@@ -21,14 +22,25 @@ export interface SampledPath {
   readonly fault: OrbitError | undefined;
 }
 
-/** Samples all of a period that can be sampled. Never throws an `OrbitError`: what goes wrong is in `fault`. */
-export function samplePath(source: TrajectorySource, fromMs: number, toMs: number): SampledPath {
+/**
+ * Samples all of a period that can be sampled. Never throws an `OrbitError`: what goes wrong is in `fault`. The path is good
+ * until the same `rooms` are given for another one; without them it is its own.
+ */
+export function samplePath(
+  source: TrajectorySource,
+  fromMs: number,
+  toMs: number,
+  rooms: SampleRoom[] = [],
+): SampledPath {
   const ephemerides: Ephemeris[] = [];
   let fault: OrbitError | undefined;
   for (const piece of piecesOf(source, fromMs, toMs)) {
     if (piece.toMs - piece.fromMs < LEAST_STRETCH_MS) continue;
     try {
-      const sound = soundPart(piece);
+      // Each part of a path lives as long as the others, so each has a room of its own.
+      const room = rooms[ephemerides.length] ?? new SampleRoom();
+      rooms[ephemerides.length] = room;
+      const sound = soundPart(piece, room);
       fault ??= sound.fault;
       if (sound.ephemeris) ephemerides.push(sound.ephemeris);
     } catch (error) {
@@ -61,9 +73,9 @@ interface SoundPart {
  * Follows a source with an epoch outwards from it as far as it answers: the first instant without an answer ends its use on
  * that side, even where it answers again later, because then the answers mean nothing.
  */
-function soundPart({ source, fromMs, toMs }: SourcePiece): SoundPart {
+function soundPart({ source, fromMs, toMs }: SourcePiece, room: SampleRoom): SoundPart {
   const { epochMs } = source;
-  if (epochMs === undefined) return { ephemeris: Ephemeris.of(source, fromMs, toMs), fault: undefined };
+  if (epochMs === undefined) return { ephemeris: Ephemeris.of(source, fromMs, toMs, room), fault: undefined };
   const anchorMs = Math.min(toMs, Math.max(fromMs, epochMs));
   const lost = firstFailure(source, epochMs, anchorMs);
   if (lost) return { ephemeris: undefined, fault: lost.fault };
@@ -71,7 +83,7 @@ function soundPart({ source, fromMs, toMs }: SourcePiece): SoundPart {
   let fault: OrbitError | undefined;
   for (let attempt = 0; attempt < MOST_ATTEMPTS && endMs - startMs >= LEAST_STRETCH_MS; attempt += 1) {
     try {
-      return { ephemeris: Ephemeris.of(source, startMs, endMs), fault };
+      return { ephemeris: Ephemeris.of(source, startMs, endMs, room), fault };
     } catch (error) {
       if (!(error instanceof OrbitError)) throw error;
       const failedMs = error.data['timeMs'];

@@ -11,7 +11,10 @@ export function temeToEcef(timeMs: number, state: Float64Array): void {
   const turn = gmstRad(timeMs);
   const cos = Math.cos(turn);
   const sin = Math.sin(turn);
-  const [x, y, vx, vy] = [state[0]!, state[1]!, state[3]!, state[4]!];
+  const x = state[0]!;
+  const y = state[1]!;
+  const vx = state[3]!;
+  const vy = state[4]!;
   state[0] = cos * x + sin * y;
   state[1] = cos * y - sin * x;
   state[3] = cos * vx + sin * vy + EARTH_TURN_RAD_PER_S * state[1];

@@ -24,6 +24,6 @@ export function gmstRad(timeMs: number): number {
   const centuries = days / DAYS_PER_CENTURY;
   const secondsBeyondTurns =
     67_310.54841 + (8_640_184.812866 + (0.093104 - 6.2e-6 * centuries) * centuries) * centuries;
-  const turns = (days % 1) + ((secondsBeyondTurns / SECONDS_PER_DAY) % 1);
-  return (((turns % 1) + 1) % 1) * TURN_RAD;
+  const turns = days - Math.floor(days) + secondsBeyondTurns / SECONDS_PER_DAY;
+  return (turns - Math.floor(turns)) * TURN_RAD;
 }
