@@ -62,6 +62,7 @@ export class FeedPoller implements OnModuleInit {
   }
 
   private async takeIn(text: string, source: string): Promise<void> {
+    if (text.trim() === '[]') return; // A feed may have nothing to say; anything else without a set is a fault.
     const { sets, faults } = await this.reader.read({ text, fileName: null });
     if (sets.length === 0) throw new Error(`The feed held no usable element set, and ${faults.length} faults.`);
     const byNumber = new Map<number, ElementSet[]>();

@@ -13,7 +13,7 @@ const STATE_WORDS: Readonly<Record<Booking['payment']['state'], string>> = {
   authorised: 'Reserved on the card; taken once the contact has taken place.',
   capturing: 'Being taken from the card.',
   captured: 'Taken from the card.',
-  releasing: 'The reservation is being given back.',
+  releasing: 'Whatever was reserved is being given back.',
   released: 'The reservation was given back; nothing was charged.',
   refunding: 'Being refunded.',
   refunded: 'Refunded.',
@@ -37,7 +37,7 @@ export function MoneySection({ booking }: { readonly booking: Booking }) {
             </Row>
           ))}
           {quote.vat.amountMinor !== 0 && (
-            <Row label={`VAT ${quote.vat.ratePercent} %`} detail={quote.vat.note}>
+            <Row label={quote.vat.note} detail="">
               <MoneyText amountMinor={quote.vat.amountMinor} currency={currency} />
             </Row>
           )}

@@ -21,9 +21,7 @@ export function PriceSum({ quote }: { readonly quote: Quote }) {
           ))}
           {vat.amountMinor !== 0 && (
             <tr>
-              <th scope="row">
-                VAT {vat.ratePercent} % <small>{vat.note}</small>
-              </th>
+              <th scope="row">{vat.note}</th>
               <td>
                 <MoneyText amountMinor={vat.amountMinor} currency={currency} />
               </td>
