@@ -163,6 +163,16 @@ def earth_fixed(satellite, seconds):
 def stays(view, grid, positions):
     """Unbroken stretches over the mask: [start, stop] in seconds, by sign changes and a second look at near touches."""
     elevation, azimuth = view.angles_from(positions)
+    # Near the zenith the azimuth races; the grid is made as fine there as the mask needs.
+    racing = np.flatnonzero(np.abs((np.diff(azimuth) + 180) % 360 - 180) > 5)
+    if len(racing) and len(view.mask.azimuth) > 3:
+        fine = np.concatenate([np.linspace(grid[at], grid[at + 1], 400)[1:-1] for at in racing])
+        fine_elevation, fine_azimuth = view.angles_from(earth_fixed(view.satellite, fine))
+        grid = np.concatenate([grid, fine])
+        order = np.argsort(grid, kind="stable")
+        grid = grid[order]
+        elevation = np.concatenate([elevation, fine_elevation])[order]
+        azimuth = np.concatenate([azimuth, fine_azimuth])[order]
     over = elevation - view.mask(azimuth)
     corners = view.corner_times(grid, azimuth)
     times = np.concatenate([grid, corners])
