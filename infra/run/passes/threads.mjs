@@ -29,14 +29,15 @@ function workThrough(waiting, shared, answers) {
     const worker = new Worker(new URL('./worker.mjs', import.meta.url), { workerData: shared });
     const give = () => {
       const { value, done } = waiting.next();
-      if (done) worker.terminate().then(resolve, reject);
-      else worker.postMessage(value);
+      worker.postMessage(done ? null : value);
     };
     worker.on('message', (answer) => {
       answers.push(answer);
       give();
     });
     worker.on('error', reject);
+    // It closes its own port and ends by itself: ending it from outside while it still clears up can bring the process down.
+    worker.on('exit', (code) => (code === 0 ? resolve() : reject(new Error(`A search thread ended with ${code}.`))));
     give();
   });
 }
