@@ -111,7 +111,21 @@ describe('home', () => {
     expect(forAdmin.counts).toEqual({ approvals: 1 });
     expect(forAdmin.waiting.map((each) => each.sentence)).toContainEqual(expect.stringContaining('Second rock'));
     const stranger = await skyberth.people.owner();
-    expect(await must(skyberth.call(routes.home, { as: stranger }))).toEqual({ waiting: [], counts: { requests: 0 } });
+    const empty = await must(skyberth.call(routes.home, { as: stranger }));
+    expect(empty).toMatchObject({ waiting: [], counts: { requests: 0 } });
+    expect(empty.money.flatMap(({ amounts }) => amounts)).toEqual([]);
+    expect(empty.firstSteps.map(({ done }) => done)).toEqual([false, false, false, false, false]);
+
+    const secured = forOperator.money.find(({ label }) => label === 'Secured for contacts to come')?.amounts ?? [];
+    const bought = await must(skyberth.call(routes.listBookings, { as: operator }));
+    expect(secured).toEqual([
+      {
+        currency: bought.items[0]?.currency,
+        amountMinor: bought.items.reduce((sum, { toPayMinor }) => sum + toPayMinor, 0),
+      },
+    ]);
+    expect(forOperator.firstSteps.map(({ done }) => done)).toEqual([true, false, true]);
+    expect(forOwner.firstSteps).toEqual([]);
   });
 
   it('warns of old elements', async () => {

@@ -37,6 +37,7 @@ const LOOK_MS = 900_000;
 
 const heading = (name: string | RegExp) => (page: Page) => page.getByRole('heading', { level: 1, name });
 
+const HOME: Screen = { name: 'home', path: paths.home, shows: heading(/^Good to see you/) };
 const SIGN_IN: Screen = { name: 'sign-in', path: paths.signIn, shows: heading('Sign in') };
 
 describe('for everybody', () => {
@@ -123,7 +124,7 @@ describe('for everybody', () => {
       const desk = await openDesk(browser);
       if (role === 'operator') found.push(...(await lookAt(desk, SIGN_IN)));
       await step(`signing in as ${role}`, desk, () => signIn(desk.page, harbour.url, emails[role]));
-      for (const screen of screens()[role]) found.push(...(await lookAt(desk, screen)));
+      for (const screen of [HOME, ...screens()[role]]) found.push(...(await lookAt(desk, screen)));
       await desk.context.close();
       expect([...found, ...desk.faults]).toEqual([]);
     },

@@ -32,6 +32,9 @@ describe('with the keyboard alone', () => {
       await tabTo(page, /^Password/);
       await page.keyboard.type(PASSWORD);
       await page.keyboard.press('Enter');
+      await seen(page.getByRole('heading', { name: /^Good to see you/ }));
+      await tabTo(page, /^Find time/);
+      await page.keyboard.press('Enter');
       await seen(page.getByRole('status').filter({ hasText: /for sale of \d+ pass/ }));
     });
     await step('picking a pass with the arrow keys', desk, async () => {

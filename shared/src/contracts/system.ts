@@ -1,6 +1,6 @@
 /** Health, the API's own description, and what staff watch. */
 import { z } from 'zod';
-import { Id, UtcTime } from '../primitives.js';
+import { AmountMinor, Currency, Id, UtcTime } from '../primitives.js';
 import { defineRoute } from '../route.js';
 
 export const SystemView = z.object({
@@ -41,6 +41,19 @@ export const HomeView = z.object({
     }),
   ),
   counts: z.record(z.string(), z.int()).describe('numbers for the navigation, by page'),
+  money: z
+    .array(
+      z.object({
+        label: z.string(),
+        note: z.string(),
+        /** One a currency; nothing is converted. */
+        amounts: z.array(z.object({ currency: Currency, amountMinor: AmountMinor })),
+      }),
+    )
+    .describe('money at a glance; empty for those who see none'),
+  firstSteps: z
+    .array(z.object({ sentence: z.string(), path: z.string(), done: z.boolean() }))
+    .describe('how to begin, until all of it is done'),
 });
 export type HomeView = z.infer<typeof HomeView>;
 

@@ -5,6 +5,7 @@ import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { ElementsService } from '../spacecraft/elements.service.js';
 import { freshnessOf } from '../spacecraft/freshness.js';
 import { HomeRepository, type WaitingBooking } from './home.repository.js';
+import { HomeFiguresService } from './home-figures.service.js';
 
 type Waiting = HomeView['waiting'][number];
 
@@ -21,13 +22,19 @@ const utc = (timeMs: number): string => new Date(timeMs).toISOString();
 export class HomeService {
   constructor(
     private readonly repository: HomeRepository,
+    private readonly figures: HomeFiguresService,
     private readonly elements: ElementsService,
     @Inject(CLOCK) private readonly clock: ClockPort,
   ) {}
 
   view(caller: Principal): HomeView {
     const waiting = this.waitingFor(caller).sort((a, b) => Number(b.urgent) - Number(a.urgent) || dueMs(a) - dueMs(b));
-    return { waiting, counts: this.countsFor(caller) };
+    return {
+      waiting,
+      counts: this.countsFor(caller),
+      money: this.figures.money(caller),
+      firstSteps: this.figures.firstSteps(caller),
+    };
   }
 
   private waitingFor(caller: Principal): Waiting[] {
@@ -103,11 +110,11 @@ export class HomeService {
   }
 
   private forAdmin(): Waiting[] {
-    const stations = this.repository.stations(null, ['waiting']).map(({ name, ownerName }) => ({
+    const stations = this.repository.stations(null, ['waiting']).map(({ id, name, ownerName }) => ({
       kind: 'approval',
       sentence: `${name} of ${ownerName} waits for approval.`,
       detail: 'Check position, horizon and licence papers.',
-      path: '/approvals',
+      path: `/approvals/${id}`,
       urgent: false,
       dueUtc: null,
     }));

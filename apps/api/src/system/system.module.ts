@@ -5,6 +5,8 @@ import { OutboxModule } from '../outbox/outbox.module.js';
 import { SpacecraftModule } from '../spacecraft/spacecraft.module.js';
 import { HomeRepository } from './home.repository.js';
 import { HomeService } from './home.service.js';
+import { HomeFiguresRepository } from './home-figures.repository.js';
+import { HomeFiguresService } from './home-figures.service.js';
 import { Housekeeping } from './housekeeping.js';
 import { ServicesWatch } from './services-watch.js';
 import { SystemController } from './system.controller.js';
@@ -14,6 +16,15 @@ import { SystemService } from './system.service.js';
 @Module({
   imports: [JobsModule, OutboxModule, SpacecraftModule],
   controllers: [SystemController],
-  providers: [Housekeeping, HomeRepository, HomeService, ServicesWatch, SystemRepository, SystemService],
+  providers: [
+    Housekeeping,
+    HomeFiguresRepository,
+    HomeFiguresService,
+    HomeRepository,
+    HomeService,
+    ServicesWatch,
+    SystemRepository,
+    SystemService,
+  ],
 })
 export class SystemModule {}

@@ -1,10 +1,11 @@
 /** The frame around every signed-in page: head line, the person's menu, the tray of holds. */
 import { Menu, useMantineColorScheme } from '@mantine/core';
 import { routes } from '@skyberth/shared';
-import { queryOptions, useMutation, useQuery } from '@tanstack/react-query';
+import { useMutation, useQuery } from '@tanstack/react-query';
 import { type ComponentProps, useEffect } from 'react';
 import { Link, Outlet, useLocation, useNavigate } from 'react-router-dom';
 import { call } from '../lib/api-client.js';
+import { homeQuery } from '../lib/home-query.js';
 import { paths } from '../lib/paths.js';
 import { serverNowMs } from '../lib/server-clock.js';
 import { useEnterSession, useSession } from '../lib/session.js';
@@ -14,12 +15,6 @@ import { TimeDisplayProvider } from '../ui/time-display.js';
 import { useHoldsTray } from './holds-tray.js';
 import { pagesFor } from './navigation.js';
 import { useTimePreference } from './time-preference.js';
-
-export const homeQuery = queryOptions({
-  queryKey: ['home'],
-  queryFn: ({ signal }) => call(routes.home, { signal }),
-  refetchInterval: 60_000,
-});
 
 const RouterLink: ShellLink = ({ to, ...rest }) => (
   <Link to={to} {...(rest as Omit<ComponentProps<typeof Link>, 'to'>)} />

@@ -10,13 +10,17 @@ export interface Page {
   readonly countNoun?: string;
 }
 
+const HOME: Page = { label: 'Home', to: paths.home };
+
 const OPERATOR: readonly Page[] = [
+  HOME,
   { label: 'Find time', to: paths.findTime },
   { label: 'Bookings', to: paths.bookings },
   { label: 'Spacecraft', to: paths.spacecraft },
   { label: 'Invoices', to: paths.invoices },
 ];
 const OWNER: readonly Page[] = [
+  HOME,
   { label: 'Stations', to: paths.stations },
   { label: 'Availability', to: paths.availability },
   { label: 'Requests', to: paths.requests, count: 'requests', countNoun: 'requests wait for an answer' },
@@ -24,17 +28,19 @@ const OWNER: readonly Page[] = [
   { label: 'Earnings', to: paths.invoices },
 ];
 const FINANCE: readonly Page[] = [
+  HOME,
   { label: 'Ledger', to: paths.ledger },
   { label: 'Invoices', to: paths.invoices },
   { label: 'Bookings', to: paths.bookings },
 ];
 const ADMIN: readonly Page[] = [
+  HOME,
   { label: 'Approvals', to: paths.approvals, count: 'approvals', countNoun: 'stations wait for approval' },
   { label: 'Bookings', to: paths.bookings },
   { label: 'System', to: paths.system },
 ];
 
-/** The pages of this membership, the main one first. */
+/** The pages of this membership, home first. */
 export function pagesFor(active: Pick<Membership, 'organisationKind' | 'role'>): readonly Page[] {
   if (active.organisationKind === 'operator') return OPERATOR;
   if (active.organisationKind === 'owner') return OWNER;

@@ -3,7 +3,6 @@ import { type QueryClient } from '@tanstack/react-query';
 import { createBrowserRouter, type LoaderFunctionArgs, type RouteObject, redirect } from 'react-router-dom';
 import { paths } from '../lib/paths.js';
 import { sessionQuery } from '../lib/session.js';
-import { pagesFor } from './navigation.js';
 import { NotFoundPage, PageFailure } from './page-failure.js';
 
 /** Pages for people who are not signed in. */
@@ -32,6 +31,10 @@ const openPages: RouteObject[] = [
 
 /** Pages behind the sign-in, inside the frame. */
 const memberPages: RouteObject[] = [
+  {
+    path: paths.home,
+    lazy: async () => ({ Component: (await import('../features/home/home-page.js')).HomePage }),
+  },
   {
     path: paths.findTime,
     lazy: async () => ({ Component: (await import('../features/find-time/find-time-page.js')).FindTimePage }),
@@ -144,18 +147,12 @@ export function createRouter(client: QueryClient) {
     const url = new URL(request.url);
     return redirect(`${paths.signIn}?then=${encodeURIComponent(url.pathname + url.search)}`);
   };
-  const toMainPage = async () => {
-    const session = await client.fetchQuery({ ...sessionQuery, staleTime: 60_000 });
-    const main = session ? pagesFor(session.active)[0] : undefined;
-    return redirect(main?.to ?? paths.signIn);
-  };
   return createBrowserRouter([
     {
       ErrorBoundary: PageFailure,
       HydrateFallback: Nothing,
       children: [
         ...openPages,
-        { path: paths.home, loader: toMainPage },
         {
           lazy: async () => ({ Component: (await import('./layout.js')).Layout }),
           loader: requireSession,

@@ -2,10 +2,10 @@
 import { Menu } from '@mantine/core';
 import { Mark } from '../mark.js';
 import { currentItem } from './current-item.js';
-import { Hump } from './hump.js';
+import { HeadNav } from './head-nav.js';
 import { PhoneBar } from './phone-bar.js';
 import classes from './shell.module.css';
-import type { ShellItem, ShellLink, ShellPerson, ShellProps } from './shell-types.js';
+import type { ShellLink, ShellPerson, ShellProps } from './shell-types.js';
 import { useInkForPrint } from './use-ink-for-print.js';
 import { UtcClock } from './utc-clock.js';
 
@@ -27,11 +27,7 @@ export function Shell(props: ShellProps) {
           <span className={classes.wideOnly}>Skyberth</span>
           <span className={classes.phoneOnly}>{props.phoneTitle ?? current?.label ?? 'Skyberth'}</span>
         </Link>
-        <nav className={classes.nav} aria-label="Pages">
-          {items.map((item) => (
-            <NavItem key={item.to} item={item} isCurrent={item === current} link={Link} />
-          ))}
-        </nav>
+        <HeadNav items={items} current={current} link={Link} />
         <div className={classes.right}>
           {props.tools && <div className={classes.tools}>{props.tools}</div>}
           <UtcClock clock={clock} />
@@ -45,21 +41,6 @@ export function Shell(props: ShellProps) {
       {tray && <div className={classes.tray}>{tray}</div>}
       <PhoneBar items={items} current={current} link={Link} personMenu={props.personMenu} person={person} />
     </div>
-  );
-}
-
-function NavItem({ item, isCurrent, link: Link }: { item: ShellItem; isCurrent: boolean; link: ShellLink }) {
-  return (
-    <Link to={item.to} className={classes.navItem} aria-current={isCurrent ? 'page' : undefined}>
-      {item.label}
-      {item.count !== undefined && item.count > 0 && (
-        <span className={classes.count}>
-          <span aria-hidden="true">{item.count}</span>
-          <span className="sk-hidden">{item.countLabel ?? `${item.count} waiting`}</span>
-        </span>
-      )}
-      {isCurrent && <Hump className={classes.hump} />}
-    </Link>
   );
 }
 
