@@ -44,6 +44,12 @@ export const PERMISSIONS = {
   'bookings.report': { owner: WORKERS },
   'invoices.read': { operator: ALL, owner: ALL, staff: ['finance'] },
   'ledger.read': { staff: ['finance'] },
+  'ledger.close': { staff: ['finance'] },
+  'reconciliation.read': { staff: ['finance'] },
+  'reconciliation.act': { staff: ['finance'] },
+  'accounts.read': { staff: ['admin'] },
+  'accounts.suspend': { staff: ['admin'] },
+  'audit.read': { staff: ['admin'] },
   'system.read': { staff: ['admin'] },
 } as const satisfies Record<string, Grant>;
 

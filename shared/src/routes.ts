@@ -2,7 +2,10 @@
 import { accountRoutes } from './contracts/accounts.js';
 import { bookingRoutes } from './contracts/bookings.js';
 import { invoiceRoutes } from './contracts/invoices.js';
+import { ledgerRoutes } from './contracts/ledger.js';
 import { marketRoutes } from './contracts/market.js';
+import { oversightRoutes } from './contracts/oversight.js';
+import { reconciliationRoutes } from './contracts/reconciliation.js';
 import { spacecraftRoutes } from './contracts/spacecraft.js';
 import { stationRoutes } from './contracts/stations.js';
 import { systemRoutes } from './contracts/system.js';
@@ -14,6 +17,9 @@ export const routes = {
   ...marketRoutes,
   ...bookingRoutes,
   ...invoiceRoutes,
+  ...ledgerRoutes,
+  ...reconciliationRoutes,
+  ...oversightRoutes,
   ...systemRoutes,
 } as const;
 export type RouteName = keyof typeof routes;

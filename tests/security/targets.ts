@@ -34,5 +34,6 @@ export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
     booking,
     invoice,
     member: operator.personId,
+    organisation: operator.organisationId,
   };
 }

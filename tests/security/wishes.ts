@@ -18,6 +18,7 @@ export interface Targets {
   readonly booking: string;
   readonly invoice: string;
   readonly member: string;
+  readonly organisation: string;
 }
 
 /** Targets that do not exist. */
@@ -29,6 +30,7 @@ export const nowhere = (): Targets => ({
   booking: randomUUID(),
   invoice: randomUUID(),
   member: randomUUID(),
+  organisation: randomUUID(),
 });
 
 const ADDRESS = { line1: 'Quay 1', postalCode: '1', city: 'Porto Novo', country: 'DE' };
@@ -95,6 +97,7 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     addBlackout: { params: antenna, body: { fromUtc: FROM, toUtc: TO, reason: 'weather' } },
     removeBlackout: { params: { id: to.blackout } },
     putOnSale: { params: antenna, body: { onSale: true } },
+    searchProgress: { params: { searchId: randomUUID() } },
     searchPasses: { body: { spacecraftIds: [to.spacecraft], fromUtc: FROM, toUtc: TO } },
     passDetail: { body: berth },
     listBookings: {},
@@ -112,5 +115,10 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     getInvoice: { params: { id: to.invoice } },
     invoicePdf: { params: { id: to.invoice } },
     journal: {},
+    listAccounts: {},
+    getAccount: { params: { id: to.organisation } },
+    suspendAccount: { params: { id: to.organisation }, body: { reason: 'look' } },
+    reinstateAccount: { params: { id: to.organisation }, body: { reason: 'look' } },
+    listAudit: {},
   };
 }

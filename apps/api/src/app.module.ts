@@ -8,6 +8,7 @@ import { LedgerModule } from './ledger/ledger.module.js';
 import { MailModule } from './mail/mail.module.js';
 import { MarketModule } from './market/market.module.js';
 import { OutboxModule } from './outbox/outbox.module.js';
+import { OversightModule } from './oversight/oversight.module.js';
 import { PaymentsModule } from './payments/payments.module.js';
 import type { ClockPort } from './platform/clock.js';
 import type { Config } from './platform/config.js';
@@ -34,6 +35,7 @@ export class AppModule {
         InvoicesModule,
         LedgerModule,
         MarketModule,
+        OversightModule,
         SystemModule,
       ],
     };

@@ -1,6 +1,6 @@
 /** Health, the API's own description, and what staff watch. */
 import { z } from 'zod';
-import { AmountMinor, Currency, Id, UtcTime } from '../primitives.js';
+import { Currency, Id, UtcTime } from '../primitives.js';
 import { defineRoute } from '../route.js';
 
 export const SystemView = z.object({
@@ -47,7 +47,9 @@ export const HomeView = z.object({
         label: z.string(),
         note: z.string(),
         /** One a currency; nothing is converted. */
-        amounts: z.array(z.object({ currency: Currency, amountMinor: AmountMinor })),
+        amounts: z.array(
+          z.object({ currency: Currency, amountMinor: z.int().describe('whole minor units; may be negative') }),
+        ),
       }),
     )
     .describe('money at a glance; empty for those who see none'),

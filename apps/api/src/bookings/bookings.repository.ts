@@ -6,6 +6,7 @@ import { and, asc, eq, gt, inArray, isNotNull, lt, lte, max, ne, notInArray, or,
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
 import { notFound } from '../platform/domain-error.js';
+import { inGoodStanding } from '../platform/standing.js';
 import type { Db } from '../platform/transaction.js';
 
 export type BookingRow = typeof bookings.$inferSelect;
@@ -230,7 +231,14 @@ export class BookingRepository {
       .select({ id: antennas.id })
       .from(antennas)
       .innerJoin(stations, eq(stations.id, antennas.stationId))
-      .where(and(eq(antennas.id, antennaId), eq(antennas.state, 'on sale'), eq(stations.state, 'approved')))
+      .where(
+        and(
+          eq(antennas.id, antennaId),
+          eq(antennas.state, 'on sale'),
+          eq(stations.state, 'approved'),
+          inGoodStanding(stations.organisationId),
+        ),
+      )
       .get();
     return row !== undefined;
   }

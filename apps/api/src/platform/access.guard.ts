@@ -1,11 +1,12 @@
 /** Nobody gets in unless the route's contract says so: deny by default. */
 import { type CanActivate, type ExecutionContext, Inject, Injectable } from '@nestjs/common';
 import { Reflector } from '@nestjs/core';
-import { can, type RouteContract } from '@skyberth/shared';
+import { can, type Permission, type RouteContract } from '@skyberth/shared';
 import type { Authenticator } from 'passport';
 import { CONFIG, type Config } from './config.js';
 import { type Caller, CONTRACT, type SkyberthRequest } from './contract.js';
 import { DomainError } from './domain-error.js';
+import { KEPT_WHEN_SUSPENDED, StandingService } from './standing.js';
 
 /** Each application has its own: the strategy that features register on it reads that application's database. */
 export const AUTHENTICATOR = Symbol('Authenticator');
@@ -18,6 +19,7 @@ export class AccessGuard implements CanActivate {
     private readonly reflector: Reflector,
     @Inject(CONFIG) private readonly config: Config,
     @Inject(AUTHENTICATOR) private readonly authenticator: Authenticator,
+    private readonly standing: StandingService,
   ) {}
 
   async canActivate(context: ExecutionContext): Promise<boolean> {
@@ -36,7 +38,19 @@ export class AccessGuard implements CanActivate {
         `As ${principal.role} of this organisation you cannot do this. Ask a manager of your organisation.`,
       );
     }
+    if (!SAFE_METHODS.has(request.method)) this.refuseSuspended(principal, contract.access);
     return true;
+  }
+
+  /** A suspended organisation reads on; it changes nothing but what its sold contacts need. */
+  private refuseSuspended(caller: Caller, permission: Permission): void {
+    if (KEPT_WHEN_SUSPENDED.includes(permission)) return;
+    const reason = this.standing.suspendedFor(caller.organisationId);
+    if (reason === null) return;
+    throw new DomainError(
+      'not-allowed',
+      `Your organisation is suspended: ${reason} Write to the marketplace to have it lifted.`,
+    );
   }
 
   /**

@@ -10,6 +10,7 @@ import { ContractInterceptor } from './contract.interceptor.js';
 import { DatabaseModule } from './database.module.js';
 import { IdempotencyStore } from './idempotency.store.js';
 import { ProblemFilter } from './problem.filter.js';
+import { StandingService } from './standing.js';
 
 @Global()
 @Module({})
@@ -24,11 +25,12 @@ export class PlatformModule {
         { provide: AUTHENTICATOR, useFactory: () => new passport.Authenticator() },
         AuditService,
         IdempotencyStore,
+        StandingService,
         { provide: APP_GUARD, useClass: AccessGuard },
         { provide: APP_INTERCEPTOR, useClass: ContractInterceptor },
         { provide: APP_FILTER, useClass: ProblemFilter },
       ],
-      exports: [CONFIG, CLOCK, AUTHENTICATOR, AuditService, IdempotencyStore],
+      exports: [CONFIG, CLOCK, AUTHENTICATOR, AuditService, IdempotencyStore, StandingService],
     };
   }
 }

@@ -14,6 +14,7 @@ import {
 import { OCCUPYING_STATES } from '@skyberth/shared';
 import { and, asc, desc, eq, gt, inArray, lt, lte, max, sql } from 'drizzle-orm';
 import { newId } from '../platform/ids.js';
+import { inGoodStanding } from '../platform/standing.js';
 import type { Db } from '../platform/transaction.js';
 import type { OwnedStation, Scope } from './stations.repository.js';
 
@@ -69,7 +70,14 @@ export class AntennasRepository {
   onSale(db: Db, stationIds: readonly string[], period: Period): WholeAntenna[] {
     const chosen = stationIds.length > 0 ? inArray(stations.id, [...stationIds]) : undefined;
     const rows = this.base(db)
-      .where(and(eq(stations.state, 'approved'), eq(antennas.state, 'on sale'), chosen))
+      .where(
+        and(
+          eq(stations.state, 'approved'),
+          eq(antennas.state, 'on sale'),
+          inGoodStanding(stations.organisationId),
+          chosen,
+        ),
+      )
       .orderBy(asc(sql`lower(${stations.name})`), asc(stations.id), asc(sql`lower(${antennas.name})`))
       .all();
     return this.whole(db, rows, period);

@@ -2,6 +2,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { can, type HomeView, type Principal } from '@skyberth/shared';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
+import { StandingService } from '../platform/standing.js';
 import { ElementsService } from '../spacecraft/elements.service.js';
 import { freshnessOf } from '../spacecraft/freshness.js';
 import { HomeRepository, type WaitingBooking } from './home.repository.js';
@@ -24,17 +25,27 @@ export class HomeService {
     private readonly repository: HomeRepository,
     private readonly figures: HomeFiguresService,
     private readonly elements: ElementsService,
+    private readonly standing: StandingService,
     @Inject(CLOCK) private readonly clock: ClockPort,
   ) {}
 
   view(caller: Principal): HomeView {
-    const waiting = this.waitingFor(caller).sort((a, b) => Number(b.urgent) - Number(a.urgent) || dueMs(a) - dueMs(b));
+    const waiting = [...this.suspension(caller), ...this.waitingFor(caller)].sort(
+      (a, b) => Number(b.urgent) - Number(a.urgent) || dueMs(a) - dueMs(b),
+    );
     return {
       waiting,
       counts: this.countsFor(caller),
       money: this.figures.money(caller),
       firstSteps: this.figures.firstSteps(caller),
     };
+  }
+
+  private suspension({ organisationId }: Principal): Waiting[] {
+    const reason = this.standing.suspendedFor(organisationId);
+    if (reason === null) return [];
+    const sentence = 'Your organisation is suspended: nothing is bought, sold or changed.';
+    return [{ kind: 'suspended', sentence, detail: reason, path: '/organisation', urgent: true, dueUtc: null }];
   }
 
   private waitingFor(caller: Principal): Waiting[] {

@@ -37,6 +37,8 @@ const ADMIN: readonly Page[] = [
   HOME,
   { label: 'Approvals', to: paths.approvals, count: 'approvals', countNoun: 'stations wait for approval' },
   { label: 'Bookings', to: paths.bookings },
+  { label: 'Accounts', to: paths.accounts },
+  { label: 'Audit', to: paths.audit },
   { label: 'System', to: paths.system },
 ];
 

@@ -126,6 +126,18 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('../features/approvals/approval-page.js')).ApprovalPage }),
   },
   {
+    path: paths.accounts,
+    lazy: async () => ({ Component: (await import('../features/oversight/accounts-page.js')).AccountsPage }),
+  },
+  {
+    path: paths.account(':id'),
+    lazy: async () => ({ Component: (await import('../features/oversight/account-page.js')).AccountPage }),
+  },
+  {
+    path: paths.audit,
+    lazy: async () => ({ Component: (await import('../features/oversight/audit-page.js')).AuditPage }),
+  },
+  {
     path: paths.ledger,
     lazy: async () => ({ Component: (await import('../features/ledger/ledger-page.js')).LedgerPage }),
   },

@@ -1,0 +1,13 @@
+/** What admins watch over: the standing of accounts and the audit trail. */
+import { Module } from '@nestjs/common';
+import { MailModule } from '../mail/mail.module.js';
+import { OversightController } from './oversight.controller.js';
+import { OversightRepository } from './oversight.repository.js';
+import { OversightService } from './oversight.service.js';
+
+@Module({
+  imports: [MailModule],
+  controllers: [OversightController],
+  providers: [OversightRepository, OversightService],
+})
+export class OversightModule {}
