@@ -49,7 +49,7 @@ describe('the migrated database', () => {
       "INSERT INTO journal_entries (id, at_ms, cause_key, cause, currency) VALUES (?, 0, ?, 'test', 'EUR')",
     );
     const posting = client.prepare(
-      'INSERT INTO journal_postings (entry_id, line, account, amount_minor) VALUES (?, ?, ?, ?)',
+      "INSERT INTO journal_postings (entry_id, line, account, amount_minor, at_ms, currency) VALUES (?, ?, ?, ?, 0, 'EUR')",
     );
     const seal = client.prepare('UPDATE journal_entries SET sealed = 1 WHERE id = ?');
     entry.run('e1', 'k1');

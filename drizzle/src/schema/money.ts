@@ -20,7 +20,7 @@ export const journalEntries = sqliteTable(
     sealed: ms('sealed').notNull().default(0),
   },
   (t) => [
-    index('journal_entries_at').on(t.atMs),
+    index('journal_entries_at').on(t.atMs, t.id),
     index('journal_entries_booking').on(t.bookingId),
     check('journal_entries_sealed', sql`${t.sealed} IN (0,1)`),
   ],
@@ -38,10 +38,23 @@ export const journalPostings = sqliteTable(
     organisationId: text('organisation_id').references(() => organisations.id),
     /** Debit positive, credit negative. */
     amountMinor: minor('amount_minor').notNull(),
+    /** Time and currency of the entry again (trigger), so that a page of an account is one walk along an index. */
+    atMs: ms('at_ms'),
+    currency: text('currency'),
   },
   (t) => [
     primaryKey({ columns: [t.entryId, t.line] }),
-    index('journal_postings_account').on(t.account, t.organisationId),
+    index('journal_postings_walk').on(t.account, t.currency, t.atMs, t.entryId, t.line, t.amountMinor),
+    index('journal_postings_party').on(
+      t.organisationId,
+      t.account,
+      t.currency,
+      t.atMs,
+      t.entryId,
+      t.line,
+      t.amountMinor,
+    ),
+    index('journal_postings_at').on(t.atMs, t.entryId, t.line),
     check('journal_postings_amount', sql`${t.amountMinor} <> 0`),
   ],
 );

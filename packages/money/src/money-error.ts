@@ -12,7 +12,8 @@ export type MoneyErrorCode =
   | 'bad posting'
   | 'no rate'
   | 'bad invoice'
-  | 'bad payout';
+  | 'bad payout'
+  | 'bad month';
 
 /** Thrown by every function of this package. `code` is stable, `message` is a sentence with the offending value. */
 export class MoneyError extends Error {

@@ -41,16 +41,6 @@ export const Invoice = InvoiceSummary.extend({
 export type InvoiceSummary = z.infer<typeof InvoiceSummary>;
 export type Invoice = z.infer<typeof Invoice>;
 
-export const JournalEntry = z.object({
-  id: Id,
-  atUtc: UtcTime,
-  cause: z.string(),
-  bookingNumber: z.int().nullable(),
-  bookingId: Id.nullable(),
-  currency: Currency,
-  postings: z.array(z.object({ account: z.string(), organisationName: z.string().nullable(), amountMinor: z.int() })),
-});
-
 const tag = 'money';
 export const invoiceRoutes = {
   listInvoices: defineRoute({
@@ -87,28 +77,5 @@ export const invoiceRoutes = {
     params: IdParams,
     produces: 'application/pdf',
     errors: ['not-found'],
-  }),
-  journal: defineRoute({
-    name: 'journal',
-    method: 'GET',
-    path: '/api/ledger/journal',
-    summary: 'Journal entries, newest first',
-    tag,
-    access: 'ledger.read',
-    data: 'all',
-    query: PageQuery.extend({ account: z.string().max(60).optional() }),
-    response: pageOf(JournalEntry),
-  }),
-  balances: defineRoute({
-    name: 'balances',
-    method: 'GET',
-    path: '/api/ledger/balances',
-    summary: 'Balance of every account, as sums of the journal',
-    tag,
-    access: 'ledger.read',
-    data: 'all',
-    response: z.object({
-      items: z.array(z.object({ account: z.string(), currency: Currency, balanceMinor: z.int() })),
-    }),
   }),
 } as const;

@@ -1,14 +1,14 @@
 /** Double entry: every movement of money, tied to its cause, for ever. */
 import { Module } from '@nestjs/common';
-import { JobsModule } from '../jobs/jobs.module.js';
 import { LedgerController } from './ledger.controller.js';
 import { LedgerRepository } from './ledger.repository.js';
 import { LedgerService } from './ledger.service.js';
+import { LedgerFiles } from './ledger-files.js';
+import { LedgerReading } from './ledger-reading.service.js';
 
 @Module({
-  imports: [JobsModule],
   controllers: [LedgerController],
-  providers: [LedgerRepository, LedgerService],
-  exports: [LedgerService],
+  providers: [LedgerRepository, LedgerService, LedgerReading, LedgerFiles],
+  exports: [LedgerService, LedgerRepository],
 })
 export class LedgerModule {}

@@ -1,24 +1,72 @@
-/** The journal in the database. */
+/** The journal in the database: written open, filled and sealed in one transaction; balances come from the sums by month. */
 import { Inject, Injectable } from '@nestjs/common';
-import { bookings, journalEntries, journalPostings, organisations, type SkyberthDatabase } from '@skyberth/drizzle';
-import { ACCOUNTS, type AccountName, type JournalEntry } from '@skyberth/money';
-import { asc, count, desc, eq, exists, inArray, sql, sum } from 'drizzle-orm';
+import {
+  bookings,
+  closedMonths,
+  journalEntries,
+  journalPostings,
+  ledgerChecks,
+  ledgerTotals,
+  organisations,
+  type SkyberthDatabase,
+} from '@skyberth/drizzle';
+import type { JournalEntry } from '@skyberth/money';
+import { and, asc, count, desc, eq, gt, gte, inArray, like, lt, lte, ne, or, type SQL, sql, sum } from 'drizzle-orm';
 import { DATABASE } from '../platform/database.module.js';
 import { newId } from '../platform/ids.js';
 import type { Db } from '../platform/transaction.js';
 
-export interface StoredEntry extends JournalEntry {
+type PostingRow = typeof journalPostings.$inferSelect;
+export type LedgerCheckRow = typeof ledgerChecks.$inferSelect;
+
+export interface StoredEntry {
   readonly id: string;
   readonly atMs: number;
+  readonly causeKey: string;
+  readonly cause: string;
+  readonly currency: string;
   readonly bookingId: string | null;
   readonly bookingNumber: number | null;
+  readonly postings: readonly PostingRow[];
 }
 
-export interface AccountBalance {
+export interface StoredLine extends Omit<StoredEntry, 'id' | 'postings' | 'causeKey'> {
+  readonly entryId: string;
+  readonly line: number;
+  readonly organisationId: string | null;
+  readonly amountMinor: number;
+}
+
+/** A place in a list that goes back in time. */
+export interface Place {
+  readonly atMs: number;
+  readonly entryId: string;
+  readonly line: number;
+}
+
+/** Half-open in time; either end may be open. */
+export interface Span {
+  readonly fromMs: number | null;
+  readonly toMs: number | null;
+}
+
+export interface AccountSums {
+  readonly account: string;
+  readonly organisationId: string;
+  readonly currency: string;
+  readonly debitMinor: number;
+  readonly creditMinor: number;
+  readonly postings: number;
+}
+
+export interface LineFilter {
   readonly account: string;
   readonly currency: string;
-  readonly balanceMinor: number;
+  readonly organisationId: string | undefined;
 }
+
+/** Beginnings of the cause keys of entries that may take more from an owner than there is. */
+const DEBT_CAUSES = ['refund:', 'chargeback', 'dispute', 'adjust'] as const;
 
 @Injectable()
 export class LedgerRepository {
@@ -50,64 +98,212 @@ export class LedgerRepository {
   add(tx: Db, entry: JournalEntry, about: { atMs: number; bookingId: string | null }): void {
     const id = newId();
     const { causeKey, cause, currency } = entry;
-    tx.insert(journalEntries)
-      .values({ id, atMs: about.atMs, causeKey, cause, bookingId: about.bookingId, currency, sealed: 0 })
-      .run();
+    const { atMs, bookingId } = about;
+    tx.insert(journalEntries).values({ id, atMs, causeKey, cause, bookingId, currency, sealed: 0 }).run();
     tx.insert(journalPostings)
-      .values(entry.postings.map((posting, index) => ({ entryId: id, line: index + 1, ...posting })))
+      .values(entry.postings.map((posting, index) => ({ entryId: id, line: index + 1, atMs, currency, ...posting })))
       .run();
     tx.update(journalEntries).set({ sealed: 1 }).where(eq(journalEntries.id, id)).run();
   }
 
-  page(query: { account?: string | undefined; page: number; pageSize: number }): {
-    entries: StoredEntry[];
-    total: number;
-  } {
-    const { account } = query;
-    const where = account
-      ? exists(
-          this.db
-            .select({ one: sql`1` })
-            .from(journalPostings)
-            .where(sql`${journalPostings.entryId} = ${journalEntries.id} AND ${journalPostings.account} = ${account}`),
-        )
-      : undefined;
-    const total = this.db.select({ total: count() }).from(journalEntries).where(where).get()?.total ?? 0;
+  /** Entries from the newest back, `limit` at a time. */
+  entries(query: {
+    span: Span;
+    currency: string | undefined;
+    bookingNumber: number | undefined;
+    after: Place | null;
+    limit: number;
+  }): StoredEntry[] {
+    const { span, after } = query;
     const heads = this.db
       .select({ entry: journalEntries, bookingNumber: bookings.number })
       .from(journalEntries)
       .leftJoin(bookings, eq(bookings.id, journalEntries.bookingId))
-      .where(where)
+      .where(
+        and(
+          query.currency === undefined ? undefined : eq(journalEntries.currency, query.currency),
+          query.bookingNumber === undefined ? undefined : eq(bookings.number, query.bookingNumber),
+          span.fromMs === null ? undefined : gte(journalEntries.atMs, span.fromMs),
+          span.toMs === null ? undefined : lt(journalEntries.atMs, span.toMs),
+          after === null
+            ? undefined
+            : sql`(${journalEntries.atMs}, ${journalEntries.id}) < (${after.atMs}, ${after.entryId})`,
+        ),
+      )
       .orderBy(desc(journalEntries.atMs), desc(journalEntries.id))
-      .limit(query.pageSize)
-      .offset((query.page - 1) * query.pageSize)
-      .all();
-    return { entries: this.filled(heads), total };
-  }
-
-  /** The whole journal, oldest first, for the self-check. */
-  all(): StoredEntry[] {
-    const heads = this.db
-      .select({ entry: journalEntries, bookingNumber: bookings.number })
-      .from(journalEntries)
-      .leftJoin(bookings, eq(bookings.id, journalEntries.bookingId))
-      .orderBy(asc(journalEntries.atMs), asc(journalEntries.id))
+      .limit(query.limit)
       .all();
     return this.filled(heads);
   }
 
-  balances(): AccountBalance[] {
+  /** Postings of one account from the newest back. */
+  lines(filter: LineFilter, query: { span: Span; after: Place | null; limit: number }): StoredLine[] {
+    const { after } = query;
     return this.db
       .select({
-        account: journalPostings.account,
+        entryId: journalPostings.entryId,
+        line: journalPostings.line,
+        organisationId: journalPostings.organisationId,
+        amountMinor: journalPostings.amountMinor,
+        atMs: journalEntries.atMs,
+        cause: journalEntries.cause,
         currency: journalEntries.currency,
-        balanceMinor: sum(journalPostings.amountMinor).mapWith(Number),
+        bookingId: journalEntries.bookingId,
+        bookingNumber: bookings.number,
       })
       .from(journalPostings)
       .innerJoin(journalEntries, eq(journalEntries.id, journalPostings.entryId))
-      .groupBy(journalPostings.account, journalEntries.currency)
-      .orderBy(asc(journalEntries.currency), asc(journalPostings.account))
+      .leftJoin(bookings, eq(bookings.id, journalEntries.bookingId))
+      .where(and(lineCondition(filter, query.span), after === null ? undefined : before(after)))
+      .orderBy(desc(journalPostings.atMs), desc(journalPostings.entryId), desc(journalPostings.line))
+      .limit(query.limit)
       .all();
+  }
+
+  /** What an account moved from the beginning of a month up to a place in it, that line included. */
+  movedUpTo(filter: LineFilter, span: Span, place: Place): number {
+    const row = this.db
+      .select({ minor: sum(journalPostings.amountMinor).mapWith(Number) })
+      .from(journalPostings)
+      .where(
+        and(
+          lineCondition(filter, { fromMs: span.fromMs, toMs: null }),
+          lte(journalPostings.atMs, place.atMs),
+          or(
+            lt(journalPostings.atMs, place.atMs),
+            sql`(${journalPostings.entryId}, ${journalPostings.line}) <= (${place.entryId}, ${place.line})`,
+          ),
+        ),
+      )
+      .get();
+    return row?.minor ?? 0;
+  }
+
+  /** Sums of accounts over whole months, from the rows that the database keeps; `before` and the ends are months. */
+  sums(where: {
+    account?: string | undefined;
+    currency?: string | undefined;
+    organisationId?: string | undefined;
+    fromMonth?: string | undefined;
+    toMonth?: string | undefined;
+    before?: string | undefined;
+  }): AccountSums[] {
+    return this.db
+      .select({
+        account: ledgerTotals.account,
+        organisationId: ledgerTotals.organisationId,
+        currency: ledgerTotals.currency,
+        debitMinor: sum(ledgerTotals.debitMinor).mapWith(Number),
+        creditMinor: sum(ledgerTotals.creditMinor).mapWith(Number),
+        postings: sum(ledgerTotals.postings).mapWith(Number),
+      })
+      .from(ledgerTotals)
+      .where(
+        and(
+          where.account === undefined ? undefined : eq(ledgerTotals.account, where.account),
+          where.currency === undefined ? undefined : eq(ledgerTotals.currency, where.currency),
+          where.organisationId === undefined ? undefined : eq(ledgerTotals.organisationId, where.organisationId),
+          where.fromMonth === undefined ? undefined : gte(ledgerTotals.month, where.fromMonth),
+          where.toMonth === undefined ? undefined : lte(ledgerTotals.month, where.toMonth),
+          where.before === undefined ? undefined : lt(ledgerTotals.month, where.before),
+        ),
+      )
+      .groupBy(ledgerTotals.account, ledgerTotals.organisationId, ledgerTotals.currency)
+      .orderBy(asc(ledgerTotals.currency), asc(ledgerTotals.account), asc(ledgerTotals.organisationId))
+      .all();
+  }
+
+  /** Sums of each account and month in one currency, oldest first. */
+  months(currency: string): { month: string; account: string; debitMinor: number; creditMinor: number }[] {
+    return this.db
+      .select({
+        month: ledgerTotals.month,
+        account: ledgerTotals.account,
+        debitMinor: sum(ledgerTotals.debitMinor).mapWith(Number),
+        creditMinor: sum(ledgerTotals.creditMinor).mapWith(Number),
+      })
+      .from(ledgerTotals)
+      .where(eq(ledgerTotals.currency, currency))
+      .groupBy(ledgerTotals.month, ledgerTotals.account)
+      .orderBy(asc(ledgerTotals.month), asc(ledgerTotals.account))
+      .all();
+  }
+
+  /** Every month that has entries, oldest first. */
+  monthsWithEntries(): string[] {
+    return this.db
+      .selectDistinct({ month: ledgerTotals.month })
+      .from(ledgerTotals)
+      .orderBy(asc(ledgerTotals.month))
+      .all()
+      .map((row) => row.month);
+  }
+
+  /** Entries of a span whose postings do not sum to zero. */
+  unbalanced(span: { fromMs: number; toMs: number }): { entryId: string; minor: number }[] {
+    const minor = sql<number>`sum(${journalPostings.amountMinor})`;
+    return this.db
+      .select({ entryId: journalPostings.entryId, minor })
+      .from(journalPostings)
+      .where(and(gte(journalPostings.atMs, span.fromMs), lt(journalPostings.atMs, span.toMs)))
+      .groupBy(journalPostings.entryId)
+      .having(ne(minor, 0))
+      .all();
+  }
+
+  /** The postings of a span summed anew, to hold against the sums that are kept. */
+  summedAnew(span: { fromMs: number; toMs: number }): AccountSums[] {
+    return this.db
+      .select({
+        account: journalPostings.account,
+        organisationId: sql<string>`coalesce(${journalPostings.organisationId}, '')`,
+        currency: sql<string>`${journalPostings.currency}`,
+        debitMinor: sql<number>`sum(max(${journalPostings.amountMinor}, 0))`,
+        creditMinor: sql<number>`sum(max(-${journalPostings.amountMinor}, 0))`,
+        postings: sql<number>`count(*)`,
+      })
+      .from(journalPostings)
+      .where(and(gte(journalPostings.atMs, span.fromMs), lt(journalPostings.atMs, span.toMs)))
+      .groupBy(journalPostings.account, journalPostings.organisationId, journalPostings.currency)
+      .all();
+  }
+
+  openEntries(): number {
+    const row = this.db.select({ rows: count() }).from(journalEntries).where(eq(journalEntries.sealed, 0)).get();
+    return row?.rows ?? 0;
+  }
+
+  /** How much of an owner's debits have a cause that can leave a debt: refunds, chargebacks, disputes, adjustments. */
+  causedDebtMinor(ownerId: string, currency: string): number {
+    const row = this.db
+      .select({ minor: sum(journalPostings.amountMinor).mapWith(Number) })
+      .from(journalPostings)
+      .innerJoin(journalEntries, eq(journalEntries.id, journalPostings.entryId))
+      .where(
+        and(
+          eq(journalPostings.organisationId, ownerId),
+          eq(journalPostings.account, 'owner payable'),
+          eq(journalPostings.currency, currency),
+          gt(journalPostings.amountMinor, 0),
+          or(...DEBT_CAUSES.map((cause) => like(journalEntries.causeKey, `${cause}%`))),
+        ),
+      )
+      .get();
+    return row?.minor ?? 0;
+  }
+
+  addCheck(tx: Db, check: Omit<LedgerCheckRow, 'id'>): void {
+    tx.insert(ledgerChecks)
+      .values({ id: newId(), ...check })
+      .run();
+  }
+
+  lastCheck(): LedgerCheckRow | undefined {
+    return this.db.select().from(ledgerChecks).orderBy(desc(ledgerChecks.atMs), desc(ledgerChecks.id)).limit(1).get();
+  }
+
+  closedMonths(): (typeof closedMonths.$inferSelect)[] {
+    return this.db.select().from(closedMonths).orderBy(desc(closedMonths.month)).all();
   }
 
   names(organisationIds: readonly string[]): Map<string, string> {
@@ -122,33 +318,31 @@ export class LedgerRepository {
 
   private filled(heads: { entry: typeof journalEntries.$inferSelect; bookingNumber: number | null }[]): StoredEntry[] {
     const ids = heads.map((head) => head.entry.id);
-    const byEntry = new Map<string, JournalEntry['postings'][number][]>(ids.map((id) => [id, []]));
-    for (let from = 0; from < ids.length; from += 500) {
-      const rows = this.db
-        .select()
-        .from(journalPostings)
-        .where(inArray(journalPostings.entryId, ids.slice(from, from + 500)))
-        .orderBy(asc(journalPostings.entryId), asc(journalPostings.line))
-        .all();
-      for (const { entryId, account, organisationId, amountMinor } of rows) {
-        byEntry.get(entryId)?.push({ account: accountName(account), organisationId, amountMinor });
-      }
-    }
+    const byEntry = new Map<string, PostingRow[]>(ids.map((id) => [id, []]));
+    const rows = this.db
+      .select()
+      .from(journalPostings)
+      .where(inArray(journalPostings.entryId, ids))
+      .orderBy(asc(journalPostings.entryId), asc(journalPostings.line))
+      .all();
+    for (const row of rows) byEntry.get(row.entryId)?.push(row);
     return heads.map(({ entry, bookingNumber }) => ({
-      id: entry.id,
-      atMs: entry.atMs,
-      causeKey: entry.causeKey,
-      cause: entry.cause,
-      currency: entry.currency,
-      bookingId: entry.bookingId,
+      ...entry,
       bookingNumber,
       postings: byEntry.get(entry.id) ?? [],
     }));
   }
 }
 
-function accountName(text: string): AccountName {
-  const known = ACCOUNTS.find((account) => account === text);
-  if (!known) throw new Error(`The ledger has an account “${text}” that nobody knows.`);
-  return known;
+function lineCondition(filter: LineFilter, span: Span): SQL | undefined {
+  return and(
+    filter.organisationId === undefined ? undefined : eq(journalPostings.organisationId, filter.organisationId),
+    eq(journalPostings.account, filter.account),
+    eq(journalPostings.currency, filter.currency),
+    span.fromMs === null ? undefined : gte(journalPostings.atMs, span.fromMs),
+    span.toMs === null ? undefined : lt(journalPostings.atMs, span.toMs),
+  );
 }
+
+const before = (place: Place): SQL =>
+  sql`(${journalPostings.atMs}, ${journalPostings.entryId}, ${journalPostings.line}) < (${place.atMs}, ${place.entryId}, ${place.line})`;

@@ -1,34 +1,28 @@
-/** The ledger: written with the changes that cause its entries, read by finance, checked against itself. */
-import { Inject, Injectable, Logger, type OnModuleInit } from '@nestjs/common';
-import { type AccountName, checkLedger, type JournalEntry, type LedgerFault } from '@skyberth/money';
-import type { ResponseOf, routes } from '@skyberth/shared';
-import { JobsService } from '../jobs/jobs.service.js';
+/** The ledger: written with the changes that cause its entries, and checked against itself. */
+import { Inject, Injectable } from '@nestjs/common';
+import { type AccountName, type JournalEntry, type LedgerFault, monthOf, monthSpan } from '@skyberth/money';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import type { Db } from '../platform/transaction.js';
-import { LedgerRepository } from './ledger.repository.js';
+import { type AccountSums, LedgerRepository } from './ledger.repository.js';
 
-const DAY_MS = 86_400_000;
+/** Accounts that can only stand on one side: the other means that something was paid, refunded or released twice. */
+const NEVER_DEBIT: readonly string[] = ['refunds', 'dispute reserve', 'payout clearing'] satisfies AccountName[];
 
 @Injectable()
-export class LedgerService implements OnModuleInit {
-  private readonly log = new Logger('Ledger');
-
+export class LedgerService {
   constructor(
     private readonly repository: LedgerRepository,
-    private readonly jobs: JobsService,
     @Inject(CLOCK) private readonly clock: ClockPort,
   ) {}
-
-  onModuleInit(): void {
-    this.jobs.every('ledger self-check', DAY_MS, () => {
-      for (const fault of this.selfCheck()) this.log.error(fault.sentence);
-    });
-  }
 
   /** Writes an entry in the transaction of its cause. The same cause is written once, however often it is reported. */
   post(tx: Db, entry: JournalEntry, bookingId: string | null): void {
     if (this.repository.has(tx, entry.causeKey)) return;
     this.repository.add(tx, entry, { atMs: this.clock.nowMs(), bookingId });
+  }
+
+  has(tx: Db, causeKey: string): boolean {
+    return this.repository.has(tx, causeKey);
   }
 
   /** What the entry of this cause credited to an account; zero where there is none. */
@@ -37,32 +31,83 @@ export class LedgerService implements OnModuleInit {
     return amountMinor === 0 ? 0 : -amountMinor;
   }
 
+  /** What an account holds, all organisations together; debit positive. */
+  balanceMinor(account: AccountName, currency: string, organisationId?: string): number {
+    return this.repository
+      .sums({ account, currency, organisationId })
+      .reduce((total, one) => total + one.debitMinor - one.creditMinor, 0);
+  }
+
   /** Everything that does not hold in the journal; empty when it is sound. */
-  selfCheck(known: Parameters<typeof checkLedger>[1] = {}): LedgerFault[] {
-    return checkLedger(this.repository.all(), known);
+  selfCheck(): LedgerFault[] {
+    return [...this.checkByParts()].flat();
   }
 
-  journal(query: { account?: string | undefined; page: number; pageSize: number }): ResponseOf<typeof routes.journal> {
-    const { entries, total } = this.repository.page(query);
-    const ids = entries.flatMap((entry) => entry.postings.flatMap((posting) => posting.organisationId ?? []));
-    const names = this.repository.names([...new Set(ids)]);
-    const items = entries.map((entry) => ({
-      id: entry.id,
-      atUtc: new Date(entry.atMs).toISOString(),
-      cause: entry.cause,
-      bookingNumber: entry.bookingNumber,
-      bookingId: entry.bookingId,
-      currency: entry.currency,
-      postings: entry.postings.map(({ account, organisationId, amountMinor }) => ({
-        account,
-        organisationName: organisationId === null ? null : (names.get(organisationId) ?? null),
-        amountMinor,
-      })),
+  /** The same in parts of a month each, so that a large journal can be checked between other work. */
+  *checkByParts(): Generator<LedgerFault[]> {
+    yield this.checkOpen();
+    for (const month of this.repository.monthsWithEntries()) yield this.checkMonth(month);
+    yield this.checkBalances();
+  }
+
+  private checkOpen(): LedgerFault[] {
+    const open = this.repository.openEntries();
+    if (open === 0) return [];
+    return [{ kind: 'unbalanced entry', sentence: `${open} entries were begun and never sealed.` }];
+  }
+
+  private checkMonth(month: string): LedgerFault[] {
+    const span = monthSpan(month);
+    const faults: LedgerFault[] = this.repository.unbalanced(span).map(({ entryId, minor }) => ({
+      kind: 'unbalanced entry',
+      sentence: `The entry ${entryId} is out of balance by ${minor} minor units.`,
     }));
-    return { items, total, page: query.page, pageSize: query.pageSize };
+    const kept = new Map(this.repository.sums({ fromMonth: month, toMonth: month }).map((one) => [keyOf(one), one]));
+    const anew = this.repository.summedAnew(span);
+    const differs = anew.filter((one) => !sameSums(one, kept.get(keyOf(one))));
+    if (differs.length > 0 || kept.size !== anew.length) {
+      const accounts = differs.map(keyOf).join(', ') || 'an account without postings';
+      faults.push({
+        kind: 'unbalanced currency',
+        sentence: `The sums kept for ${month} are not those of the journal: ${accounts}.`,
+      });
+    }
+    return faults;
   }
 
-  balances(): ResponseOf<typeof routes.balances> {
-    return { items: this.repository.balances() };
+  private checkBalances(): LedgerFault[] {
+    const faults: LedgerFault[] = [];
+    const perCurrency = new Map<string, number>();
+    for (const sums of this.repository.sums({})) {
+      const minor = sums.debitMinor - sums.creditMinor;
+      perCurrency.set(sums.currency, (perCurrency.get(sums.currency) ?? 0) + minor);
+      if (minor > 0) faults.push(...this.sideFaults(sums, minor));
+    }
+    for (const [currency, minor] of perCurrency) {
+      if (minor === 0) continue;
+      const sentence = `All accounts in ${currency} together are out of balance by ${minor} minor units.`;
+      faults.push({ kind: 'unbalanced currency', sentence });
+    }
+    return faults;
+  }
+
+  private sideFaults({ account, organisationId, currency }: AccountSums, minor: number): LedgerFault[] {
+    if (NEVER_DEBIT.includes(account)) {
+      const sentence = `“${account}” of ${organisationId} stands ${minor} minor units of ${currency} beyond what was set aside.`;
+      return [{ kind: 'wrong side', sentence }];
+    }
+    if (account !== 'owner payable' || this.repository.causedDebtMinor(organisationId, currency) >= minor) return [];
+    const sentence = `The owner ${organisationId} owes ${minor} minor units of ${currency} and no cause is known.`;
+    return [{ kind: 'owner owes', sentence }];
+  }
+
+  /** The month that is running. */
+  currentMonth(): string {
+    return monthOf(this.clock.nowMs());
   }
 }
+
+const keyOf = (sums: AccountSums): string => `${sums.account} ${sums.organisationId} ${sums.currency}`;
+
+const sameSums = (a: AccountSums, b: AccountSums | undefined): boolean =>
+  b !== undefined && a.debitMinor === b.debitMinor && a.creditMinor === b.creditMinor && a.postings === b.postings;

@@ -20,6 +20,7 @@ export const OWN_ACCOUNTS = [
   'adjustments',
   'losses',
   'bank',
+  'suspense',
   'rounding',
 ] as const;
 
@@ -44,6 +45,7 @@ export const ACCOUNT_FACTS: Readonly<Record<AccountName, { readonly kind: Accoun
   adjustments: { kind: 'cost', holds: 'corrections by finance, each with a reason' },
   losses: { kind: 'cost', holds: 'money that will not come back' },
   bank: { kind: 'asset', holds: "the marketplace's own bank account" },
+  suspense: { kind: 'liability', holds: 'money at the provider that nobody can explain yet' },
   rounding: { kind: 'cost', holds: 'differences of a minor unit, explained one by one' },
 };
 
