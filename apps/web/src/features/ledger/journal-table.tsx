@@ -10,13 +10,11 @@ type Entry = ResponseOf<typeof routes.journal>['items'][number];
 
 interface JournalTableProps {
   readonly entries: readonly Entry[];
-  /** The chosen account, whose lines stand out. */
-  readonly account: string | undefined;
-  readonly onAccount: (account: string) => void;
+  readonly onAccount: (account: string, currency: string) => void;
 }
 
 /** Entries with their lines: debits at the left, credits at the right, each entry level. */
-export function JournalTable({ entries, account, onAccount }: JournalTableProps) {
+export function JournalTable({ entries, onAccount }: JournalTableProps) {
   return (
     <div className={classes.scroll}>
       <Table className={classes.journal}>
@@ -45,10 +43,10 @@ export function JournalTable({ entries, account, onAccount }: JournalTableProps)
             </Table.Tr>
             {entry.postings.map((posting, index) => (
               // biome-ignore lint/suspicious/noArrayIndexKey: lines of a sealed entry never change their place
-              <Table.Tr key={index} className={classes.line} data-picked={posting.account === account || undefined}>
+              <Table.Tr key={index} className={classes.line}>
                 <Table.Td />
                 <Table.Td>
-                  <Anchor component="button" type="button" onClick={() => onAccount(posting.account)}>
+                  <Anchor component="button" type="button" onClick={() => onAccount(posting.account, entry.currency)}>
                     {posting.account}
                   </Anchor>
                   {posting.organisationName && <span className={classes.holds}>{posting.organisationName}</span>}

@@ -1,164 +1,202 @@
-/** Every movement of money: what each account holds, and the journal it is the sum of. */
-import { Anchor, Group, Pagination, Paper, Select, Skeleton } from '@mantine/core';
-import { routes } from '@skyberth/shared';
-import { keepPreviousData, queryOptions, useQuery } from '@tanstack/react-query';
+/** Every movement of money: what each account holds, the journal it is the sum of, and the way from a balance to a contact. */
+import { Anchor, Button, Group, NumberInput, Select, Skeleton } from '@mantine/core';
+import { useQuery } from '@tanstack/react-query';
 import { useSearchParams } from 'react-router-dom';
-import { call } from '../../lib/api-client.js';
 import { sentenceOf } from '../../lib/problem-fields.js';
 import { useTitle } from '../../lib/use-title.js';
-import { EmptyState } from '../../ui/empty-state.js';
 import { FilterPart, FilterSentence } from '../../ui/filter-sentence.js';
-import { formatMoney, formatNumber } from '../../ui/format.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
-import { Sign } from '../../ui/signs.js';
-import { JournalTable } from './journal-table.js';
+import { AccountLines } from './account-lines.js';
+import { BalanceCard } from './balance-card.js';
+import { JournalSection } from './journal-section.js';
 import classes from './ledger.module.css';
-import {
-  accountNames,
-  byCurrency,
-  type CurrencyBalances,
-  type LedgerFilter,
-  readFilter,
-  SIDE_WORDS,
-  writeFilter,
-} from './ledger-view.js';
-
-const PAGE_SIZE = 50;
-
-const ledgerQueries = {
-  balances: () =>
-    queryOptions({ queryKey: ['ledger', 'balances'], queryFn: ({ signal }) => call(routes.balances, { signal }) }),
-  journal: ({ account, page }: LedgerFilter) =>
-    queryOptions({
-      queryKey: ['ledger', 'journal', account ?? '', page],
-      queryFn: ({ signal }) => call(routes.journal, { query: { account, page, pageSize: PAGE_SIZE }, signal }),
-      placeholderData: keepPreviousData,
-    }),
-};
+import { LedgerChart } from './ledger-chart.js';
+import { LedgerCheckCard } from './ledger-check-card.js';
+import { ledgerQueries } from './ledger-queries.js';
+import { accountNames, byCurrency, type LedgerFilter, monthsBack, readFilter, writeFilter } from './ledger-view.js';
 
 export function LedgerPage() {
   useTitle('Ledger');
   const [search, setSearch] = useSearchParams();
   const filter = readFilter(search);
   const balances = useQuery(ledgerQueries.balances());
-  const journal = useQuery(ledgerQueries.journal(filter));
-  const choose = (account: string | undefined) => setSearch(writeFilter({ account, page: 1 }));
-  const error = balances.error ?? journal.error;
+  const currencies = [...new Set((balances.data?.items ?? []).map((item) => item.currency))].sort();
+  const currency = filter.currency ?? currencies[0];
+  const change = (part: Partial<LedgerFilter>) => setSearch(writeFilter({ ...filter, ...part }));
+  const account = filter.account;
   return (
     <>
       <FilterSentence>
         The journal of{' '}
-        <FilterPart name="Account" value={filter.account ?? 'every account'}>
-          {(close) => (
-            <Select
-              aria-label="Account"
-              data={accountNames()}
-              value={filter.account ?? null}
-              placeholder="every account"
-              clearable
-              searchable
-              comboboxProps={{ withinPortal: false }}
-              onChange={(account) => {
-                choose(account ?? undefined);
-                close();
-              }}
-            />
-          )}
-        </FilterPart>
-        , newest first{journal.data && `: ${formatNumber(journal.data.total)} entries`}.
+        <AccountPart account={account} onChange={(next) => change({ account: next, organisationId: undefined })} />
+        {currencies.length > 0 && (
+          <>
+            {' '}
+            in <CurrencyPart filter={filter} currencies={currencies} onChange={change} />
+          </>
+        )}
+        , <MonthPart filter={filter} onChange={change} />
+        {!account && (
+          <>
+            , <BerthPart bookingNumber={filter.bookingNumber} onChange={change} />
+          </>
+        )}
+        .
       </FilterSentence>
-      {error && (
-        <ProblemNotice
-          title="The ledger could not be read"
-          onRetry={() => {
-            void balances.refetch();
-            void journal.refetch();
-          }}
-        >
-          {sentenceOf(error)}
+      {balances.error && (
+        <ProblemNotice title="The balances could not be read" onRetry={() => void balances.refetch()}>
+          {sentenceOf(balances.error)}
         </ProblemNotice>
       )}
       <div className={classes.columns}>
-        <section aria-label="Journal" aria-busy={journal.isFetching}>
-          {journal.isPending && <Skeleton height={420} />}
-          {journal.data?.items.length === 0 && (
-            <EmptyState title="No entry here">
-              The first one is written when a contact is reported and charged.
-            </EmptyState>
-          )}
-          {journal.data && journal.data.items.length > 0 && (
-            <JournalTable entries={journal.data.items} account={filter.account} onAccount={choose} />
-          )}
-          {journal.data && journal.data.total > PAGE_SIZE && (
-            <Group mt={12}>
-              <Pagination
-                total={Math.ceil(journal.data.total / PAGE_SIZE)}
-                value={filter.page}
-                onChange={(page) => setSearch(writeFilter({ ...filter, page }))}
-                getControlProps={(control) => ({ 'aria-label': `${control} page` })}
-              />
-            </Group>
-          )}
-        </section>
+        {account && currency ? (
+          <AccountLines filter={{ ...filter, account, currency }} onChange={change} />
+        ) : (
+          <JournalSection
+            filter={filter}
+            onAccount={(picked, inCurrency) => change({ account: picked, currency: inCurrency })}
+          />
+        )}
         <div className={classes.stack}>
           {balances.isPending && <Skeleton height={320} />}
-          {balances.data && balances.data.items.length === 0 && (
-            <p className={classes.quiet}>Every account is empty.</p>
-          )}
+          {balances.data?.items.length === 0 && <p className={classes.quiet}>Every account is empty.</p>}
           {balances.data &&
-            byCurrency(balances.data.items).map((one) => (
-              <BalanceCard key={one.currency} balances={one} picked={filter.account} onPick={choose} />
-            ))}
+            byCurrency(balances.data.items)
+              .filter((one) => filter.currency === undefined || one.currency === filter.currency)
+              .map((one) => (
+                <BalanceCard
+                  key={one.currency}
+                  balances={one}
+                  picked={one.currency === currency ? account : undefined}
+                  onPick={(picked) => change({ account: picked, currency: one.currency, organisationId: undefined })}
+                />
+              ))}
+          {currency && <LedgerChart currency={currency} />}
+          <LedgerCheckCard />
+          <Files month={filter.fromMonth ?? monthsBack(1)[0] ?? ''} />
         </div>
       </div>
     </>
   );
 }
 
-interface BalanceCardProps {
-  readonly balances: CurrencyBalances;
-  readonly picked: string | undefined;
-  readonly onPick: (account: string | undefined) => void;
+interface PartProps {
+  readonly filter: LedgerFilter;
+  readonly onChange: (part: Partial<LedgerFilter>) => void;
 }
 
-function BalanceCard({ balances, picked, onPick }: BalanceCardProps) {
-  const { currency, rows, sumMinor } = balances;
+function AccountPart(props: { account: string | undefined; onChange: (account: string | undefined) => void }) {
   return (
-    <Paper component="section" withBorder className={classes.card} aria-label={`Balances in ${currency}`}>
-      <h2>Balances, {currency}</h2>
-      <table className={classes.balances}>
-        <tbody>
-          {rows.map((row, index) => (
-            <tr
-              key={row.account}
-              data-picked={row.account === picked || undefined}
-              data-first={row.side !== rows[index - 1]?.side || undefined}
-            >
-              <th scope="row">
-                {row.side !== rows[index - 1]?.side && row.side && <small>{SIDE_WORDS[row.side]}</small>}
-                <Anchor
-                  component="button"
-                  type="button"
-                  aria-pressed={row.account === picked}
-                  onClick={() => onPick(row.account === picked ? undefined : row.account)}
-                >
-                  {row.account}
-                </Anchor>
-                <span className={classes.holds}>{row.holds}</span>
-              </th>
-              <td data-quiet={row.balanceMinor === 0 || undefined}>
-                {formatMoney({ amountMinor: row.balanceMinor, currency })}
-              </td>
-            </tr>
-          ))}
-        </tbody>
-      </table>
-      <p className={sumMinor === 0 ? classes.level : classes.off}>
-        <Sign shape={sumMinor === 0 ? 'check' : 'square'} />
-        {sumMinor === 0
-          ? 'Debits and credits are level to the cent.'
-          : `Debits and credits differ by ${formatMoney({ amountMinor: sumMinor, currency })}. Stop and look.`}
-      </p>
-    </Paper>
+    <FilterPart name="Account" value={props.account ?? 'every account'}>
+      {(close) => (
+        <Select
+          aria-label="Account"
+          data={accountNames()}
+          value={props.account ?? null}
+          placeholder="every account"
+          clearable
+          searchable
+          comboboxProps={{ withinPortal: false }}
+          onChange={(account) => {
+            props.onChange(account ?? undefined);
+            close();
+          }}
+        />
+      )}
+    </FilterPart>
+  );
+}
+
+function CurrencyPart({ filter, currencies, onChange }: PartProps & { readonly currencies: readonly string[] }) {
+  return (
+    <FilterPart name="Currency" value={filter.currency ?? (filter.account ? (currencies[0] ?? '') : 'all currencies')}>
+      {(close) => (
+        <Select
+          aria-label="Currency"
+          data={[...currencies]}
+          value={filter.currency ?? null}
+          placeholder="all currencies"
+          clearable
+          comboboxProps={{ withinPortal: false }}
+          onChange={(currency) => {
+            onChange({ currency: currency ?? undefined });
+            close();
+          }}
+        />
+      )}
+    </FilterPart>
+  );
+}
+
+const MONTHS_OFFERED = 36;
+
+function MonthPart({ filter, onChange }: PartProps) {
+  const { fromMonth, toMonth } = filter;
+  const value = fromMonth || toMonth ? `${fromMonth ?? 'the beginning'} to ${toMonth ?? 'now'}` : 'of all time';
+  return (
+    <FilterPart name="Months" value={value}>
+      <Select
+        label="From"
+        data={monthsBack(MONTHS_OFFERED)}
+        value={fromMonth ?? null}
+        placeholder="the beginning"
+        clearable
+        comboboxProps={{ withinPortal: false }}
+        onChange={(month) => onChange({ fromMonth: month ?? undefined })}
+      />
+      <Select
+        label="To, that month included"
+        mt="xs"
+        data={monthsBack(MONTHS_OFFERED)}
+        value={toMonth ?? null}
+        placeholder="now"
+        clearable
+        comboboxProps={{ withinPortal: false }}
+        onChange={(month) => onChange({ toMonth: month ?? undefined })}
+      />
+    </FilterPart>
+  );
+}
+
+function BerthPart(props: { bookingNumber: number | undefined; onChange: PartProps['onChange'] }) {
+  return (
+    <FilterPart name="Berth" value={props.bookingNumber ? `of berth ${props.bookingNumber}` : 'of every berth'}>
+      {(close) => (
+        <form
+          onSubmit={(event) => {
+            event.preventDefault();
+            const number = Number(new FormData(event.currentTarget).get('berth'));
+            props.onChange({ bookingNumber: number > 0 ? number : undefined });
+            close();
+          }}
+        >
+          <NumberInput
+            name="berth"
+            label="Number of the berth"
+            defaultValue={props.bookingNumber ?? ''}
+            min={1}
+            allowDecimal={false}
+          />
+          <Button type="submit" mt="xs" size="sm">
+            Show
+          </Button>
+        </form>
+      )}
+    </FilterPart>
+  );
+}
+
+/** Files of one month for accounting software. */
+function Files({ month }: { readonly month: string }) {
+  const href = (file: string) => `/api/ledger/files/${file}?month=${month}`;
+  return (
+    <section aria-label="Files" className={classes.files}>
+      <h2>Files of {month}</h2>
+      <Group gap="md">
+        <Anchor href={href('journal.csv')}>Journal, CSV</Anchor>
+        <Anchor href={href('trial-balance.csv')}>Trial balance, CSV</Anchor>
+        <Anchor href={href('vat-summary.csv')}>VAT summary, CSV</Anchor>
+      </Group>
+    </section>
   );
 }

@@ -19,6 +19,7 @@ const ACCOUNTS: Readonly<Record<string, { readonly side: Side; readonly holds: s
   'provider costs': { side: 'cost', holds: 'charges of the payment provider' },
   adjustments: { side: 'cost', holds: 'corrections, each with a reason' },
   losses: { side: 'cost', holds: 'money that will not come back' },
+  suspense: { side: 'liability', holds: 'at the provider, not explained yet' },
   rounding: { side: 'cost', holds: 'differences of a minor unit' },
 };
 
@@ -63,20 +64,84 @@ const orderOf = (side: Side | null): number => (side === null ? SIDES.length : S
 
 export interface LedgerFilter {
   readonly account: string | undefined;
-  readonly page: number;
+  readonly currency: string | undefined;
+  readonly organisationId: string | undefined;
+  readonly bookingNumber: number | undefined;
+  readonly fromMonth: string | undefined;
+  readonly toMonth: string | undefined;
 }
 
 const LONGEST_ACCOUNT = 60;
+const FORMS = {
+  currency: /^[A-Z]{3}$/,
+  organisationId: /^[0-9a-f-]{36}$/,
+  fromMonth: /^\d{4}-(0[1-9]|1[0-2])$/,
+  toMonth: /^\d{4}-(0[1-9]|1[0-2])$/,
+} as const;
 
 /** The filter in the address; what cannot be read is left out. */
 export function readFilter(search: URLSearchParams): LedgerFilter {
-  const account = search.get('account')?.slice(0, LONGEST_ACCOUNT) || undefined;
-  const page = Number(search.get('page'));
-  return { account, page: Number.isInteger(page) && page >= 1 ? page : 1 };
+  const read = (name: keyof typeof FORMS) => {
+    const text = search.get(name);
+    return text !== null && FORMS[name].test(text) ? text : undefined;
+  };
+  const berth = Number(search.get('berth'));
+  return {
+    account: search.get('account')?.slice(0, LONGEST_ACCOUNT) || undefined,
+    currency: read('currency'),
+    organisationId: read('organisationId'),
+    bookingNumber: Number.isInteger(berth) && berth >= 1 ? berth : undefined,
+    fromMonth: read('fromMonth'),
+    toMonth: read('toMonth'),
+  };
 }
 
-export function writeFilter({ account, page }: LedgerFilter): Record<string, string> {
-  return { ...(account ? { account } : {}), ...(page > 1 ? { page: String(page) } : {}) };
+export function writeFilter({ bookingNumber, ...texts }: LedgerFilter): Record<string, string> {
+  const given = Object.entries(texts).filter((entry): entry is [string, string] => entry[1] !== undefined);
+  return { ...Object.fromEntries(given), ...(bookingNumber === undefined ? {} : { berth: String(bookingNumber) }) };
 }
 
 export const accountNames = (): string[] => Object.keys(ACCOUNTS);
+
+/** Accounts that are kept for each organisation. */
+const PARTY_ACCOUNTS = ['operator receivable', 'owner payable', 'refunds', 'dispute reserve', 'payout clearing'];
+export const isPartyAccount = (account: string): boolean => PARTY_ACCOUNTS.includes(account);
+
+/** The running month and so many before it, newest first, UTC. */
+export function monthsBack(count: number, nowMs: number = Date.now()): string[] {
+  const now = new Date(nowMs);
+  return Array.from({ length: count }, (_, back) =>
+    new Date(Date.UTC(now.getUTCFullYear(), now.getUTCMonth() - back)).toISOString().slice(0, 7),
+  );
+}
+
+export interface ChartMonth {
+  readonly month: string;
+  /** What operators were charged, VAT included. */
+  readonly soldMinor: number;
+  readonly feeMinor: number;
+  /** At the end of the month. */
+  readonly owedMinor: number;
+}
+
+const MONTHS_DRAWN = 12;
+
+/** The last twelve months that have entries. An account without a line in a month keeps what it had. */
+export function chartMonths(items: ResponseOf<typeof routes.ledgerMonths>['items']): ChartMonth[] {
+  const months = [...new Set(items.map((item) => item.month))].sort();
+  let owedMinor = 0;
+  const rows = months.map((month) => {
+    const of = (account: string) => items.find((item) => item.month === month && item.account === account);
+    const payable = of('owner payable');
+    owedMinor = payable ? -payable.balanceMinor : owedMinor;
+    const receivable = of('operator receivable');
+    const fee = of('marketplace fee');
+    return {
+      month,
+      soldMinor: receivable?.debitMinor ?? 0,
+      feeMinor: (fee?.creditMinor ?? 0) - (fee?.debitMinor ?? 0),
+      owedMinor,
+    };
+  });
+  return rows.slice(-MONTHS_DRAWN);
+}
