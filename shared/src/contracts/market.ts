@@ -118,6 +118,7 @@ export const SearchInput = z
     lowestElevationDeg: ElevationDeg.default(5).describe('the highest point must rise above it'),
     shortestS: z.int().min(0).max(86_400).default(0),
     highestPriceMinor: AmountMinor.nullable().default(null),
+    searchId: Id.optional().describe('a name of your own, to ask for its progress'),
   })
   .refine((input) => input.toUtc > input.fromUtc, { path: ['toUtc'], message: 'The period must end after it begins.' })
   .refine((input) => Date.parse(input.toUtc) - Date.parse(input.fromUtc) <= 31 * 86_400_000, {
@@ -142,7 +143,7 @@ export const SearchResult = z.object({
       fault: z.string().nullable(),
     }),
   ),
-  passes: z.array(FoundPass).describe('by spacecraft, within that by antenna, within that by AOS'),
+  passes: z.array(FoundPass).describe('those of one spacecraft over one antenna stand together, by AOS'),
   counts: z.object({ forSale: z.int(), passes: z.int() }),
 });
 export type SearchResult = z.infer<typeof SearchResult>;
@@ -173,7 +174,12 @@ export const PassDetail = z.object({
       sunlit: z.number().min(0).max(1),
     }),
   ),
-  sun: z.object({ azimuthDeg: z.number(), elevationDeg: z.number(), closestDeg: z.number(), keepOffDeg: z.number() }),
+  sun: z.object({
+    azimuthDeg: z.number(),
+    elevationDeg: z.number(),
+    closestDeg: z.number().nullable().describe('null where the Sun is down all along'),
+    keepOffDeg: z.number(),
+  }),
   illumination: z.string().describe('a phrase: sunlit, eclipsed, or when it changes'),
   links: z.array(
     z.object({
@@ -248,6 +254,18 @@ export const marketRoutes = {
     response: SearchResult,
     idempotencyKey: 'none',
     errors: ['not-found', 'elements-unusable', 'too-large', 'unavailable'],
+  }),
+  searchProgress: defineRoute({
+    name: 'searchProgress',
+    method: 'GET',
+    path: '/api/passes/search/:searchId',
+    summary: 'How far a search is that was given a name; not found before it begins and after it ends',
+    tag,
+    access: 'market.search',
+    data: 'market',
+    params: z.object({ searchId: Id }),
+    response: z.object({ done: z.int(), of: z.int().describe('pairs of spacecraft and antenna') }),
+    errors: ['not-found'],
   }),
   passDetail: defineRoute({
     name: 'passDetail',

@@ -34,20 +34,23 @@ const OLD_ELEMENTS: Caution = {
   text: 'AOS and LOS may be off by more than the set-up time. Give newer elements before you buy, or accept that risk when you hold.',
 };
 
+function sunNotes(sun: { closestDeg: number | null; keepOffDeg: number } | null): Caution[] {
+  if (sun === null || sun.closestDeg === null || sun.closestDeg >= sun.keepOffDeg) return [];
+  return [nearSun(sun.closestDeg, sun.keepOffDeg)];
+}
+
 /** The notes of one pass, the weightiest first. */
 export function cautionsFor(pass: {
   need: Need;
-  /** Null where it was not worked out. */
-  sun: { closestDeg: number; keepOffDeg: number } | null;
+  /** Null where it was not worked out; the angle is null where the Sun is down. */
+  sun: { closestDeg: number | null; keepOffDeg: number } | null;
   radiosOnFile: boolean;
   stale: boolean;
   untrackable: readonly string[];
 }): Caution[] {
   return [
     ...(pass.need === 'downlink' ? [] : [TRANSMITTING]),
-    ...(pass.sun !== null && pass.sun.closestDeg < pass.sun.keepOffDeg
-      ? [nearSun(pass.sun.closestDeg, pass.sun.keepOffDeg)]
-      : []),
+    ...sunNotes(pass.sun),
     ...(pass.stale ? [OLD_ELEMENTS] : []),
     ...(pass.radiosOnFile ? [] : [UNCHECKED]),
     ...(pass.untrackable.length === 0

@@ -71,7 +71,7 @@ export class ContactFiles {
         stationName: sale.stationName,
         operatorName: this.repository.taxedOrganisation(operatorId)?.name ?? 'unknown',
       },
-      craft.id,
+      antenna.id,
     );
     if (outcome.kind === 'elements unusable') throw new DomainError('elements-unusable', outcome.sentence);
     return outcome.text;

@@ -26,6 +26,11 @@ export class MarketController {
     return new StreamableFile(Readable.from(pieces), { type: 'application/json; charset=utf-8', length });
   }
 
+  @Handles(routes.searchProgress)
+  progress(@Input() input: HandlerInput<typeof routes.searchProgress>): ResponseOf<typeof routes.searchProgress> {
+    return this.market.progress(input.caller.organisationId, input.params.searchId);
+  }
+
   @Handles(routes.passDetail)
   detail(@Input() input: HandlerInput<typeof routes.passDetail>): Promise<PassDetail> {
     return this.market.detail(input.caller.organisationId, input.body);

@@ -9,6 +9,7 @@ import { MarketController } from './market.controller.js';
 import { MarketRepository } from './market.repository.js';
 import { MarketService } from './market.service.js';
 import { MarketInputs } from './market-inputs.js';
+import { NightKeeper } from './night-keeper.js';
 import { OfferService } from './offer.service.js';
 import { PassFinder } from './pass-finder.js';
 import { InProcessEngine } from './workers/in-process-engine.js';
@@ -26,6 +27,7 @@ const engineFor = (config: Config): PassEngine =>
     { provide: PASS_ENGINE, inject: [CONFIG], useFactory: engineFor },
     MarketRepository,
     MarketInputs,
+    NightKeeper,
     PassFinder,
     MarketService,
     OfferService,

@@ -10,20 +10,25 @@ import {
   SearchResult,
 } from '@skyberth/shared';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
-import { DomainError } from '../platform/domain-error.js';
+import { DomainError, notFound } from '../platform/domain-error.js';
 import type { SaleAntenna } from '../stations/antenna-catalogue.js';
+import { askToStop, daysDone, newPulseMemory } from './compute/pulse.js';
+import { daysOf } from './compute/search.js';
 import { groupBy } from './group-by.js';
 import { MarketInputs, type Period } from './market-inputs.js';
-import { detailView, foundAntenna, foundCraft, utcInterval, withPasses } from './market-views.js';
+import { detailView, foundAntenna, foundCraft, withPasses } from './market-views.js';
+import { NightKeeper } from './night-keeper.js';
 import { type BerthRequest, NOT_ON_SALE, OfferService } from './offer.service.js';
 import { PassFinder } from './pass-finder.js';
-import type { AntennaInput, CraftInput, SearchJob, SearchOutcome } from './workers/job-types.js';
+import type { AntennaInput, SearchJob, SearchOutcome } from './workers/job-types.js';
 import { PASS_ENGINE, type PassEngine } from './workers/pass-engine.js';
 
 /** A board of more passes than this serves nobody, and its answer would be tens of megabytes. */
 export const MOST_PASSES = 10_000;
 /** Spacecraft in one job of a lane: some tenths of a second of work at the most. */
 const CRAFT_AT_ONCE = 4;
+/** Few people search twice at the same time. */
+const SEARCHES_AT_ONCE = 8;
 /** What lies just outside the period may bear on its first and last passes. */
 const ABOUT_MS = 86_400_000;
 
@@ -40,12 +45,25 @@ export interface BookedContact {
 type Found = Extract<SearchOutcome, { kind: 'found' }>;
 const Head = SearchResult.omit({ passes: true });
 
+/** A search at work. */
+interface Running {
+  readonly operatorId: string;
+  readonly pulse: SharedArrayBuffer;
+  readonly pairs: number;
+  /** Days of the calendar that each pair of spacecraft and antenna is looked at for. */
+  readonly days: number;
+}
+
 @Injectable()
 export class MarketService {
+  /** By the name that the asker gave. */
+  private readonly running = new Map<string, Running>();
+
   constructor(
     private readonly inputs: MarketInputs,
     private readonly finder: PassFinder,
     private readonly offers: OfferService,
+    private readonly nights: NightKeeper,
     @Inject(PASS_ENGINE) private readonly engine: PassEngine,
     @Inject(CLOCK) private readonly clock: ClockPort,
   ) {}
@@ -84,20 +102,24 @@ export class MarketService {
     const craft = this.inputs.craft(operatorId, [...new Set(input.spacecraftIds)], about);
     const sale = this.inputs.onSale(about, input.stationIds);
     const antennas = this.inputs.forEngine(operatorId, sale, about);
-    const job = (some: readonly CraftInput[], cancel: SharedArrayBuffer): SearchJob => ({
+    const pulse = newPulseMemory();
+    const { searchId, ...wish } = input;
+    const ask: SearchJob = {
       kind: 'search',
       nowMs,
       ...period,
-      wish: input,
-      spacecraft: some,
+      wish,
+      spacecraft: craft,
       antennas,
       maxPasses: MOST_PASSES,
-      cancel,
-    });
-    const [found, stations] = await Promise.all([
-      this.inLanes(craft, job, signal),
-      this.foundStations(sale, antennas, period),
-    ]);
+      pulse,
+    };
+    const pairs = craft.length * antennas.length;
+    const [found, stations] = await this.whileRunning(
+      searchId,
+      { operatorId, pulse, pairs, days: daysOf(period) },
+      () => Promise.all([this.inLanes(ask, pulse, signal), this.foundStations(sale, antennas, period)]),
+    );
     const passes = found.reduce((sum, each) => sum + each.passes, 0);
     const faults = new Map(found.flatMap((each) => each.faults.map((fault) => [fault.spacecraftId, fault.sentence])));
     const head = Head.parse({
@@ -110,6 +132,27 @@ export class MarketService {
       JSON.stringify(head),
       found.flatMap((each) => each.json),
     );
+  }
+
+  /** How far a search of this organisation is. Throws `not-found` where none of that name is at work. */
+  progress(operatorId: string, searchId: string): ResponseOf<typeof routes.searchProgress> {
+    const search = this.running.get(searchId);
+    if (search?.operatorId !== operatorId) throw notFound('search');
+    const { pulse, pairs, days } = search;
+    return { done: Math.min(pairs, Math.floor(daysDone(pulse) / days)), of: pairs };
+  }
+
+  private async whileRunning<T>(searchId: string | undefined, search: Running, work: () => Promise<T>): Promise<T> {
+    if (searchId === undefined) return work();
+    const others = [...this.running.values()].filter((each) => each.operatorId === search.operatorId);
+    if (others.length >= SEARCHES_AT_ONCE) return work();
+    // A page keeps the name for each of its searches; the newest of them is the one it asks about.
+    this.running.set(searchId, search);
+    try {
+      return await work();
+    } finally {
+      if (this.running.get(searchId) === search) this.running.delete(searchId);
+    }
   }
 
   /** One pass, or a part of it, with everything that the card shows. */
@@ -133,25 +176,20 @@ export class MarketService {
   }
 
   /**
-   * Runs the spacecraft of each lane in that lane, a few at a time, so that others get their turn between. When the asker
-   * hangs up, all of them stop at the next spacecraft.
+   * Shares the antennas out over the lanes, so that even one spacecraft keeps all of them busy; each takes a few spacecraft
+   * at a time, so that others get their turn between. When the asker hangs up, all of them stop within a day's passes.
    */
-  private async inLanes(
-    craft: readonly CraftInput[],
-    job: (some: readonly CraftInput[], cancel: SharedArrayBuffer) => SearchJob,
-    signal: AbortSignal,
-  ): Promise<Found[]> {
-    const cancel = new SharedArrayBuffer(4);
-    const stop = (): void => {
-      Atomics.store(new Int32Array(cancel), 0, 1);
-    };
+  private async inLanes(ask: SearchJob, pulse: SharedArrayBuffer, signal: AbortSignal): Promise<Found[]> {
+    const stop = (): void => askToStop(pulse);
     signal.addEventListener('abort', stop, { once: true });
     let passes = 0;
-    const runLane = async (ours: readonly CraftInput[]): Promise<Found[]> => {
+    const runLane = async (antennas: readonly AntennaInput[]): Promise<Found[]> => {
       const found: Found[] = [];
-      for (let i = 0; i < ours.length; i += CRAFT_AT_ONCE) {
-        const some = ours.slice(i, i + CRAFT_AT_ONCE);
-        const outcome = foundOrRefused(await this.engine.run(job(some, cancel), some[0]?.id ?? ''));
+      for (let i = 0; i < ask.spacecraft.length; i += CRAFT_AT_ONCE) {
+        const spacecraft = ask.spacecraft.slice(i, i + CRAFT_AT_ONCE);
+        const outcome = foundOrRefused(
+          await this.engine.run({ ...ask, spacecraft, antennas }, (antennas[0] as AntennaInput).id),
+        );
         passes += outcome.passes;
         if (passes > MOST_PASSES) throw tooMany();
         found.push(outcome);
@@ -159,7 +197,7 @@ export class MarketService {
       return found;
     };
     try {
-      const lanes = groupBy(craft, (each) => String(this.engine.laneOf(each.id)));
+      const lanes = groupBy(ask.antennas, (each) => String(this.engine.laneOf(each.id)));
       return (await Promise.all([...lanes.values()].map(runLane))).flat();
     } finally {
       // Where one lane was refused, the others need not go on.
@@ -176,9 +214,7 @@ export class MarketService {
     const busy = new Map(antennas.map((antenna) => [antenna.id, antenna.busy]));
     const stations = [...groupBy(sale, (antenna) => antenna.stationId).values()];
     const sites = stations.flatMap(([first]) => (first === undefined ? [] : [first.site]));
-    // A day more on either side, so that a night that runs into the period begins at its own sunset.
-    const around = { fromMs: period.fromMs - DAY_MS, toMs: period.toMs + DAY_MS };
-    const { nights } = await this.engine.run({ kind: 'nights', ...around, sites }, 'nights');
+    const nights = await this.nights.of(sites, period);
     return stations.flatMap((some, index) => {
       const [first] = some;
       if (first === undefined) return [];
@@ -191,9 +227,7 @@ export class MarketService {
           timeZone: first.timeZone,
           latitudeDeg: first.site.latitudeDeg,
           longitudeDeg: first.site.longitudeDeg,
-          nights: (nights[index] ?? [])
-            .filter((night) => night.fromMs < period.toMs && night.toMs > period.fromMs)
-            .map(utcInterval),
+          nights: nights[index] ?? [],
           antennas: some.map((antenna) => foundAntenna(antenna, busy.get(antenna.id) ?? [], period)),
         },
       ];
@@ -201,7 +235,6 @@ export class MarketService {
   }
 }
 
-const DAY_MS = 86_400_000;
 const utc = (timeMs: number): string => new Date(timeMs).toISOString();
 
 const tooMany = (): DomainError =>

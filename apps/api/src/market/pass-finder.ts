@@ -63,7 +63,7 @@ export class PassFinder {
     const { need, bands, withTrack, booked } = question;
     const outcome = await this.engine.run(
       { kind: 'pass', nowMs, need, bands, aosMs, losMs, spacecraft: craft, antenna, withTrack, booked },
-      craft.id,
+      antenna.id,
     );
     if (outcome.kind === 'elements unusable') throw new DomainError('elements-unusable', outcome.sentence);
     if (outcome.kind === 'no pass')

@@ -41,6 +41,8 @@ export interface BlocksQuestion {
   readonly antennas: readonly Viewpoint[];
   readonly fromMs: number;
   readonly toMs: number;
+  /** Called after each day of so many antennas; what it throws ends the work. */
+  readonly afterDay?: (antennas: number) => void;
 }
 
 export class PassBlocks {
@@ -70,6 +72,7 @@ export class PassBlocks {
         if (atFront) own.unshift(...block.stays);
         else own.push(...block.stays);
       });
+      question.afterDay?.(only.length);
     };
     const all = antennas.map((_, index) => index);
     for (let day = firstDay; day <= lastDay; day += 1) add(day, false, all);

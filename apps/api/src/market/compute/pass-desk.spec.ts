@@ -4,6 +4,7 @@ import { z } from 'zod';
 import { jsonText, SAMPLE_NOW_MS, sampleAntenna, sampleFlying, sampleSearch } from '../testing/samples.js';
 import type { SearchJob } from '../workers/job-types.js';
 import { PassDesk } from './pass-desk.js';
+import { askToStop, daysDone, newPulseMemory } from './pulse.js';
 
 const DAY_MS = 86_400_000;
 const HOUR_MS = 3_600_000;
@@ -86,9 +87,43 @@ describe('a search at the desk', () => {
   });
 
   it('stops when nobody waits any more', () => {
-    const cancel = new SharedArrayBuffer(4);
-    Atomics.store(new Int32Array(cancel), 0, 1);
-    expect(new PassDesk().carryOut(sampleSearch({ cancel }))).toEqual({ kind: 'cancelled' });
+    const pulse = newPulseMemory();
+    askToStop(pulse);
+    expect(new PassDesk().carryOut(sampleSearch({ pulse }))).toEqual({ kind: 'cancelled' });
+  });
+
+  it('says when all of it is done', () => {
+    const pulse = newPulseMemory();
+    const spacecraft = [
+      sampleFlying(),
+      sampleFlying({ inclinationDeg: 70 }, { id: '01939f7e-0000-7000-8000-0000000000d2' }),
+    ];
+    const desk = new PassDesk();
+    const first = desk.carryOut(sampleSearch({ spacecraft, pulse }));
+    // Midday to midday three days later is four days of the calendar.
+    expect(daysDone(pulse)).toBe(2 * 4);
+    const again = desk.carryOut(sampleSearch({ spacecraft, pulse }));
+    expect(daysDone(pulse)).toBe(4 * 4);
+    expect(again).toEqual(first);
+  });
+
+  it('works out anew what a later moment, another wish or a new contact changes', () => {
+    const desk = new PassDesk();
+    found(desk, sampleSearch());
+    const changes: Partial<SearchJob>[] = [
+      { nowMs: SAMPLE_NOW_MS + 6 * HOUR_MS },
+      { wish: { ...sampleSearch().wish, lowestElevationDeg: 40 } },
+      { toMs: SAMPLE_NOW_MS + 2 * DAY_MS },
+      {
+        antennas: [
+          sampleAntenna({ blackouts: [{ fromMs: SAMPLE_NOW_MS, toMs: SAMPLE_NOW_MS + DAY_MS, reason: 'oil' }] }),
+        ],
+      },
+      {},
+    ];
+    for (const change of changes) {
+      expect(found(desk, sampleSearch(change))).toEqual(found(new PassDesk(), sampleSearch(change)));
+    }
   });
 
   it('uses for each pass the element set in force at its highest point', () => {

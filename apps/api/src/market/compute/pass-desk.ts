@@ -5,6 +5,7 @@ import { Horizons } from './horizons.js';
 import { nightsOf } from './nights.js';
 import { onePass } from './one-pass.js';
 import { OpeningHours } from './opening-hours.js';
+import { PairAnswers } from './pair-answers.js';
 import { PassBlocks } from './pass-blocks.js';
 import { PassTexts } from './pass-text.js';
 import { QuestionNames } from './sale-validity.js';
@@ -23,6 +24,7 @@ export class PassDesk {
       blocks: new PassBlocks(horizons, tables),
       hours: new OpeningHours(),
       names: new QuestionNames(),
+      pairs: new PairAnswers(),
       texts: new PassTexts(tables),
     };
   }

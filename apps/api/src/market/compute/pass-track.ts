@@ -57,8 +57,7 @@ export function trackOf(question: TrackQuestion): PassTrack {
     sun: {
       azimuthDeg: rounded(sun.azimuthDeg, 2),
       elevationDeg: rounded(sun.elevationDeg, 2),
-      // With the Sun down there is nothing to keep off from.
-      closestDeg: rounded(interference.closestDeg ?? 180, 2),
+      closestDeg: interference.closestDeg === undefined ? null : rounded(interference.closestDeg, 2),
       keepOffDeg: SUN_KEEP_OFF_DEG,
     },
     illumination: lightPhrase(lightIntervals(source, part.aosMs, part.losMs)),

@@ -9,6 +9,8 @@ export interface StaysQuestion {
   readonly antennas: readonly { readonly antenna: AntennaInput; readonly floorDeg: number }[];
   readonly fromMs: number;
   readonly toMs: number;
+  /** Called after each day of so many antennas; what it throws ends the search. */
+  readonly afterDay?: (antennas: number) => void;
 }
 
 /**
@@ -16,7 +18,7 @@ export interface StaysQuestion {
  * belongs to the element set in force at its highest point. `fault` says from when elements could not be used.
  */
 export function staysOf(blocks: PassBlocks, question: StaysQuestion): { stays: Stay[][]; fault: string | null } {
-  const { craft, antennas, fromMs, toMs } = question;
+  const { craft, antennas, fromMs, toMs, afterDay } = question;
   const stays: Stay[][] = antennas.map(() => []);
   let fault: string | null = null;
   for (const span of craft.spans) {
@@ -27,6 +29,7 @@ export function staysOf(blocks: PassBlocks, question: StaysQuestion): { stays: S
         antennas,
         fromMs: Math.max(fromMs, span.fromMs),
         toMs: Math.min(toMs, span.toMs),
+        ...(afterDay && { afterDay }),
       });
       fault ??= found.fault;
       found.stays.forEach((some, index) => {

@@ -144,7 +144,7 @@ export function sampleSearch(changes: Partial<SearchJob> = {}): SearchJob {
     spacecraft: [sampleFlying()],
     antennas: [sampleAntenna()],
     maxPasses: 1_000,
-    cancel: null,
+    pulse: null,
     ...changes,
   };
 }

@@ -103,8 +103,8 @@ export interface SearchJob {
   readonly antennas: readonly AntennaInput[];
   /** The search stops with `tooMany` beyond so many passes. */
   readonly maxPasses: number;
-  /** One 32-bit cell shared with the asker; anything but zero asks the search to stop. */
-  readonly cancel: SharedArrayBuffer | null;
+  /** Memory of `newPulseMemory`, shared with the asker: how far the search is, and whether it is to stop. */
+  readonly pulse: SharedArrayBuffer | null;
 }
 
 export type SearchOutcome =

@@ -3,7 +3,7 @@ import type { EngineJob, OutcomeOf } from './job-types.js';
 
 export interface PassEngine {
   /**
-   * Carries a job out. `lane` names what the work is about (a spacecraft): the same name always reaches the same cache,
+   * Carries a job out. `lane` names what the work is about (an antenna): the same name always reaches the same cache,
    * different names may run at the same time. What is wrong with elements is an outcome. Throws `unavailable` where too
    * many jobs are waiting already.
    */

@@ -1,5 +1,5 @@
 /**
- * The engine in worker threads. Each lane is a pool of one thread, so that whatever was computed for a spacecraft is
+ * The engine in worker threads. Each lane is a pool of one thread, so that whatever was computed for an antenna is
  * found again in the cache of the thread that computed it. Threads run the built files, hence none of the flags by which the
  * process itself may have been told to load sources.
  */

@@ -51,7 +51,8 @@ function Search({ spacecraft }: { readonly spacecraft: readonly Spacecraft[] }) 
   const wished = useWishedInput(filter, spacecraft, beganMs);
   const [input] = useDebouncedValue(wished, SETTLE_MS);
   const client = useQueryClient();
-  const query = findTimeQueries.search(input);
+  const [searchId] = useState(() => crypto.randomUUID());
+  const query = findTimeQueries.search(input, searchId);
   const search = useQuery({ ...query, refetchInterval: STEP_MS });
   const result = search.data;
   const { data: bookings } = useQuery(
@@ -79,6 +80,7 @@ function Search({ spacecraft }: { readonly spacecraft: readonly Spacecraft[] }) 
         isFetching={search.isFetching}
         wasStopped={!search.isFetching && !result && !search.error}
         spacecraftCount={input.spacecraftIds.length}
+        searchId={searchId}
         onStop={() => void client.cancelQueries({ queryKey: query.queryKey })}
         onAgain={again}
       />

@@ -3,7 +3,7 @@ import { useMemo } from 'react';
 import { SkyPlot } from '../../drawing/sky-plot/sky-plot.js';
 import { DayTime } from '../../ui/day-time.js';
 import { formatBytes, formatDegrees, formatDuration, formatNumber } from '../../ui/format.js';
-import { sunText } from '../../ui/sun-text.js';
+import { isNearSun, sunText } from '../../ui/sun-text.js';
 import { Figure, Figures } from '../../ui/values.js';
 import classes from './find-time.module.css';
 import { ageWords, dopplerWords, marginOf, spanWords } from './pass-words.js';
@@ -70,7 +70,7 @@ export function PassFigures({ detail }: { readonly detail: PassDetail }) {
         <Figure
           label="Sun, at its closest"
           value={sunText(detail.sun)}
-          tone={detail.sun.closestDeg < detail.sun.keepOffDeg ? 'bad' : 'plain'}
+          tone={isNearSun(detail.sun) ? 'bad' : 'plain'}
         />
         {links.map((link) => (
           <LinkFigures key={`${link.radioName} ${link.direction}`} link={link} named={links.length > 1} />

@@ -1,11 +1,15 @@
 import { Button, Progress } from '@mantine/core';
+import { useQuery } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
+import { formatNumber } from '../../ui/format.js';
 import classes from './find-time.module.css';
+import { findTimeQueries } from './find-time-queries.js';
 
 interface SearchProgressProps {
   readonly isFetching: boolean;
   readonly wasStopped: boolean;
   readonly spacecraftCount: number;
+  readonly searchId: string;
   readonly onStop: () => void;
   readonly onAgain: () => void;
 }
@@ -13,10 +17,19 @@ interface SearchProgressProps {
 /** Most answers come at once; only a search that takes longer says so. */
 const PATIENCE_S = 1;
 
-/** A long search says that it is at work, for how long already, and can be stopped. */
+/** How often a long search is asked how far it is. */
+const ASK_MS = 700;
+
+/** A long search says how far it is and for how long it has been at work, and can be stopped. */
 export function SearchProgress(props: SearchProgressProps) {
-  const { isFetching, wasStopped, spacecraftCount, onStop, onAgain } = props;
+  const { isFetching, wasStopped, spacecraftCount, searchId, onStop, onAgain } = props;
   const elapsedS = useElapsedS(isFetching);
+  const isLong = isFetching && elapsedS >= PATIENCE_S;
+  const { data: progress } = useQuery({
+    ...findTimeQueries.progress(searchId),
+    enabled: isLong,
+    refetchInterval: ASK_MS,
+  });
   if (wasStopped)
     return (
       <div className={classes.progress} role="status">
@@ -26,14 +39,24 @@ export function SearchProgress(props: SearchProgressProps) {
         </Button>
       </div>
     );
-  if (!isFetching || elapsedS < PATIENCE_S) return null;
+  if (!isLong) return null;
   return (
     <div className={classes.progress}>
       <span role="status">
         Computing passes of {spacecraftCount} spacecraft
-        <span aria-hidden="true">, {elapsedS} s so far</span>
+        <span aria-hidden="true">
+          {progress &&
+            `, ${formatNumber(progress.done, 0)} of ${formatNumber(progress.of, 0)} pairs with an antenna done`}
+          , {elapsedS} s so far
+        </span>
       </span>
-      <Progress value={100} animated striped aria-label="Computing passes" className={classes.progressBar} />
+      <Progress
+        value={progress ? (100 * progress.done) / Math.max(1, progress.of) : 100}
+        animated={!progress}
+        striped={!progress}
+        aria-label="Computing passes"
+        className={classes.progressBar}
+      />
       <Button variant="default" size="compact-sm" onClick={onStop}>
         Stop the search
       </Button>
