@@ -115,6 +115,7 @@ export const bookingRoutes = {
       state: z.string().max(200).optional().describe('states separated by commas'),
       spacecraftId: Id.optional(),
       antennaId: Id.optional(),
+      number: z.coerce.number().int().min(0).max(999_999_999).optional(),
       sort: z.enum(['aos', '-aos', 'number', '-number']).default('aos'),
     }),
     response: pageOf(BookingSummary),

@@ -13,6 +13,7 @@ export interface BookingQuery {
   readonly states: readonly BookingState[];
   readonly spacecraftId: string | null;
   readonly antennaId: string | null;
+  readonly number: number | null;
   readonly sort: 'aos' | '-aos' | 'number' | '-number';
   readonly page: number;
   readonly pageSize: number;
@@ -42,6 +43,7 @@ export class BookingListRepository {
       query.toMs === null ? undefined : lt(bookings.aosMs, query.toMs),
       query.states.length === 0 ? undefined : inArray(bookings.state, [...query.states]),
       query.spacecraftId === null ? undefined : eq(bookings.spacecraftId, query.spacecraftId),
+      query.number === null ? undefined : eq(bookings.number, query.number),
       query.antennaId === null ? undefined : eq(bookings.antennaId, query.antennaId),
     );
     const total = this.db.select({ total: count() }).from(bookings).where(where).get()?.total ?? 0;

@@ -45,6 +45,7 @@ export class BookingsService {
       states: statesOf(query.state),
       spacecraftId: query.spacecraftId ?? null,
       antennaId: query.antennaId ?? null,
+      number: query.number ?? null,
       sort,
       page,
       pageSize,

@@ -15,6 +15,7 @@ import { TimeDisplayProvider } from '../ui/time-display.js';
 import { useHoldsTray } from './holds-tray.js';
 import { pagesFor } from './navigation.js';
 import { useTimePreference } from './time-preference.js';
+import { useGoTo } from './use-go-to.js';
 
 const RouterLink: ShellLink = ({ to, ...rest }) => (
   <Link to={to} {...(rest as Omit<ComponentProps<typeof Link>, 'to'>)} />
@@ -26,6 +27,7 @@ export function Layout() {
   const { data: home } = useQuery(homeQuery);
   const [time, toggleTime] = useTimePreference();
   const tray = useHoldsTray();
+  const goTo = useGoTo();
   useFocusOnNewPage(location.pathname);
   const items: ShellItem[] = pagesFor(session.active).map((page) => {
     const count = page.count ? home?.counts[page.count] : undefined;
@@ -49,10 +51,12 @@ export function Layout() {
           organisationName: session.active.organisationName,
           initials: initialsOf(session.person.name),
         }}
-        personMenu={<PersonMenu timeMode={time.mode} onToggleTime={toggleTime} />}
+        personMenu={<PersonMenu timeMode={time.mode} onToggleTime={toggleTime} onGoTo={goTo.open} />}
+        tools={goTo.button}
         tray={tray}
       >
         <Outlet />
+        {goTo.dialog}
       </Shell>
     </TimeDisplayProvider>
   );
@@ -80,9 +84,10 @@ function useFocusOnNewPage(path: string): void {
 interface PersonMenuProps {
   readonly timeMode: 'utc' | 'local';
   readonly onToggleTime: () => void;
+  readonly onGoTo: () => void;
 }
 
-function PersonMenu({ timeMode, onToggleTime }: PersonMenuProps) {
+function PersonMenu({ timeMode, onToggleTime, onGoTo }: PersonMenuProps) {
   const session = useSession();
   const navigate = useNavigate();
   const enter = useEnterSession();
@@ -115,6 +120,10 @@ function PersonMenu({ timeMode, onToggleTime }: PersonMenuProps) {
         </Menu.Item>
       ))}
       <Menu.Divider />
+      <Menu.Item onClick={onGoTo}>Go to …</Menu.Item>
+      <Menu.Item component={Link} to={paths.help}>
+        Help
+      </Menu.Item>
       <Menu.Item onClick={onToggleTime}>{timeMode === 'utc' ? 'Show local time' : 'Show UTC'}</Menu.Item>
       <Menu.Label>Colours</Menu.Label>
       {(['auto', 'light', 'dark'] as const).map((scheme) => (

@@ -138,6 +138,10 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('../features/oversight/audit-page.js')).AuditPage }),
   },
   {
+    path: paths.help,
+    lazy: async () => ({ Component: (await import('../features/help/help-page.js')).HelpPage }),
+  },
+  {
     path: paths.ledger,
     lazy: async () => ({ Component: (await import('../features/ledger/ledger-page.js')).LedgerPage }),
   },

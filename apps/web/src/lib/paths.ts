@@ -31,6 +31,7 @@ export const paths = {
   accounts: '/accounts',
   account: (id: string) => `/accounts/${id}`,
   audit: '/audit',
+  help: '/help',
   ledger: '/ledger',
   system: '/system',
   organisation: '/organisation',
