@@ -1,6 +1,7 @@
 /** What needs the caller now: one sentence each, the pressing ones first. */
 import { Inject, Injectable } from '@nestjs/common';
 import { can, type HomeView, type Principal } from '@skyberth/shared';
+import { utcText } from '../bookings/booking-words.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { StandingService } from '../platform/standing.js';
 import { ElementsService } from '../spacecraft/elements.service.js';
@@ -163,7 +164,7 @@ const booking = (
 ): Waiting => ({
   kind,
   sentence,
-  detail: `AOS ${utc(each.aosMs).replace('T', ' ').slice(0, 19)} UTC`,
+  detail: `AOS ${utcText(each.aosMs)}`,
   path: `/bookings/${each.id}`,
   urgent,
   dueUtc: due === null ? null : utc(due),

@@ -32,6 +32,7 @@ export function GoTo() {
         'aria-label': 'Go to',
       }}
       highlightQuery
+      overlayProps={{ blur: 0, backgroundOpacity: 0.5 }}
       scrollable
       maxHeight="60dvh"
     />

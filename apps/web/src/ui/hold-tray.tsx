@@ -24,6 +24,7 @@ const SAY_AT_MS = 60_000;
 /** The dark tray at the foot of the page while something is held. The last minute is said aloud once. */
 export function HoldTray({ title, detail, endsMs, clock, price, priceNote, children }: HoldTrayProps) {
   const [nowMs, setNowMs] = useState(clock);
+  const [isOpen, setOpen] = useState(false);
   useEffect(() => {
     const timer = window.setInterval(() => setNowMs(clock()), 1000);
     return () => window.clearInterval(timer);
@@ -31,7 +32,7 @@ export function HoldTray({ title, detail, endsMs, clock, price, priceNote, child
   const leftMs = endsMs - nowMs;
   const isLastMinute = leftMs <= SAY_AT_MS && leftMs > 0;
   return (
-    <section className={classes.tray} aria-label="Held by you">
+    <section className={classes.tray} aria-label="Held by you" data-open={isOpen || undefined}>
       <HoldOutline widthPx={38} colour="var(--sk-tray-brass)" />
       <div className={classes.words}>
         <strong>{title}</strong>
@@ -54,6 +55,22 @@ export function HoldTray({ title, detail, endsMs, clock, price, priceNote, child
         <div className={classes.second}>{priceNote}</div>
       </div>
       <div className={classes.acts}>{children}</div>
+      <button
+        type="button"
+        className={classes.unfold}
+        aria-expanded={isOpen}
+        aria-label={isOpen ? 'Fold the tray' : 'Show the whole hold'}
+        onClick={() => setOpen(!isOpen)}
+      >
+        <svg width="16" height="10" viewBox="0 0 16 10" aria-hidden="true" focusable="false">
+          <path
+            d={isOpen ? 'M2 2 L8 8 L14 2' : 'M2 8 L8 2 L14 8'}
+            fill="none"
+            stroke="currentColor"
+            strokeWidth="2.2"
+          />
+        </svg>
+      </button>
     </section>
   );
 }
