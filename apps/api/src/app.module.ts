@@ -2,9 +2,11 @@
 import { type DynamicModule, Module } from '@nestjs/common';
 import { AccountsModule } from './accounts/accounts.module.js';
 import { BookingsModule } from './bookings/bookings.module.js';
+import { DriftModule } from './drift/drift.module.js';
 import { InvoicesModule } from './invoices/invoices.module.js';
 import { JobsModule } from './jobs/jobs.module.js';
 import { LedgerModule } from './ledger/ledger.module.js';
+import { LiveModule } from './live/live.module.js';
 import { MailModule } from './mail/mail.module.js';
 import { MarketModule } from './market/market.module.js';
 import { OutboxModule } from './outbox/outbox.module.js';
@@ -13,6 +15,8 @@ import { PaymentsModule } from './payments/payments.module.js';
 import type { ClockPort } from './platform/clock.js';
 import type { Config } from './platform/config.js';
 import { PlatformModule } from './platform/platform.module.js';
+import { ReconciliationModule } from './reconciliation/reconciliation.module.js';
+import { RunSheetModule } from './run-sheet/run-sheet.module.js';
 import { SpacecraftModule } from './spacecraft/spacecraft.module.js';
 import { StationsModule } from './stations/stations.module.js';
 import { SystemModule } from './system/system.module.js';
@@ -31,9 +35,13 @@ export class AppModule {
         SpacecraftModule,
         StationsModule,
         BookingsModule,
+        LiveModule,
+        RunSheetModule,
+        DriftModule,
         PaymentsModule,
         InvoicesModule,
         LedgerModule,
+        ReconciliationModule,
         MarketModule,
         OversightModule,
         SystemModule,

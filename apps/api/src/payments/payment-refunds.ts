@@ -3,7 +3,7 @@
  * the net price, and the marketplace gives its part of the fee back.
  */
 import { Inject, Injectable } from '@nestjs/common';
-import { divideHalfUp, refundEntry, refundReturnedEntry } from '@skyberth/money';
+import { refundEntry, refundReturnedEntry } from '@skyberth/money';
 import { BookingTransitions, BY_PAYMENT } from '../bookings/booking-transitions.js';
 import { moneyText } from '../bookings/booking-words.js';
 import { BookingRepository, type BookingRow } from '../bookings/bookings.repository.js';
@@ -12,6 +12,7 @@ import { CLOCK, type ClockPort } from '../platform/clock.js';
 import type { Db } from '../platform/transaction.js';
 import type { ProviderEvent } from './payment.port.js';
 import { PaymentRepository, type PaymentRow } from './payments.repository.js';
+import { SaleShares } from './sale-shares.js';
 
 type Refunded = Extract<ProviderEvent['about'], { kind: 'refunded' }>;
 
@@ -22,6 +23,7 @@ export class PaymentRefunds {
     private readonly bookings: BookingRepository,
     private readonly transitions: BookingTransitions,
     private readonly ledger: LedgerService,
+    private readonly shares: SaleShares,
     @Inject(CLOCK) private readonly clock: ClockPort,
   ) {}
 
@@ -49,29 +51,15 @@ export class PaymentRefunds {
     const { booking, payment, refunded } = what;
     const { operatorId, ownerId, currency } = booking;
     const amountMinor = refunded.refundedMinor - payment.refundedMinor;
-    // Shares are taken of all that was given back before and after, so that refunds in steps add up to the cent.
-    const share = (totalMinor: number): number =>
-      part(totalMinor, refunded.refundedMinor, payment) - part(totalMinor, payment.refundedMinor, payment);
-    const sale = `sale:${booking.id}`;
-    const fee = `fee:${booking.id}`;
-    const vatMinor = share(this.ledger.creditedMinor(tx, sale, 'VAT'));
+    const share = this.shares.between(tx, payment, {
+      beforeMinor: payment.refundedMinor,
+      afterMinor: refunded.refundedMinor,
+    });
     const cause = `Refund of berth ${booking.number}`;
     const key = `${refunded.chargeId}:${refunded.refundedMinor}`;
-    const refund = {
-      operatorId,
-      ownerId,
-      netMinor: amountMinor - vatMinor,
-      vatMinor,
-      fromReserveMinor: 0,
-      feeMinor: share(this.ledger.creditedMinor(tx, fee, 'marketplace fee')),
-      feeVatMinor: share(this.ledger.creditedMinor(tx, fee, 'VAT')),
-    };
+    const refund = { operatorId, ownerId, ...share, fromReserveMinor: 0 };
     this.ledger.post(tx, refundEntry({ causeKey: `refund:${key}`, cause, currency }, refund), booking.id);
     const returned = refundReturnedEntry({ causeKey: `returned:${key}`, cause, currency }, { operatorId, amountMinor });
     this.ledger.post(tx, returned, booking.id);
   }
 }
-
-/** The part of a total that belongs to so much of what was taken. */
-const part = (totalMinor: number, ofMinor: number, payment: PaymentRow): number =>
-  divideHalfUp(BigInt(totalMinor) * BigInt(ofMinor), BigInt(payment.capturedMinor));

@@ -3,6 +3,7 @@
  * an earlier call with the same key has already done it. Throws `card-declined` where the bank refused, `payment-unavailable`
  * where the provider did not answer, so that it is not known whether anything happened.
  */
+import type { ChargebackFacts } from './provider-books.port.js';
 
 /** Amounts are whole minor units; currencies are ISO 4217 in capitals. */
 export interface IntentFacts {
@@ -79,6 +80,7 @@ export interface ProviderEvent {
         /** All that was given back of what was taken, so far. */
         readonly refundedMinor: number;
       }
+    | { readonly kind: 'chargeback'; readonly chargeback: ChargebackFacts }
     | { readonly kind: 'other' };
 }
 

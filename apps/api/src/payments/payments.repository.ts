@@ -82,6 +82,16 @@ export class PaymentRepository {
     return tx.insert(providerEvents).values(event).onConflictDoNothing().run().changes === 1;
   }
 
+  /** Which of these events were stored before. */
+  knownEvents(eventIds: readonly string[]): Set<string> {
+    const rows = this.db
+      .select({ id: providerEvents.id })
+      .from(providerEvents)
+      .where(inArray(providerEvents.id, [...eventIds]))
+      .all();
+    return new Set(rows.map((row) => row.id));
+  }
+
   closeEvent(tx: Db, eventId: string, processedMs: number, outcome: string): void {
     tx.update(providerEvents).set({ processedMs, outcome }).where(eq(providerEvents.id, eventId)).run();
   }

@@ -1,6 +1,7 @@
 /** The provider's objects, reduced to what the application knows about payments. */
 import type Stripe from 'stripe';
 import type { CardFacts, IntentFacts, PageFacts, ProviderEvent } from '../../payments/payment.port.js';
+import type { ChargebackFacts, RefundedFacts } from '../../payments/provider-books.port.js';
 
 export const BOOKING_KEY = 'skyberth_booking';
 export const RENEWS_KEY = 'skyberth_renews';
@@ -78,20 +79,46 @@ function aboutOf(event: Stripe.Event): ProviderEvent['about'] {
       };
     case 'charge.refunded': {
       const charge = event.data.object;
-      if (!charge.captured) return { kind: 'other' };
-      // Letting part of a reservation go counts as refunded there, though it was never taken.
-      const neverTaken = charge.amount - charge.amount_captured;
-      return {
-        kind: 'refunded',
-        chargeId: charge.id,
-        intentId: idOf(charge.payment_intent),
-        currency: charge.currency.toUpperCase(),
-        refundedMinor: Math.max(0, charge.amount_refunded - neverTaken),
-      };
+      return charge.captured ? refundedFacts(charge) : { kind: 'other' };
     }
+    case 'charge.dispute.created':
+    case 'charge.dispute.updated':
+    case 'charge.dispute.closed':
+    case 'charge.dispute.funds_withdrawn':
+    case 'charge.dispute.funds_reinstated':
+      return { kind: 'chargeback', chargeback: chargebackFacts(event.data.object) };
     default:
       return { kind: 'other' };
   }
+}
+
+/** Letting part of a reservation go counts as refunded there, though it was never taken. */
+export function refundedFacts(charge: Stripe.Charge): RefundedFacts {
+  const neverTaken = charge.amount - charge.amount_captured;
+  return {
+    kind: 'refunded',
+    chargeId: charge.id,
+    intentId: idOf(charge.payment_intent),
+    currency: charge.currency.toUpperCase(),
+    refundedMinor: Math.max(0, charge.amount_refunded - neverTaken),
+  };
+}
+
+/** An inquiry, which takes no money, is open until it becomes a dispute or ends without one. */
+export function chargebackFacts(dispute: Stripe.Dispute): ChargebackFacts {
+  const moved = dispute.balance_transactions;
+  const won = dispute.status === 'won' || dispute.status === 'warning_closed' || dispute.status === 'prevented';
+  return {
+    chargebackId: dispute.id,
+    chargeId: idOf(dispute.charge) ?? '',
+    intentId: idOf(dispute.payment_intent),
+    amountMinor: dispute.amount,
+    currency: dispute.currency.toUpperCase(),
+    reason: dispute.reason.replaceAll('_', ' '),
+    state: won ? 'won' : dispute.status === 'lost' ? 'lost' : 'open',
+    withdrawn: moved.some((row) => row.amount < 0),
+    reinstated: moved.some((row) => row.amount > 0),
+  };
 }
 
 const REFUSALS: Readonly<Record<string, string>> = {

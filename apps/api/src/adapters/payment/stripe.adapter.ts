@@ -1,6 +1,6 @@
 /** The payment port over the provider's own SDK. Where it connects to is configuration; the calls are the same everywhere. */
 import { Inject, Injectable } from '@nestjs/common';
-import Stripe from 'stripe';
+import type Stripe from 'stripe';
 import type {
   CardFacts,
   IntentFacts,
@@ -12,6 +12,7 @@ import type {
 } from '../../payments/payment.port.js';
 import { CONFIG, type Config } from '../../platform/config.js';
 import { DomainError } from '../../platform/domain-error.js';
+import { ask, stripeClient } from './stripe-client.js';
 import {
   BOOKING_KEY,
   cardFacts,
@@ -20,13 +21,9 @@ import {
   intentFacts,
   pageFacts,
   RENEWS_KEY,
-  refusalSentence,
   SAVES_CARD_KEY,
 } from './stripe-facts.js';
 
-/** A person waits for most of these calls; what takes longer is found again by its idempotency key. */
-const TIMEOUT_MS = 12_000;
-const NETWORK_RETRIES = 2;
 /** Signed longer ago than this, an event is a replay; the provider's own libraries use the same figure. */
 const SIGNATURE_TOLERANCE_S = 300;
 /** Clocks differ a little; a signature from further ahead was not made by the provider just now. */
@@ -38,16 +35,7 @@ export class StripeAdapter implements PaymentPort {
   private readonly stripe: Stripe;
 
   constructor(@Inject(CONFIG) private readonly config: Config) {
-    const url = new URL(config.paymentsUrl);
-    const protocol = url.protocol === 'http:' ? 'http' : 'https';
-    this.stripe = new Stripe(config.stripeSecretKey, {
-      host: url.hostname,
-      port: url.port || (protocol === 'http' ? 80 : 443),
-      protocol,
-      timeout: TIMEOUT_MS,
-      maxNetworkRetries: NETWORK_RETRIES,
-      telemetry: false,
-    });
+    this.stripe = stripeClient(config);
   }
 
   async createCustomer(customer: { organisationId: string; name: string; email: string }): Promise<string> {
@@ -204,33 +192,4 @@ const badSignature = (): DomainError =>
 /** The library refuses signatures that are too old, and lets those from the future pass. */
 function signedAtS(signature: string): number {
   return Number(/(?:^|,)\s*t=(\d+)/.exec(signature)?.[1] ?? Number.POSITIVE_INFINITY);
-}
-
-/**
- * The provider's errors as ours. `whenElsewhere` answers where the provider says that the object is past this step:
- * a repeat after a crash, or the buyer was faster.
- */
-async function ask<T>(answer: Promise<T>, whenElsewhere?: () => Promise<T>): Promise<T> {
-  try {
-    return await answer;
-  } catch (error) {
-    if (error instanceof Stripe.errors.StripeCardError) throw new DomainError('card-declined', refusalSentence(error));
-    if (error instanceof Stripe.errors.StripeInvalidRequestError) {
-      const elsewhere = error.code === 'payment_intent_unexpected_state' || error.statusCode === 400;
-      if (whenElsewhere && elsewhere) return await whenElsewhere();
-      throw error;
-    }
-    if (
-      error instanceof Stripe.errors.StripeConnectionError ||
-      error instanceof Stripe.errors.StripeAPIError ||
-      error instanceof Stripe.errors.StripeRateLimitError ||
-      error instanceof Stripe.errors.StripeIdempotencyError
-    ) {
-      throw new DomainError(
-        'payment-unavailable',
-        'The payment service does not answer just now. Nothing is charged twice if you try again in a moment.',
-      );
-    }
-    throw error;
-  }
 }
