@@ -19,6 +19,7 @@ export const ERROR_CODES = {
   'berth-taken': { status: 409, title: 'That time has just been taken' },
   'spacecraft-busy': { status: 409, title: 'The spacecraft has a contact at that time' },
   'hold-ended': { status: 409, title: 'The hold has ended' },
+  'dish-not-clear': { status: 409, title: 'Somebody is at the dish, or it is to stay still' },
   'wrong-state': { status: 409, title: 'Not possible in this state' },
   'price-changed': { status: 409, title: 'The price has changed' },
   'key-reused': { status: 409, title: 'The idempotency key was used for something else' },

@@ -42,6 +42,7 @@ export const PERMISSIONS = {
   'bookings.buy': { operator: WORKERS },
   'bookings.decide': { owner: WORKERS },
   'bookings.report': { owner: WORKERS },
+  'run-sheet.read': { owner: ALL },
   'invoices.read': { operator: ALL, owner: ALL, staff: ['finance'] },
   'ledger.read': { staff: ['finance'] },
   'ledger.close': { staff: ['finance'] },

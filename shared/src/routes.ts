@@ -1,11 +1,14 @@
 /** Every route of the API, by name. */
 import { accountRoutes } from './contracts/accounts.js';
 import { bookingRoutes } from './contracts/bookings.js';
+import { driftRoutes } from './contracts/drift.js';
 import { invoiceRoutes } from './contracts/invoices.js';
 import { ledgerRoutes } from './contracts/ledger.js';
+import { liveRoutes } from './contracts/live.js';
 import { marketRoutes } from './contracts/market.js';
 import { oversightRoutes } from './contracts/oversight.js';
 import { reconciliationRoutes } from './contracts/reconciliation.js';
+import { runSheetRoutes } from './contracts/run-sheet.js';
 import { spacecraftRoutes } from './contracts/spacecraft.js';
 import { stationRoutes } from './contracts/stations.js';
 import { systemRoutes } from './contracts/system.js';
@@ -16,6 +19,9 @@ export const routes = {
   ...stationRoutes,
   ...marketRoutes,
   ...bookingRoutes,
+  ...liveRoutes,
+  ...runSheetRoutes,
+  ...driftRoutes,
   ...invoiceRoutes,
   ...ledgerRoutes,
   ...reconciliationRoutes,

@@ -73,6 +73,11 @@ async function send(route: RouteContract, wish: Wish, { as, key = randomUUID(), 
     },
     ...(wish.body === undefined ? {} : { body: JSON.stringify(wish.body) }),
   });
+  if (response.headers.get('content-type')?.includes('text/event-stream')) {
+    // A stream has no end of its own.
+    await response.body?.cancel();
+    return { status: response.status, problem: null };
+  }
   const isProblem = response.headers.get('content-type')?.includes(PROBLEM_MEDIA_TYPE) ?? false;
   const text = await response.text();
   return { status: response.status, problem: isProblem ? Problem.parse(JSON.parse(text)) : null };

@@ -26,6 +26,7 @@ export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
     spacecraftId: spacecraft,
     aosMs: clock.nowMs() + 100_000_000,
   });
+  const visit = await must(call(routes.enterDish, { params: { id: antenna.id }, body: { name: 'Sam' }, as: owner }));
   return {
     spacecraft,
     station: station.id,
@@ -33,6 +34,7 @@ export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
     blackout: blackout.id,
     booking,
     invoice,
+    visit: visit.id,
     member: operator.personId,
     organisation: operator.organisationId,
   };

@@ -17,6 +17,7 @@ export interface Targets {
   readonly blackout: string;
   readonly booking: string;
   readonly invoice: string;
+  readonly visit: string;
   readonly member: string;
   readonly organisation: string;
 }
@@ -29,6 +30,7 @@ export const nowhere = (): Targets => ({
   blackout: randomUUID(),
   booking: randomUUID(),
   invoice: randomUUID(),
+  visit: randomUUID(),
   member: randomUUID(),
   organisation: randomUUID(),
 });
@@ -80,6 +82,9 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     listElements: { params: spacecraft },
     readElements: { body: { text: 'x', spacecraftId: to.spacecraft } },
     saveElements: { body: { text: 'x', spacecraftId: to.spacecraft } },
+    listEphemerides: { params: spacecraft },
+    addEphemeris: { params: spacecraft, body: { text: 'x' } },
+    withdrawEphemeris: { params: { ...spacecraft, ephemerisId: randomUUID() } },
     listStations: {},
     createStation: { body: { ...STATION, name: randomUUID() } },
     getStation: { params: station },
@@ -111,10 +116,25 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     acceptBooking: { params: booking },
     declineBooking: { params: booking, body: { reason: 'no' } },
     reportContact: { params: booking, body: REPORT },
+    contactEvents: { params: booking },
+    contactLive: { params: booking },
+    reportLive: { params: booking, body: { kind: 'acquired' } },
+    enterDish: { params: antenna, body: { name: 'Kim' } },
+    leaveDish: { params: { id: to.visit } },
+    stopDish: { params: antenna, body: { reason: 'ice' } },
+    releaseDish: { params: antenna },
+    writeHandOver: { params: station, body: { text: 'wind' } },
+    bookingDrift: { params: booking },
+    acceptDrift: { params: booking, body: { questionId: randomUUID() } },
+    refuseDrift: { params: booking, body: { questionId: randomUUID() } },
     listInvoices: {},
     getInvoice: { params: { id: to.invoice } },
     invoicePdf: { params: { id: to.invoice } },
     journal: {},
+    ledgerFile: { params: { file: 'journal.csv' } },
+    importMovements: { body: { text: 'id,type,amount,fee,net,currency,created\n' } },
+    resolveMovement: { params: { id: 'txn_nowhere' }, body: { action: 'suspense', reason: 'Nobody knows it.' } },
+    closeMonth: { params: { month: '2020-01' } },
     listAccounts: {},
     getAccount: { params: { id: to.organisation } },
     suspendAccount: { params: { id: to.organisation }, body: { reason: 'look' } },

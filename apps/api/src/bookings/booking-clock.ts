@@ -6,6 +6,7 @@ import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
 import { DomainError } from '../platform/domain-error.js';
 import { type Db, write } from '../platform/transaction.js';
+import { DishRepository } from '../run-sheet/dish.repository.js';
 import { BookingEnding } from './booking-ending.service.js';
 import { BookingSale } from './booking-sale.service.js';
 import { BookingRepository, type BookingRow } from './bookings.repository.js';
@@ -23,6 +24,7 @@ export class BookingClock implements OnModuleInit {
     private readonly repository: BookingRepository,
     private readonly sale: BookingSale,
     private readonly ending: BookingEnding,
+    private readonly dishes: DishRepository,
     private readonly jobs: JobsService,
   ) {}
 
@@ -38,9 +40,10 @@ export class BookingClock implements OnModuleInit {
       this.repository.overdueAnswers(this.db, nowMs),
       (tx, booking) => void this.sale.answerOverdue(tx, booking),
     );
-    this.each(this.repository.reached(this.db, 'confirmed', 'aosMs', nowMs), (tx, booking) =>
-      this.ending.begin(tx, booking),
-    );
+    // Asked in the transaction: a contact on a dish that is not clear waits, and begins when it is.
+    this.each(this.repository.reached(this.db, 'confirmed', 'aosMs', nowMs), (tx, booking) => {
+      if (this.dishes.stopOf(tx, booking.antennaId) === null) this.ending.begin(tx, booking);
+    });
     this.each(this.repository.reached(this.db, 'under way', 'losMs', nowMs), (tx, booking) =>
       this.ending.end(tx, booking),
     );

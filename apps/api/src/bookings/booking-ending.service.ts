@@ -53,6 +53,21 @@ export class BookingEnding {
     return cancelled;
   }
 
+  /** Nobody's choice: the pass, or the dish, is no longer there. All of the price goes back, and other time is offered. */
+  passLost(tx: Db, booking: BookingRow, { sentence, advice }: { sentence: string; advice: string }): BookingRow {
+    const cancelled = this.transitions.apply(tx, booking.id, { cause: 'pass lost', mover: BY_CLOCK, sentence });
+    const name = contactName(this.notices.names(tx, booking));
+    this.close(tx, cancelled, { refundPercent: 100, reason: `pass lost, ${name}` });
+    const subject = `Pass lost: ${name}`;
+    this.notices.toBuyer(tx, booking, { kind: 'pass lost', subject, sentences: [sentence, advice] });
+    this.notices.toStation(tx, booking, {
+      kind: 'pass lost',
+      subject,
+      sentences: [sentence, 'The time is free again.'],
+    });
+    return cancelled;
+  }
+
   /** The bank let the reservation go before the contact was charged. */
   authorisationRanOut(tx: Db, booking: BookingRow): BookingRow {
     const sentence = 'The reservation on the card ended and could not be renewed; nothing is charged.';

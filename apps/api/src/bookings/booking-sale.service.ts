@@ -149,7 +149,8 @@ export class BookingSale {
 
 export const CALENDAR_ATTACHMENT = 'contact calendar';
 
-const calendarOf = (booking: BookingRow) => ({
+/** The contact as a calendar file; made when the mail is sent, so it holds the times of that moment. */
+export const calendarOf = (booking: BookingRow) => ({
   fileName: `berth-${booking.number}.ics`,
   contentType: 'text/calendar; charset=utf-8',
   ref: { kind: CALENDAR_ATTACHMENT, id: booking.id },

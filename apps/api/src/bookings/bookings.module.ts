@@ -2,6 +2,7 @@
 import { Module } from '@nestjs/common';
 import { JobsModule } from '../jobs/jobs.module.js';
 import { MarketModule } from '../market/market.module.js';
+import { DishRecordsModule } from '../run-sheet/dish-records.module.js';
 import { BookingClock } from './booking-clock.js';
 import { BookingFlowModule } from './booking-flow.module.js';
 import { BookingGeometry } from './booking-geometry.js';
@@ -12,7 +13,7 @@ import { BookingsService } from './bookings.service.js';
 import { HoldService } from './hold.service.js';
 
 @Module({
-  imports: [BookingFlowModule, MarketModule, JobsModule],
+  imports: [BookingFlowModule, DishRecordsModule, MarketModule, JobsModule],
   controllers: [BookingsController],
   providers: [BookingListRepository, BookingViews, BookingGeometry, BookingsService, HoldService, BookingClock],
 })

@@ -33,7 +33,7 @@ const engineFor = (config: Config): PassEngine =>
     OfferService,
     ContactFiles,
   ],
-  exports: [MarketService, OfferService, ContactFiles],
+  exports: [MarketInputs, MarketService, OfferService, ContactFiles, PASS_ENGINE],
 })
 export class MarketModule implements OnApplicationShutdown {
   constructor(@Inject(PASS_ENGINE) private readonly engine: PassEngine) {}
