@@ -1,4 +1,5 @@
 export * from './accounts.js';
+export * from './availability.js';
 export * from './bookings.js';
 export * from './drift.js';
 export * from './ephemerides.js';
