@@ -50,7 +50,7 @@ const fly = async (booking: Booking, afterLosMs = 1_000) => {
 const finance = async () => shop.skyberth.people.signIn((await shop.skyberth.people.staff('finance')).email);
 const journal = async (bookingId: string) => {
   const as = await finance();
-  const { items } = await must(call(routes.journal, { query: { pageSize: 200 }, as }));
+  const { items } = await must(call(routes.journal, { query: { limit: 200 }, as }));
   return items.filter((entry) => entry.bookingId === bookingId);
 };
 const sumOf = (entries: Awaited<ReturnType<typeof journal>>, account: string) =>

@@ -44,7 +44,7 @@ export class PaymentEvents implements OnModuleInit {
   ) {}
 
   onModuleInit(): void {
-    this.jobs.every('payment events that never came', READ_EVERY_MS, async () => void (await this.readMissed()));
+    this.jobs.every('payment events that never came', READ_EVERY_MS, () => this.readWhenDue());
   }
 
   /**
@@ -55,6 +55,20 @@ export class PaymentEvents implements OnModuleInit {
     if (!rawBody || !signature) throw new DomainError('bad-signature', 'The event carries no signature.');
     const event = this.port.verifyEvent(rawBody, signature, this.clock.nowMs());
     this.take(event, rawBody.toString('utf8'));
+  }
+
+  private async readWhenDue(): Promise<void> {
+    const nowMs = this.clock.nowMs();
+    const last = this.readings.find(READING);
+    if (last && nowMs - last.ranMs < READ_EVERY_MS) return;
+    await this.readMissed().catch((error: unknown) => {
+      this.log.warn(`events: ${error instanceof Error ? error.message : String(error)}`);
+      this.readings.save(READING, {
+        readUntilMs: last?.readUntilMs ?? nowMs,
+        ranMs: nowMs,
+        note: 'The provider could not be read.',
+      });
+    });
   }
 
   /** Reads events since the last time and carries out those that never came, oldest first; answers how many. */

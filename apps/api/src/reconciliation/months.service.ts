@@ -118,7 +118,7 @@ export class MonthService {
       },
       {
         name: 'Provider read',
-        ok: (reading?.ranMs ?? 0) >= toMs,
+        ok: (reading?.readUntilMs ?? 0) >= toMs,
         sentence: `The provider must be read after the month’s end${reading ? '' : '; it never was'}.`,
       },
       {

@@ -2,7 +2,7 @@
  * The provider's movements are imported once each, their fees booked, and each is held against the entry that must say the
  * same. What differs is listed with its cause and what can be done about it.
  */
-import { Inject, Injectable, type OnModuleInit } from '@nestjs/common';
+import { Inject, Injectable, Logger, type OnModuleInit } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
 import { credit, debit, journalEntry, reverseEntry, suspenseEntry, withdrawalEntry } from '@skyberth/money';
 import type { BodyOf, Movement, Principal, QueryOf, ResponseOf, routes } from '@skyberth/shared';
@@ -32,6 +32,8 @@ const SETTLING_MS = 1_800_000;
 
 @Injectable()
 export class ReconciliationService implements OnModuleInit {
+  private readonly log = new Logger('Reconciliation');
+
   constructor(
     @Inject(DATABASE) private readonly db: SkyberthDatabase,
     @Inject(CLOCK) private readonly clock: ClockPort,
@@ -46,7 +48,18 @@ export class ReconciliationService implements OnModuleInit {
   ) {}
 
   onModuleInit(): void {
-    this.jobs.every('provider movements', READ_EVERY_MS, async () => void (await this.read()));
+    this.jobs.every('provider movements', READ_EVERY_MS, () => this.readWhenDue());
+  }
+
+  private async readWhenDue(): Promise<void> {
+    const nowMs = this.clock.nowMs();
+    const last = this.readings.find(READING);
+    if (last && nowMs - last.ranMs < READ_EVERY_MS) return;
+    await this.read().catch((error: unknown) => {
+      this.log.warn(`movements: ${error instanceof Error ? error.message : String(error)}`);
+      const note = 'The provider could not be read the last time.';
+      this.readings.save(READING, { readUntilMs: last?.readUntilMs ?? 0, ranMs: nowMs, note });
+    });
   }
 
   /** Imports what the provider did since the last time, and matches. */
