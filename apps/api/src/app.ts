@@ -1,6 +1,7 @@
 /** Builds the HTTP application; `main.ts` and the tests start it. */
 import 'reflect-metadata';
 import { existsSync } from 'node:fs';
+import type { IncomingMessage } from 'node:http';
 import { join } from 'node:path';
 import { NestFactory } from '@nestjs/core';
 import type { NestExpressApplication } from '@nestjs/platform-express';
@@ -11,8 +12,9 @@ import { AppModule } from './app.module.js';
 import { type ClockPort, systemClock } from './platform/clock.js';
 import type { Config } from './platform/config.js';
 
-/** Element files are the largest thing anyone sends. */
+/** Element files are large, and ephemerides the largest thing anyone sends. */
 const BODY_LIMIT = '9mb';
+const EPHEMERIS_LIMIT = '21mb';
 
 export interface AppOptions {
   readonly clock?: ClockPort;
@@ -29,6 +31,7 @@ export async function createApp(config: Config, options: AppOptions = {}): Promi
       abortOnError: false,
     },
   );
+  app.useBodyParser('json', { limit: EPHEMERIS_LIMIT, type: holdsEphemeris });
   app.useBodyParser('json', { limit: BODY_LIMIT });
   app.use(
     helmet({
@@ -42,6 +45,12 @@ export async function createApp(config: Config, options: AppOptions = {}): Promi
   if (config.webDir) serveWeb(app, config.webDir);
   app.enableShutdownHooks();
   return app;
+}
+
+/** Only the route that keeps ephemerides takes so much. */
+function holdsEphemeris({ url = '', headers }: IncomingMessage): boolean {
+  const isJson = (headers['content-type'] ?? '').startsWith('application/json');
+  return isJson && /^\/api\/spacecraft\/[^/?]+\/ephemerides(\?|$)/.test(url);
 }
 
 /** Everything comes from our own origin; Mantine sets styles on elements, hence inline styles. */

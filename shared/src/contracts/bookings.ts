@@ -3,6 +3,7 @@ import { z } from 'zod';
 import { BookingState } from '../booking-states.js';
 import { AmountMinor, Currency, Done, Id, IdParams, Note, PageQuery, pageOf, UtcTime } from '../primitives.js';
 import { defineRoute } from '../route.js';
+import { PassSource } from './ephemerides.js';
 import { BerthRequest, Need, PassDetail, Quote } from './market.js';
 
 export const BookingSummary = z.object({
@@ -76,6 +77,7 @@ export const Booking = BookingSummary.extend({
   invoiceId: Id.nullable(),
   invoiceNumber: z.string().nullable(),
   report: ContactReport.nullable(),
+  soldOn: PassSource.describe('what the pass was computed from when it was held'),
   setupStartsUtc: UtcTime,
   teardownEndsUtc: UtcTime,
   events: z.array(BookingEvent),

@@ -2,6 +2,7 @@
 import { z } from 'zod';
 import { AmountMinor, AzimuthDeg, Currency, ElevationDeg, Id, MaskPoints, UtcTime } from '../primitives.js';
 import { defineRoute } from '../route.js';
+import { PassSource } from './ephemerides.js';
 
 export const Need = z.enum(['downlink', 'uplink', 'both']);
 export type Need = z.infer<typeof Need>;
@@ -73,6 +74,7 @@ export const FoundPass = z.object({
   state: z.enum(['for sale', 'part for sale', 'not for sale', 'held', 'asked', 'berth', 'under way', 'done']),
   /** The caller's own booking on this pass, where there is one. */
   bookingId: Id.nullable(),
+  source: PassSource.default('element set').describe('what it was computed from'),
   currency: Currency.nullable(),
   parts: z.array(SaleablePart),
   reasons: z.array(Reason),
@@ -194,11 +196,17 @@ export const PassDetail = z.object({
       note: z.string(),
     }),
   ),
+  source: PassSource,
+  /** The operator's own, where some of the pass comes from one. */
+  ephemeris: z
+    .object({ id: Id, source: z.string(), startUtc: UtcTime, stopUtc: UtcTime, addedUtc: UtcTime })
+    .nullable(),
+  /** In force beside it, too. */
   elements: z.object({
     id: Id,
     epochUtc: UtcTime,
     ageH: z.number(),
-    timingErrorS: z.number(),
+    timingErrorS: z.number().nullable().describe('null where the pass comes from an ephemeris'),
     freshness: z.enum(['fresh', 'ageing', 'stale']),
   }),
   cautions: z.array(z.object({ title: z.string(), text: z.string() })),

@@ -73,6 +73,7 @@ export class BookingViews {
       invoiceId: invoice?.id ?? null,
       invoiceNumber: invoice?.number ?? null,
       report: booking.report,
+      soldOn: this.repository.soldOn(booking.id),
       setupStartsUtc: utc(booking.guardFromMs),
       teardownEndsUtc: utc(booking.guardToMs),
       events: this.events(booking),

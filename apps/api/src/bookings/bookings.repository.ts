@@ -1,7 +1,14 @@
 /** Bookings in the database: the only place with SQL about them. */
 import { Inject, Injectable } from '@nestjs/common';
-import { antennas, bookingEvents, bookings, type SkyberthDatabase, stations } from '@skyberth/drizzle';
-import { type BookingState, OCCUPYING_STATES, type Principal } from '@skyberth/shared';
+import {
+  antennas,
+  bookingEphemerides,
+  bookingEvents,
+  bookings,
+  type SkyberthDatabase,
+  stations,
+} from '@skyberth/drizzle';
+import { type BookingState, OCCUPYING_STATES, type PassSource, type Principal } from '@skyberth/shared';
 import { and, asc, eq, gt, inArray, isNotNull, lt, lte, max, ne, notInArray, or, type SQL, sql } from 'drizzle-orm';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
@@ -112,6 +119,21 @@ export class BookingRepository {
 
   insert(tx: Db, booking: NewBooking): void {
     tx.insert(bookings).values(booking).run();
+  }
+
+  /** Notes that the pass was sold on an operator's own ephemeris. */
+  noteEphemeris(tx: Db, bookingId: string, ephemerisId: string, passSource: 'ephemeris' | 'both'): void {
+    tx.insert(bookingEphemerides).values({ bookingId, ephemerisId, passSource }).run();
+  }
+
+  /** What the pass was computed from when it was held. */
+  soldOn(bookingId: string): PassSource {
+    const row = this.db
+      .select({ passSource: bookingEphemerides.passSource })
+      .from(bookingEphemerides)
+      .where(eq(bookingEphemerides.bookingId, bookingId))
+      .get();
+    return row?.passSource ?? 'element set';
   }
 
   /** The number of the next booking; only valid inside the write transaction that uses it. */

@@ -72,7 +72,7 @@ export class HoldService {
     const beam = this.repository.freeBeams(tx, { antennaId, beams: offer.beams, guardFromMs, guardToMs })[0];
     if (beam === undefined) throw berthTaken();
     const holdEndsMs = nowMs + HOLD_MS;
-    return this.transitions.hold(
+    const booking = this.transitions.hold(
       tx,
       {
         id: newId(),
@@ -107,6 +107,9 @@ export class HoldService {
         sentence: `Held until ${utcText(holdEndsMs)} at ${moneyText(quote.toPayMinor, quote.currency)}.`,
       },
     );
+    if (offer.ephemerisId !== null && offer.source !== 'element set')
+      this.repository.noteEphemeris(tx, booking.id, offer.ephemerisId, offer.source);
+    return booking;
   }
 }
 

@@ -3,6 +3,7 @@ import { Injectable } from '@nestjs/common';
 import { BookingRepository } from '../bookings/bookings.repository.js';
 import { notFound } from '../platform/domain-error.js';
 import { ElementsService } from '../spacecraft/elements.service.js';
+import { EphemeridesService } from '../spacecraft/ephemerides.service.js';
 import { SpacecraftService } from '../spacecraft/spacecraft.service.js';
 import { AntennaCatalogue, type SaleAntenna } from '../stations/antenna-catalogue.js';
 import { groupBy } from './group-by.js';
@@ -17,6 +18,9 @@ export interface Period {
 /** Volume is counted by calendar month, which reaches at most this far to either side of a contact. */
 const MONTH_MS = 32 * 86_400_000;
 
+/** A pass that reaches over the end of a period is followed for a day or two. */
+const REACH_MS = 3 * 86_400_000;
+
 @Injectable()
 export class MarketInputs {
   constructor(
@@ -24,6 +28,7 @@ export class MarketInputs {
     private readonly bookings: BookingRepository,
     private readonly fleet: SpacecraftService,
     private readonly elements: ElementsService,
+    private readonly ephemerides: EphemeridesService,
     private readonly catalogue: AntennaCatalogue,
   ) {}
 
@@ -101,23 +106,25 @@ export class MarketInputs {
 
   /**
    * The element sets in force over a period, each for the passes whose highest point lies in its stretch. The first and the
-   * last serve beyond the period too, for passes that reach over its ends.
+   * last serve beyond the period too, for passes that reach over its ends. Ephemerides stand above all of them.
    */
   private spansOf(spacecraftId: string, { fromMs, toMs }: Period): ElementsSpan[] {
     const spans = this.elements.inForceOver(spacecraftId, fromMs, toMs);
+    const ephemerides = this.ephemerides.inUse(spacecraftId, fromMs - REACH_MS, toMs + REACH_MS);
     return spans.map(({ fromMs: startMs, toMs: endMs, elements }) => ({
       fromMs: startMs <= fromMs ? Number.NEGATIVE_INFINITY : startMs,
       toMs: endMs >= toMs ? Number.POSITIVE_INFINITY : endMs,
       elementSetId: elements.id,
       digest: elements.digest,
       elementSet: elements.elementSet,
+      ephemerides,
     }));
   }
 }
 
 /** Only what the engine uses: everything here is copied to a thread. */
 function engineFields(antenna: SaleAntenna): Omit<AntennaInput, 'busy' | 'bought'> {
-  const { id, version, name, site, mask, mount, tiltDeg, bands, timeZone, weekly, blackouts, price } = antenna;
+  const { id, version, name, site, mask, mount, tiltDeg, bands, timeZone, weekly, openings, blackouts, price } = antenna;
   const { slewAzimuthDegPerS, slewElevationDegPerS, lowestReceiveDeg, lowestTransmitDeg, setupS, teardownS } = antenna;
   const { beams, minNoticeMin, horizonDays, minContactS, maxContactS, partsAllowed } = antenna;
   return {
@@ -131,6 +138,7 @@ function engineFields(antenna: SaleAntenna): Omit<AntennaInput, 'busy' | 'bought
     bands,
     timeZone,
     weekly,
+    openings,
     blackouts,
     price,
     slewAzimuthDegPerS,

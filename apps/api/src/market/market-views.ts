@@ -5,10 +5,10 @@ import type { SaleAntenna } from '../stations/antenna-catalogue.js';
 import { cautionsFor } from './cautions.js';
 import { radiosFor } from './compute/objections.js';
 import type { Period } from './market-inputs.js';
-import { freshnessFor } from './offer.service.js';
+import { freshnessFor, OWN_EPHEMERIS } from './offer.service.js';
 import type { PassAnswer } from './pass-finder.js';
 import { takenIntervals } from './taken.js';
-import type { AntennaInput, CraftInput } from './workers/job-types.js';
+import type { AntennaInput, CraftInput, EphemerisInput } from './workers/job-types.js';
 
 type FoundCraft = SearchResult['spacecraft'][number];
 
@@ -34,7 +34,9 @@ export function foundCraft(craft: CraftInput, fault: string | null, period: Peri
     return { id, name, shortName, ...none, freshness: 'none', fault: fault ?? `${name} has no elements yet.` };
   }
   const { epochMs, meanMotionRevPerDay } = span.elementSet;
-  const { freshness, ageH, timingErrorS } = freshnessOf(epochMs, meanMotionRevPerDay, nowMs);
+  const { ageH, ...trust } = freshnessOf(epochMs, meanMotionRevPerDay, nowMs);
+  const isCovered = span.ephemerides.some((each) => each.startMs <= period.fromMs && each.stopMs >= period.toMs);
+  const { freshness, timingErrorS } = isCovered ? OWN_EPHEMERIS : trust;
   return {
     id,
     name,
@@ -67,12 +69,21 @@ export function foundAntenna(
   };
 }
 
+const ephemerisView = ({ id, source, startMs, stopMs, addedMs }: EphemerisInput): PassDetail['ephemeris'] => ({
+  id,
+  source,
+  startUtc: utc(startMs),
+  stopUtc: utc(stopMs),
+  addedUtc: utc(addedMs),
+});
+
 /** What the card and the contact page share. */
 export function detailView(answer: PassAnswer, need: Need): Omit<PassDetail, 'reasons' | 'quote'> {
   const { outcome, sale, craft, span } = answer;
   if (outcome.detail === null) throw new Error('A pass in full must come with its track.');
   const { track, sun, illumination, links, untrackable } = outcome.detail;
   const { freshness, ageH, timingErrorS } = freshnessFor(answer);
+  const used = span.ephemerides.find((each) => each.id === outcome.ephemerisId);
   return {
     spacecraft: { id: craft.id, name: craft.name, shortName: craft.shortName },
     antenna: {
@@ -90,6 +101,8 @@ export function detailView(answer: PassAnswer, need: Need): Omit<PassDetail, 're
     sun,
     illumination,
     links,
+    source: outcome.source,
+    ephemeris: used === undefined ? null : ephemerisView(used),
     elements: { id: span.elementSetId, epochUtc: utc(span.elementSet.epochMs), ageH, timingErrorS, freshness },
     cautions: cautionsFor({
       need,

@@ -2,7 +2,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { GeodeticSite } from '@skyberth/orbit';
 import type { FoundStation } from '@skyberth/shared';
-import { WeightedCache } from './compute/weighted-cache.js';
+import { WeightedCache } from '../platform/weighted-cache.js';
 import type { Period } from './market-inputs.js';
 import { utcInterval } from './market-views.js';
 import { PASS_ENGINE, type PassEngine } from './workers/pass-engine.js';

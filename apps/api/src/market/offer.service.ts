@@ -1,6 +1,6 @@
 /** Recomputes one pass exactly when it is to be held, so that nothing is sold on a browser's word. */
 import { Inject, Injectable } from '@nestjs/common';
-import type { BerthRequest as BerthRequestSchema, PassGeometry, Quote, Reason } from '@skyberth/shared';
+import type { BerthRequest as BerthRequestSchema, PassGeometry, PassSource, Quote, Reason } from '@skyberth/shared';
 import type { z } from 'zod';
 import { CONFIG, type Config } from '../platform/config.js';
 import { type Freshness, freshnessOf } from '../spacecraft/freshness.js';
@@ -23,7 +23,10 @@ export interface BerthOffer {
   readonly guardFromMs: number;
   readonly guardToMs: number;
   readonly elementSetId: string;
-  readonly freshness: Freshness;
+  /** What the pass was computed from, and the ephemeris where that was one. */
+  readonly source: PassSource;
+  readonly ephemerisId: string | null;
+  readonly freshness: Trust;
   /** Null exactly where `reasons` is not empty. */
   readonly quote: Quote | null;
   readonly acceptance: 'instant' | 'owner';
@@ -74,6 +77,8 @@ export class OfferService {
       guardFromMs,
       guardToMs: outcome.losMs + sale.teardownS * 1000,
       elementSetId: outcome.elementSetId,
+      source: outcome.source,
+      ephemerisId: outcome.ephemerisId,
       freshness: freshnessFor(answer),
       quote: reasons.length > 0 ? null : this.quote(operatorId, answer),
       acceptance: sale.acceptance,
@@ -113,10 +118,17 @@ export const NOT_ON_SALE: Reason = {
   remedy: 'Choose another antenna.',
 };
 
+/** How far a pass can be trusted; the error is null where nobody but the operator can know it. */
+export type Trust = Omit<Freshness, 'timingErrorS'> & { readonly timingErrorS: number | null };
+
+/** An operator's own ephemeris is not judged by the age of the element set beside it. */
+export const OWN_EPHEMERIS = { freshness: 'fresh', timingErrorS: null } as const;
+
 /** Age and trust of the elements as of now, or as of the contact where that is over; the error is that of the contact. */
-export function freshnessFor({ outcome, span, nowMs }: PassAnswer): Freshness {
+export function freshnessFor({ outcome, span, nowMs }: PassAnswer): Trust {
   const { meanMotionRevPerDay } = span.elementSet;
   const epochMs = span.elementSet.epochMs;
   const now = freshnessOf(epochMs, meanMotionRevPerDay, Math.min(nowMs, outcome.tcaMs));
+  if (outcome.source === 'ephemeris') return { ...now, ...OWN_EPHEMERIS };
   return { ...now, timingErrorS: freshnessOf(epochMs, meanMotionRevPerDay, outcome.tcaMs).timingErrorS };
 }

@@ -6,6 +6,9 @@ import { CONFIG, type Config } from '../platform/config.js';
 import { ELEMENT_FEED, type ElementFeedPort } from './element-feed.port.js';
 import { ElementsRepository } from './elements.repository.js';
 import { ElementsService } from './elements.service.js';
+import { EphemeridesController } from './ephemerides.controller.js';
+import { EphemeridesRepository } from './ephemerides.repository.js';
+import { EphemeridesService } from './ephemerides.service.js';
 import { FeedPoller } from './feed-poller.js';
 import { ELEMENT_READER, type ElementReader, InProcessReader } from './reader/element-reader.js';
 import { PiscinaReader } from './reader/piscina-reader.js';
@@ -22,17 +25,19 @@ const feedFor = (config: Config): ElementFeedPort | null =>
 
 @Module({
   imports: [JobsModule],
-  controllers: [SpacecraftController],
+  controllers: [SpacecraftController, EphemeridesController],
   providers: [
     { provide: ELEMENT_READER, inject: [CONFIG], useFactory: readerFor },
     { provide: ELEMENT_FEED, inject: [CONFIG], useFactory: feedFor },
     ElementsRepository,
     ElementsService,
+    EphemeridesRepository,
+    EphemeridesService,
     FeedPoller,
     SpacecraftRepository,
     SpacecraftService,
   ],
-  exports: [ElementsService, SpacecraftService],
+  exports: [ElementsService, EphemeridesService, SpacecraftService],
 })
 export class SpacecraftModule implements OnApplicationShutdown {
   constructor(@Inject(ELEMENT_READER) private readonly reader: ElementReader) {}

@@ -28,17 +28,22 @@ export function flightFile(job: FileJob, tables: TrackTables): FileOutcome {
   const span = job.spacecraft.spans.find((each) => each.fromMs <= job.tcaMs && job.tcaMs < each.toMs);
   if (span === undefined)
     return { kind: 'elements unusable', sentence: `${job.spacecraft.name} has no elements for this contact.` };
-  return { kind: 'file', text: textOf(job, span, tables.source(span)) };
+  const { source, ephemeris } = tables.originOf(span, job);
+  const set = `elements of ${span.elementSet.epochUtc}`;
+  const own = `ephemeris (${ephemeris?.source ?? ''})`;
+  const from = source === 'element set' ? set : source === 'ephemeris' ? own : `${own} and ${set}`;
+  return { kind: 'file', text: textOf(job, span, tables.source(span), from) };
 }
 
-function textOf(job: FileJob, span: ElementsSpan, source: TrajectorySource): string {
+/** @param from what the file was computed from, in words */
+function textOf(job: FileJob, span: ElementsSpan, source: TrajectorySource, from: string): string {
   switch (job.file) {
     case 'pointing.csv':
-      return heading(job, span) + pointingCsv(pointingRows(trackOf(job, source), nominal(job)));
+      return heading(job, from) + pointingCsv(pointingRows(trackOf(job, source), nominal(job)));
     case 'frequency.csv':
-      return heading(job, span) + caution() + frequencyCsv(job, trackOf(job, source));
+      return heading(job, from) + caution() + frequencyCsv(job, trackOf(job, source));
     case 'ephemeris.oem':
-      return ephemeris(job, span, source);
+      return ephemeris(job, span, source, from);
     case 'elements.omm':
       return toOmmKvn(span.elementSet, { creationUtc: utc(job.createdMs), originator: job.operatorName });
   }
@@ -55,10 +60,10 @@ function trackOf(job: FileJob, source: TrajectorySource): LookAngles[] {
 }
 
 /** Comment lines say what the table is about, since a file outlives the page it came from. */
-function heading(job: FileJob, span: ElementsSpan): string {
+function heading(job: FileJob, from: string): string {
   return [
     `${job.spacecraft.name} over ${job.antenna.name}, ${job.stationName}`,
-    `${utc(job.aosMs)} to ${utc(job.losMs)}, elements of ${span.elementSet.epochUtc}`,
+    `${utc(job.aosMs)} to ${utc(job.losMs)}, ${from}`,
   ]
     .map(comment)
     .join('');
@@ -112,7 +117,7 @@ function frequencyLines(radio: Radio, track: readonly LookAngles[]): string[] {
 }
 
 /** CCSDS OEM in EME2000, reaching a little beyond the contact so that its ends can be interpolated too. */
-function ephemeris(job: FileJob, span: ElementsSpan, source: TrajectorySource): string {
+function ephemeris(job: FileJob, span: ElementsSpan, source: TrajectorySource, from: string): string {
   const { elementSet } = span;
   return oemToKvn(
     sampleOem(source, {
@@ -126,7 +131,7 @@ function ephemeris(job: FileJob, span: ElementsSpan, source: TrajectorySource): 
       frame: 'EME2000',
       comments: [
         `Contact over ${job.antenna.name} ${utc(job.aosMs)} to ${utc(job.losMs)}`,
-        `Propagated with SGP4 from elements of ${elementSet.epochUtc}`,
+        `Computed from ${from}; elements are propagated with SGP4`,
         ...POINTING_CAUTION,
       ].map((line) => line.replace(/[\r\n]+/g, ' ')),
     }),

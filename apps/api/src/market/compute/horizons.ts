@@ -1,7 +1,7 @@
 /** What an antenna sees of the sky, prepared once for each version of it. */
 import { type CompiledMask, compileMask, maskElevationDeg, type SiteFrame, siteFrame } from '@skyberth/orbit';
+import { WeightedCache } from '../../platform/weighted-cache.js';
 import type { AntennaInput } from '../workers/job-types.js';
-import { WeightedCache } from './weighted-cache.js';
 
 export interface Horizon {
   readonly frame: SiteFrame;

@@ -133,10 +133,13 @@ function answer(
   const span = spanOf(craft, stay);
   const source = tools.tables.source(span);
   const part = stretchOf({ stay, source, site: antenna.site, fromMs: stretch.aosMs, toMs: stretch.losMs });
+  const origin = tools.tables.originOf(span, part);
   const forSale = !job.booked && reasons.length === 0;
   return {
     kind: 'pass',
     elementSetId: stay.elementSetId,
+    source: origin.source,
+    ephemerisId: origin.ephemeris?.id ?? null,
     pass: geometryOf(stay),
     aosMs: part.aosMs,
     tcaMs: part.tcaMs,

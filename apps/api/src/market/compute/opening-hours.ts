@@ -1,7 +1,7 @@
 /** Opening hours of an antenna over whole days, remembered: recurrences cost more than passes do. */
-import { type Interval, openIntervals, weeklyRule } from '@skyberth/market';
+import { type Interval, mergeIntervals, openIntervals, weeklyRule } from '@skyberth/market';
+import { WeightedCache } from '../../platform/weighted-cache.js';
 import type { AntennaInput } from '../workers/job-types.js';
-import { WeightedCache } from './weighted-cache.js';
 
 const DAY_MS = 86_400_000;
 /** Weeks of openings kept, counted in intervals. */
@@ -11,7 +11,16 @@ export class OpeningHours {
   private readonly kept = new WeightedCache<readonly Interval[]>(MAX_KEPT);
 
   /** Open time that covers `[fromMs, toMs)` at least; merged and sorted. */
-  of(antenna: Pick<AntennaInput, 'weekly' | 'timeZone'>, fromMs: number, toMs: number): readonly Interval[] {
+  of(antenna: Pick<AntennaInput, 'weekly' | 'openings' | 'timeZone'>, fromMs: number, toMs: number): readonly Interval[] {
+    const weekly = this.weekly(antenna, fromMs, toMs);
+    return antenna.openings.length === 0 ? weekly : mergeIntervals([...weekly, ...antenna.openings]);
+  }
+
+  private weekly(
+    antenna: Pick<AntennaInput, 'weekly' | 'timeZone'>,
+    fromMs: number,
+    toMs: number,
+  ): readonly Interval[] {
     const firstDay = Math.floor(fromMs / DAY_MS) - 1;
     const lastDay = Math.ceil(toMs / DAY_MS) + 1;
     const key = JSON.stringify([antenna.timeZone, antenna.weekly, firstDay, lastDay]);

@@ -1,8 +1,9 @@
 /** Whole answers about one spacecraft over one antenna, so that a repeated search only looks them up. */
 import type { Interval } from '@skyberth/market';
+import { WeightedCache } from '../../platform/weighted-cache.js';
 import type { AntennaInput, CraftInput } from '../workers/job-types.js';
+import { sourceName } from './ephemeris-layers.js';
 import type { WrittenText } from './json-writer.js';
-import { WeightedCache } from './weighted-cache.js';
 
 export interface PairAnswer {
   /** In few pieces: what was written one after the other is one. */
@@ -55,4 +56,4 @@ export class PairAnswers {
 
 /** Names which elements a spacecraft is flown by, and when. */
 export const spansName = ({ spans }: CraftInput): string =>
-  spans.map((span) => `${span.elementSetId} ${span.fromMs} ${span.toMs}`).join('|');
+  spans.map((span) => `${sourceName(span)} ${span.fromMs} ${span.toMs}`).join('|');

@@ -11,12 +11,13 @@ import {
   type PassColumns,
   searchPassesColumns,
 } from '@skyberth/orbit';
+import { WeightedCache } from '../../platform/weighted-cache.js';
 import type { AntennaInput, ElementsSpan } from '../workers/job-types.js';
+import { sourceName } from './ephemeris-layers.js';
 import { antennaKey, type Horizons } from './horizons.js';
 import { joinDays, type Stay } from './stay.js';
 import { stretchOf } from './stretch.js';
 import type { TrackTables } from './track-table.js';
-import { WeightedCache } from './weighted-cache.js';
 
 const DAY_MS = 86_400_000;
 /** What a kept pass weighs with the text made from it, roughly, in bytes. */
@@ -91,8 +92,9 @@ export class PassBlocks {
   /** The blocks of one day for some of the antennas; missing ones are computed together. */
   private day(span: ElementsSpan, antennas: readonly Viewpoint[], only: readonly number[], day: number): Block[] {
     const views = only.map((index) => antennas[index] as Viewpoint);
+    const name = sourceName(span);
     // By set and not by digest: two operators may hold equal elements, and a stay says whose set it was made from.
-    const keys = views.map((view) => `${span.elementSetId}|${antennaKey(view.antenna)}|${view.floorDeg}|${day}`);
+    const keys = views.map((view) => `${name}|${antennaKey(view.antenna)}|${view.floorDeg}|${day}`);
     const blocks = keys.map((key) => this.kept.get(key));
     const missing = blocks.flatMap((block, place) => (block === undefined ? [place] : []));
     if (missing.length === 0) return blocks as Block[];

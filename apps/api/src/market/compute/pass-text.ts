@@ -62,6 +62,8 @@ export class PassTexts {
     out.ascii(`","antennaId":"${antenna.id}","spacecraftId":"${craft.id}","currency":"${antenna.price.currency}"`);
     out.ascii(`,"state":"${sale.state}","bookingId":${sale.bookingId === null ? 'null' : `"${sale.bookingId}"`}`);
     writeParts(out, sale.parts);
+    const { source } = this.tables.originOf(spanOf(craft, stay), stay);
+    if (source !== 'element set') out.ascii(`,"source":"${source}"`);
     if (sale.reasons.length === 0) out.ascii(',"reasons":[],');
     else {
       out.ascii(',"reasons":');

@@ -1,9 +1,9 @@
 /** For how long an answer about a pass may be given again, so that a repeated search works out only what time has changed. */
 import type { Interval } from '@skyberth/market';
+import { WeightedCache } from '../../platform/weighted-cache.js';
 import type { AntennaInput, CraftInput, Wish } from '../workers/job-types.js';
 import type { Fit } from './objections.js';
 import type { Stay } from './stay.js';
-import { WeightedCache } from './weighted-cache.js';
 
 const MINUTE_MS = 60_000;
 const HOUR_MS = 3_600_000;

@@ -2,9 +2,10 @@
  * Where a spacecraft is, read off a table instead of propagated anew: for drawing only. Positions a minute apart with their
  * velocities are joined by cubics; from 300 km up the error stays below 2 m, far under what a picture shows.
  */
-import { type SiteFrame, sgp4Source, type TrajectorySource, temeToEcef } from '@skyberth/orbit';
+import { type Pass, type SiteFrame, type TrajectorySource, temeToEcef } from '@skyberth/orbit';
+import { WeightedCache } from '../../platform/weighted-cache.js';
 import type { ElementsSpan } from '../workers/job-types.js';
-import { WeightedCache } from './weighted-cache.js';
+import { EphemerisLayers, type Origin } from './ephemeris-layers.js';
 
 const STEP_MS = 60_000;
 const DAY_MS = 86_400_000;
@@ -22,18 +23,25 @@ export interface Look {
 }
 
 export class TrackTables {
+  private readonly layers = new EphemerisLayers();
   private readonly days = new WeightedCache<Float64Array>(MAX_DAYS);
   private readonly sources = new WeightedCache<TrajectorySource>(MAX_SOURCES);
   /** The table used last, since a pass asks for many instants of one day. */
   private current: { readonly span: ElementsSpan; readonly day: number; readonly table: Float64Array } | null = null;
 
-  /** The propagator of an element set. Throws `OrbitError` for elements that cannot be used. */
+  /** Where the spacecraft is in a span. Throws `OrbitError` for elements that cannot be used. */
   source(span: ElementsSpan): TrajectorySource {
-    const known = this.sources.get(span.digest);
+    const key = contentName(span);
+    const known = this.sources.get(key);
     if (known !== undefined) return known;
-    const source = sgp4Source(span.elementSet);
-    this.sources.set(span.digest, source, 1);
+    const source = this.layers.sourceOf(span);
+    this.sources.set(key, source, 1);
     return source;
+  }
+
+  /** What a stay in a span was computed from. */
+  originOf(span: ElementsSpan, { aosMs, tcaMs, losMs }: Pick<Pass, 'aosMs' | 'tcaMs' | 'losMs'>): Origin {
+    return this.layers.originOf(span, [aosMs, tcaMs, losMs]);
   }
 
   /** Direction of the spacecraft from a site, into `out`. */
@@ -57,7 +65,7 @@ export class TrackTables {
 
   private day(span: ElementsSpan, day: number): Float64Array {
     if (this.current?.span === span && this.current.day === day) return this.current.table;
-    const key = `${span.digest}|${day}`;
+    const key = `${contentName(span)}|${day}`;
     let table = this.days.get(key);
     if (table === undefined) {
       table = tabulate(this.source(span), day);
@@ -67,6 +75,10 @@ export class TrackTables {
     return table;
   }
 }
+
+/** By content: equal element sets of two operators share a propagator. */
+const contentName = ({ digest, ephemerides }: ElementsSpan): string =>
+  ephemerides.length === 0 ? digest : `${digest}+${ephemerides.map((each) => each.id).join('+')}`;
 
 /** Places and velocities in turning axes, km and km/s, six numbers a node. A node beyond decay repeats the one before. */
 function tabulate(source: TrajectorySource, day: number): Float64Array {

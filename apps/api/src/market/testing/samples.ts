@@ -130,6 +130,7 @@ export function sampleFlying(changes: Partial<ElementSet> = {}, craft: Partial<C
     elementSetId: '01939f7e-0000-7000-8000-0000000000e1',
     digest: JSON.stringify(elementSet),
     elementSet,
+    ephemerides: [],
   };
   return sampleCraft({ spans: [span], ...craft });
 }

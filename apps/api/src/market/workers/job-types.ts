@@ -11,11 +11,13 @@ import type {
   Need,
   PassDetail,
   PassGeometry,
+  PassSource,
   Radio,
   Reason,
   WeeklyRule,
 } from '@skyberth/shared';
 import type { z } from 'zod';
+import type { KeptEphemeris } from '../../spacecraft/ephemerides.service.js';
 
 /** One element set and the passes it answers for: those whose highest point lies in `[fromMs, toMs)`. */
 export interface ElementsSpan extends Interval {
@@ -23,7 +25,12 @@ export interface ElementsSpan extends Interval {
   /** Names the content of the set; the same digest always gives the same passes. */
   readonly digest: string;
   readonly elementSet: ElementSet;
+  /** The operator's own ephemerides; at each instant the last that reaches it answers instead of the element set. */
+  readonly ephemerides: readonly EphemerisInput[];
 }
+
+/** An ephemeris as it is kept; its numbers lie in shared memory. */
+export type EphemerisInput = KeptEphemeris;
 
 export interface CraftInput {
   readonly id: string;
@@ -74,6 +81,8 @@ export interface AntennaInput {
   readonly partsAllowed: boolean;
   readonly timeZone: string;
   readonly weekly: readonly WeeklyRule[];
+  /** Open beyond the weekly hours. */
+  readonly openings: readonly Interval[];
   readonly blackouts: readonly OfferBlackout[];
   /** The card that a purchase now would freeze. */
   readonly price: PriceCard & { readonly ladder: readonly LadderStep[] };
@@ -143,6 +152,9 @@ export type PassOutcome =
   | {
       readonly kind: 'pass';
       readonly elementSetId: string;
+      /** What the stretch was computed from, and the ephemeris where that was one. */
+      readonly source: PassSource;
+      readonly ephemerisId: string | null;
       /** The whole stay above the mask. */
       readonly pass: PassGeometry;
       /** The stretch asked for, snapped to what is for sale; milliseconds are whole. */

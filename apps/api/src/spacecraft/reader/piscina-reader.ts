@@ -4,7 +4,9 @@ import { fileURLToPath } from 'node:url';
 import type { ElementReading } from '@skyberth/orbit';
 import { Piscina } from 'piscina';
 import { DomainError } from '../../platform/domain-error.js';
+import { type EphemerisReading, readEphemeris } from '../ephemeris-file.js';
 import { type ElementReader, type ElementText, readText } from './element-reader.js';
+import type { ReadTask } from './read-worker.js';
 
 /** A text so short is read in less time than a thread takes to start. */
 const SHORT_TEXT = 20_000;
@@ -37,10 +39,19 @@ export class PiscinaReader implements ElementReader {
 
   async read(input: ElementText): Promise<ElementReading> {
     if (input.text.length <= SHORT_TEXT) return readText(input);
+    return this.inThread({ kind: 'elements', input });
+  }
+
+  async readEphemeris(text: string): Promise<EphemerisReading> {
+    if (text.length <= SHORT_TEXT) return readEphemeris(text);
+    return this.inThread({ kind: 'ephemeris', input: { text, fileName: null } });
+  }
+
+  private async inThread<Reading>(task: ReadTask): Promise<Reading> {
     if (this.pool.queueSize >= MOST_WAITING) {
       throw new DomainError('unavailable', 'Many large files are being read just now. Try again in a minute.');
     }
-    const reading: ElementReading = await this.pool.run(input);
+    const reading: Reading = await this.pool.run(task);
     return reading;
   }
 

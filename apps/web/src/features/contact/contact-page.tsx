@@ -121,15 +121,39 @@ function Summary({ booking, detail }: { readonly booking: Booking; readonly deta
       {detail && (
         <>
           <br />
-          Elements of <DayTime atMs={Date.parse(detail.elements.epochUtc)} />,{' '}
-          {formatDuration(detail.elements.ageH * 3_600_000)} old,{' '}
-          <strong>±{formatNumber(detail.elements.timingErrorS, 1)} s</strong>
-          {detail.elements.freshness === 'fresh' ? '.' : `: ${detail.elements.freshness}.`}
+          <SourceSentence booking={booking} detail={detail} />
         </>
       )}
     </>
   );
 }
+
+/** What the figures below were computed from, and what the contact was sold on where that was something else. */
+function SourceSentence({ booking, detail }: { readonly booking: Booking; readonly detail: PassDetail }) {
+  const { source, ephemeris, elements } = detail;
+  const soldOn = booking.soldOn === source ? null : ` Sold on ${SOLD_ON_WORDS[booking.soldOn]}.`;
+  if (elements.timingErrorS === null)
+    return (
+      <>
+        By the operator’s own ephemeris ({ephemeris?.source}).{soldOn}
+      </>
+    );
+  return (
+    <>
+      {source === 'both' && `By the operator’s own ephemeris (${ephemeris?.source ?? ''}) where it reaches, else by `}
+      {source === 'both' ? 'elements' : 'Element set'} of <DayTime atMs={Date.parse(elements.epochUtc)} />,{' '}
+      {formatDuration(elements.ageH * 3_600_000)} old, <strong>±{formatNumber(elements.timingErrorS, 1)} s</strong>
+      {elements.freshness === 'fresh' ? '.' : `: ${elements.freshness}.`}
+      {soldOn}
+    </>
+  );
+}
+
+const SOLD_ON_WORDS: Readonly<Record<Booking['soldOn'], string>> = {
+  'element set': 'the element set',
+  ephemeris: 'an ephemeris',
+  both: 'an ephemeris and the element set',
+};
 
 function CountdownFigure({ booking }: { readonly booking: Booking }) {
   const left = countdown(booking, useNow());

@@ -21,6 +21,7 @@ export function foundPass(over: Partial<FoundPass> = {}): FoundPass {
       rangeRateKmPerS: [-6.9, 0, 6.9],
       maxElevationDeg: 84.9,
     },
+    source: 'element set',
     profile: { fromUtc: '2026-12-01T15:00:00.000Z', stepS: 300, elevationDeg: [7, 84, 8], maskDeg: [8, 5, 9] },
     state: 'for sale',
     bookingId: null,

@@ -61,9 +61,9 @@ export function PassFigures({ detail }: { readonly detail: PassDetail }) {
         {range && <Figure label="Range" value={range} unit="km" />}
         <Figure label="Spacecraft" value={detail.illumination} />
         <Figure
-          label={`Elements, ${ageWords(elements.ageH)}`}
-          value={`±${formatNumber(elements.timingErrorS, 1)}`}
-          unit="s"
+          label={sourceLabel(detail)}
+          value={elements.timingErrorS === null ? 'Ephemeris' : `±${formatNumber(elements.timingErrorS, 1)}`}
+          {...(elements.timingErrorS === null ? {} : { unit: 's' })}
           tone={elements.freshness === 'stale' ? 'bad' : 'plain'}
           {...(elements.freshness === 'fresh' ? {} : { note: elements.freshness })}
         />
@@ -79,6 +79,12 @@ export function PassFigures({ detail }: { readonly detail: PassDetail }) {
       <LinkBudgets links={links} />
     </section>
   );
+}
+
+/** What the pass was computed from, and how old that is. */
+function sourceLabel({ source, ephemeris, elements }: PassDetail): string {
+  if (source === 'element set' || ephemeris === null) return `Element set, ${ageWords(elements.ageH)}`;
+  return source === 'both' ? `Ephemeris and element set, ${ageWords(elements.ageH)}` : `Own: ${ephemeris.source}`;
 }
 
 function LinkFigures({ link, named }: { readonly link: PassDetail['links'][number]; readonly named: boolean }) {
