@@ -2,8 +2,11 @@
 
 export * from './booking-states.js';
 export * from './contracts/accounts.js';
+export * from './contracts/availability.js';
 export * from './contracts/bookings.js';
+export * from './contracts/disputes.js';
 export * from './contracts/drift.js';
+export * from './contracts/ephemerides.js';
 export * from './contracts/invoices.js';
 export * from './contracts/ledger.js';
 export * from './contracts/live.js';

@@ -1,7 +1,10 @@
 /** Every route of the API, by name. */
 import { accountRoutes } from './contracts/accounts.js';
+import { availabilityRoutes } from './contracts/availability.js';
 import { bookingRoutes } from './contracts/bookings.js';
+import { disputeRoutes } from './contracts/disputes.js';
 import { driftRoutes } from './contracts/drift.js';
+import { ephemerisRoutes } from './contracts/ephemerides.js';
 import { invoiceRoutes } from './contracts/invoices.js';
 import { ledgerRoutes } from './contracts/ledger.js';
 import { liveRoutes } from './contracts/live.js';
@@ -16,12 +19,15 @@ import { systemRoutes } from './contracts/system.js';
 export const routes = {
   ...accountRoutes,
   ...spacecraftRoutes,
+  ...ephemerisRoutes,
   ...stationRoutes,
+  ...availabilityRoutes,
   ...marketRoutes,
   ...bookingRoutes,
   ...liveRoutes,
   ...runSheetRoutes,
   ...driftRoutes,
+  ...disputeRoutes,
   ...invoiceRoutes,
   ...ledgerRoutes,
   ...reconciliationRoutes,

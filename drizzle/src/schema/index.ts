@@ -1,6 +1,7 @@
 export * from './accounts.js';
 export * from './availability.js';
 export * from './bookings.js';
+export * from './disputes.js';
 export * from './drift.js';
 export * from './ephemerides.js';
 export * from './live.js';

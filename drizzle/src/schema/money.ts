@@ -89,7 +89,8 @@ export const invoices = sqliteTable(
     uniqueIndex('invoices_series').on(t.series, t.seq),
     index('invoices_operator').on(t.operatorId, t.issuedMs),
     index('invoices_booking').on(t.bookingId),
-    uniqueIndex('invoices_one_each').on(t.bookingId, t.kind),
+    // Credit notes may follow in steps; a trigger holds their sum to the invoice.
+    uniqueIndex('invoices_one_each').on(t.bookingId).where(sql`kind = 'invoice'`),
     check('invoices_sum', sql`${t.grossMinor} = ${t.netMinor} + ${t.vatMinor}`),
   ],
 );

@@ -1,0 +1,2 @@
+DROP INDEX `invoices_one_each`;--> statement-breakpoint
+CREATE UNIQUE INDEX `invoices_one_each` ON `invoices` (`booking_id`) WHERE kind = 'invoice';
