@@ -18,6 +18,11 @@ export const spacecraftQueries = {
       queryKey: ['spacecraft', 'one', id],
       queryFn: ({ signal }) => call(routes.getSpacecraft, { params: { id }, signal }),
     }),
+  ephemerides: (id: string) =>
+    queryOptions({
+      queryKey: ['spacecraft', 'ephemerides', id],
+      queryFn: ({ signal }) => call(routes.listEphemerides, { params: { id }, signal }),
+    }),
   elements: (id: string, page: number) =>
     queryOptions({
       queryKey: ['spacecraft', 'elements', id, page],

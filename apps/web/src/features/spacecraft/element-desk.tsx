@@ -1,13 +1,14 @@
 /** The desk: text or file, whose it is, what was read, and the saving of it. */
 import { Button, FileButton, Loader, Select } from '@mantine/core';
 import { useQuery } from '@tanstack/react-query';
-import { type DragEvent, useRef, useState } from 'react';
+import { useRef, useState } from 'react';
 import { ProblemError } from '../../lib/api-client.js';
 import { sentenceOf } from '../../lib/problem-fields.js';
 import { spacecraftQueries } from '../../lib/spacecraft-queries.js';
 import { useLeaveGuard } from '../../lib/use-leave-guard.js';
 import { formatBytes } from '../../ui/format.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
+import { DropArea } from './drop-area.js';
 import { ElementReading } from './element-reading.js';
 import { ElementSaving } from './element-saving.js';
 import { ElementText, type ElementTextHandle } from './element-text.js';
@@ -43,7 +44,7 @@ export function ElementDesk({ desk, attachTo, onAttach }: ElementDeskProps) {
   const attachedTo = craft.data?.items.find((one) => one.id === attachTo) ?? null;
   return (
     <div className={elementClasses.desk}>
-      <DropArea onFile={takeFile}>
+      <DropArea label="Element sets; a file may be dropped here" onFile={takeFile}>
         <div className={elementClasses.textHead}>
           <label className={classes.heading} htmlFor="elements-text">
             Element sets
@@ -194,37 +195,5 @@ function ReadActs({ desk, onFile }: Pick<ElementDeskProps, 'desk'> & { readonly 
         )
       )}
     </div>
-  );
-}
-
-interface DropAreaProps {
-  readonly onFile: (file: File | null) => void;
-  readonly children: React.ReactNode;
-}
-
-/** A file may be dropped on the text; the button beside it does the same for a keyboard. */
-function DropArea({ onFile, children }: DropAreaProps) {
-  const [isOver, setOver] = useState(false);
-  const hasFile = (event: DragEvent) => event.dataTransfer.types.includes('Files');
-  return (
-    <fieldset
-      aria-label="Element sets; a file may be dropped here"
-      className={elementClasses.drop}
-      data-over={isOver || undefined}
-      onDragOver={(event) => {
-        if (!hasFile(event)) return;
-        event.preventDefault();
-        setOver(true);
-      }}
-      onDragLeave={() => setOver(false)}
-      onDrop={(event) => {
-        setOver(false);
-        if (!hasFile(event)) return;
-        event.preventDefault();
-        onFile(event.dataTransfer.files[0] ?? null);
-      }}
-    >
-      {children}
-    </fieldset>
   );
 }

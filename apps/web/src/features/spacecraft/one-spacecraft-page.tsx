@@ -13,6 +13,7 @@ import { StateBadge } from '../../ui/state-badge.js';
 import { identityWords } from './craft-words.js';
 import { ElementHistory } from './element-history.js';
 import { ElementsInForce } from './elements-in-force.js';
+import { EphemerisList } from './ephemeris-list.js';
 import { FreshnessBadge } from './freshness.js';
 import { RadioList } from './radio-list.js';
 import { RetireSection } from './retire-section.js';
@@ -52,6 +53,7 @@ function OneCraft({ craft }: { readonly craft: Spacecraft }) {
       </PageTitle>
       <div className={classes.sections}>
         <ElementsInForce craft={craft} mayWrite={mayWrite && isActive} />
+        <EphemerisList craft={craft} mayWrite={mayWrite && isActive} />
         <RadioList craft={craft} mayWrite={mayWrite && isActive} />
         <ElementHistory craft={craft} />
         {mayWrite && isActive && <RetireSection craft={craft} />}
