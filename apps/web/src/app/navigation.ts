@@ -30,6 +30,7 @@ const OWNER: readonly Page[] = [
 const FINANCE: readonly Page[] = [
   HOME,
   { label: 'Ledger', to: paths.ledger },
+  { label: 'Reconciliation', to: paths.reconciliation },
   { label: 'Invoices', to: paths.invoices },
   { label: 'Bookings', to: paths.bookings },
 ];

@@ -142,6 +142,12 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('../features/help/help-page.js')).HelpPage }),
   },
   {
+    path: paths.reconciliation,
+    lazy: async () => ({
+      Component: (await import('../features/reconciliation/reconciliation-page.js')).ReconciliationPage,
+    }),
+  },
+  {
     path: paths.ledger,
     lazy: async () => ({ Component: (await import('../features/ledger/ledger-page.js')).LedgerPage }),
   },

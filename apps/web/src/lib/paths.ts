@@ -33,6 +33,7 @@ export const paths = {
   audit: '/audit',
   help: '/help',
   ledger: '/ledger',
+  reconciliation: '/reconciliation',
   system: '/system',
   organisation: '/organisation',
 } as const;
