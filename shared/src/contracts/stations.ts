@@ -349,7 +349,9 @@ export const stationRoutes = {
     method: 'PUT',
     path: '/api/antennas/:id/price',
     summary: 'Publish a price card; quotes already given keep theirs',
-    body: PriceCardInput,
+    body: PriceCardInput.extend({
+      validFromUtc: UtcTime.optional().describe('a time to come; now where it is absent'),
+    }),
     errors: ['not-found', 'bad-input'],
   }),
   addBlackout: defineRoute({

@@ -1,12 +1,13 @@
 /** What the market may sell: antennas on sale at approved stations, with all that bounds them in a period. */
 import { Inject, Injectable } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
-import type { LadderStep, OfferBlackout, PriceCard } from '@skyberth/market';
+import type { Interval, LadderStep, OfferBlackout, PriceCard } from '@skyberth/market';
 import type { GeodeticSite, MaskPoint } from '@skyberth/orbit';
 import type { Antenna, AntennaBand, WeeklyRule } from '@skyberth/shared';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
 import { AntennasRepository, type Period, type WholeAntenna } from './antennas.repository.js';
+import { CalendarTimes } from './calendar-times.js';
 import { bandView, maskPointsOf, missingOf, ruleView } from './station-views.js';
 
 type Figures = Omit<
@@ -25,6 +26,8 @@ export interface SaleAntenna extends Figures {
   readonly mask: readonly MaskPoint[];
   readonly bands: readonly AntennaBand[];
   readonly weekly: readonly WeeklyRule[];
+  /** Open beyond the weekly hours, in the period; uncut. */
+  readonly openings: readonly Interval[];
   readonly blackouts: readonly OfferBlackout[];
   readonly price: PriceCard & { readonly ladder: readonly LadderStep[] };
   /** Whether it is for sale at all at this moment. */
@@ -41,6 +44,8 @@ export interface CatalogueFilter {
 
 @Injectable()
 export class AntennaCatalogue {
+  private readonly times = new CalendarTimes();
+
   constructor(
     @Inject(DATABASE) private readonly db: SkyberthDatabase,
     @Inject(CLOCK) private readonly clock: ClockPort,
@@ -50,7 +55,7 @@ export class AntennaCatalogue {
   /** Sorted by station and antenna name. The price is the one that a purchase now would freeze. */
   onSale(filter: CatalogueFilter): SaleAntenna[] {
     return this.antennas.onSale(this.db, filter.stationIds ?? [], this.period(filter)).flatMap((whole) => {
-      const antenna = saleAntenna(whole);
+      const antenna = this.saleAntenna(whole, filter);
       return antenna?.onSale ? [antenna] : [];
     });
   }
@@ -58,7 +63,17 @@ export class AntennaCatalogue {
   /** One antenna, on sale or not (a contact outlives the sale), or null where it is unknown or never had a price. */
   byId(id: string, period: { readonly fromMs: number; readonly toMs: number }): SaleAntenna | null {
     const whole = this.antennas.find(this.db, null, id, this.period(period));
-    return whole ? saleAntenna(whole) : null;
+    return whole ? this.saleAntenna(whole, period) : null;
+  }
+
+  private saleAntenna(whole: WholeAntenna, { fromMs, toMs }: Interval): SaleAntenna | null {
+    const openings = this.times.openings(whole.calendar, fromMs, toMs).map(({ rule: _rule, ...each }) => each);
+    const repeated = this.times.blackouts(whole.calendar, fromMs, toMs);
+    return saleAntenna(
+      whole,
+      openings,
+      repeated.map((each) => ({ fromMs: each.fromMs, toMs: each.toMs, reason: reasonWords(each.rule) })),
+    );
   }
 
   private period({ fromMs, toMs }: { fromMs: number; toMs: number }): Period {
@@ -66,7 +81,12 @@ export class AntennaCatalogue {
   }
 }
 
-function saleAntenna(whole: WholeAntenna): SaleAntenna | null {
+/** Null where it never had a price. */
+function saleAntenna(
+  whole: WholeAntenna,
+  openings: readonly Interval[],
+  repeated: readonly OfferBlackout[],
+): SaleAntenna | null {
   const { station, price } = whole;
   if (!price) return null;
   const { state, createdMs: _createdMs, ...figures } = whole.antenna;
@@ -82,11 +102,11 @@ function saleAntenna(whole: WholeAntenna): SaleAntenna | null {
     mask: maskPointsOf(whole),
     bands: whole.bands.map(bandView),
     weekly: whole.rules.map(ruleView),
-    blackouts: whole.blackouts.map((each) => ({
-      fromMs: each.fromMs,
-      toMs: each.toMs,
-      reason: each.note ? `${each.reason}: ${each.note}` : each.reason,
-    })),
+    openings,
+    blackouts: [
+      ...whole.blackouts.map((each) => ({ fromMs: each.fromMs, toMs: each.toMs, reason: reasonWords(each) })),
+      ...repeated,
+    ].sort((a, b) => a.fromMs - b.fromMs),
     price: {
       currency: price.currency,
       perMinuteMinor: price.perMinuteMinor,
@@ -100,3 +120,6 @@ function saleAntenna(whole: WholeAntenna): SaleAntenna | null {
     onSale: state === 'on sale' && missingOf(whole).length === 0,
   };
 }
+
+const reasonWords = ({ reason, note }: { readonly reason: string; readonly note: string }): string =>
+  note ? `${reason}: ${note}` : reason;

@@ -7,6 +7,7 @@ import {
   availabilityRules,
   blackouts,
   bookings,
+  calendarRules,
   organisations,
   priceCards,
   stations,
@@ -23,6 +24,7 @@ export type BandRow = typeof antennaBands.$inferSelect;
 export type MaskRow = typeof antennaMasks.$inferSelect;
 export type RuleRow = typeof availabilityRules.$inferSelect;
 export type BlackoutRow = typeof blackouts.$inferSelect;
+export type CalendarRuleRow = typeof calendarRules.$inferSelect;
 export type PriceCardRow = typeof priceCards.$inferSelect;
 
 /** An antenna with everything about it that is in force. */
@@ -33,6 +35,8 @@ export interface WholeAntenna {
   readonly mask: MaskRow | null;
   readonly rules: readonly RuleRow[];
   readonly blackouts: readonly BlackoutRow[];
+  /** Openings and blackouts that come again. */
+  readonly calendar: readonly CalendarRuleRow[];
   readonly price: PriceCardRow | null;
 }
 
@@ -102,6 +106,7 @@ export class AntennasRepository {
     const masks = byAntenna(chunks(ids).flatMap((some) => this.masksOf(db, some)));
     const rules = byAntenna(chunks(ids).flatMap((some) => this.rulesOf(db, some)));
     const closed = byAntenna(chunks(ids).flatMap((some) => this.blackoutsOf(db, some, period)));
+    const calendar = byAntenna(chunks(ids).flatMap((some) => this.calendarOf(db, some)));
     const prices = byAntenna(chunks(ids).flatMap((some) => this.pricesOf(db, some, period.nowMs)));
     return rows.map(({ antenna, station, ownerName }) => ({
       antenna,
@@ -110,6 +115,7 @@ export class AntennasRepository {
       mask: masks.get(antenna.id)?.[0] ?? null,
       rules: rules.get(antenna.id) ?? [],
       blackouts: closed.get(antenna.id) ?? [],
+      calendar: calendar.get(antenna.id) ?? [],
       price: prices.get(antenna.id)?.[0] ?? null,
     }));
   }
@@ -154,6 +160,15 @@ export class AntennasRepository {
       .from(blackouts)
       .where(and(inArray(blackouts.antennaId, ids), lt(blackouts.fromMs, toMs), gt(blackouts.toMs, fromMs)))
       .orderBy(asc(blackouts.fromMs), asc(blackouts.id))
+      .all();
+  }
+
+  private calendarOf(db: Db, ids: string[]): CalendarRuleRow[] {
+    return db
+      .select()
+      .from(calendarRules)
+      .where(inArray(calendarRules.antennaId, ids))
+      .orderBy(asc(calendarRules.createdMs), asc(calendarRules.id))
       .all();
   }
 
@@ -210,6 +225,33 @@ export class AntennasRepository {
     tx.insert(blackouts).values(blackout).run();
   }
 
+  addCalendarRule(tx: Db, rule: CalendarRuleRow): void {
+    tx.insert(calendarRules).values(rule).run();
+  }
+
+  /** Removes a rule of this owner and returns it; undefined where there is none. */
+  removeCalendarRule(tx: Db, organisationId: string, id: string): CalendarRuleRow | undefined {
+    const row = tx
+      .select({ rule: calendarRules })
+      .from(calendarRules)
+      .innerJoin(antennas, eq(antennas.id, calendarRules.antennaId))
+      .innerJoin(stations, eq(stations.id, antennas.stationId))
+      .where(and(eq(calendarRules.id, id), eq(stations.organisationId, organisationId)))
+      .get();
+    if (row) tx.delete(calendarRules).where(eq(calendarRules.id, id)).run();
+    return row?.rule;
+  }
+
+  /** All cards of an antenna, the last to come first. */
+  priceCards(db: Db, antennaId: string): PriceCardRow[] {
+    return db
+      .select()
+      .from(priceCards)
+      .where(eq(priceCards.antennaId, antennaId))
+      .orderBy(desc(priceCards.validFromMs), desc(priceCards.id))
+      .all();
+  }
+
   /** Removes a blackout of this owner and returns it; undefined where there is none. */
   removeBlackout(tx: Db, organisationId: string, id: string): BlackoutRow | undefined {
     const row = tx
@@ -226,7 +268,13 @@ export class AntennasRepository {
   /** Sold contacts whose guarded time lies in the period. */
   contactsIn(db: Db, antennaId: string, fromMs: number, toMs: number) {
     return db
-      .select({ bookingId: bookings.id, number: bookings.number, aosMs: bookings.aosMs })
+      .select({
+        bookingId: bookings.id,
+        number: bookings.number,
+        aosMs: bookings.aosMs,
+        guardFromMs: bookings.guardFromMs,
+        guardToMs: bookings.guardToMs,
+      })
       .from(bookings)
       .where(
         and(

@@ -11,7 +11,7 @@ import { newId } from '../platform/ids.js';
 import { type Db, write } from '../platform/transaction.js';
 import { nameTaken, uniqueOr } from '../platform/unique-name.js';
 import { AntennasRepository, type WholeAntenna } from './antennas.repository.js';
-import { refuseBadPrice, refuseBadRules } from './input-checks.js';
+import { refuseBadPrice, refuseBadRules, refuseBadValidFrom } from './input-checks.js';
 import { antennaView, blackoutView, missingOf } from './station-views.js';
 import { StationsRepository } from './stations.repository.js';
 import { scopeOf } from './stations.service.js';
@@ -94,19 +94,24 @@ export class AntennasService {
     });
   }
 
-  /** The card is valid from now; the ones before stay, and so do prices that were frozen. */
+  /**
+   * The card holds for purchases from now on, or from the instant it names; the ones before stay, and so do prices that
+   * were frozen. Throws `bad-input` for an instant that has gone by or is more than two years away.
+   */
   setPrice(caller: Principal, id: string, card: BodyOf<typeof routes.setPrice>): Antenna {
     return this.change(caller, id, 'antenna.set-price', card, (tx, { station }) => {
       refuseBadPrice(card, station.currency);
-      const { perMinuteMinor, setupMinor, minimumMinor, ...terms } = card;
+      const { perMinuteMinor, setupMinor, minimumMinor, validFromUtc, ...terms } = card;
       const nowMs = this.clock.nowMs();
+      const validFromMs = validFromUtc === undefined ? nowMs : Date.parse(validFromUtc);
+      refuseBadValidFrom(validFromMs, nowMs);
       const amounts = { perMinuteMinor, setupMinor, minimumMinor, currency: station.currency };
       this.antennas.addPrice(tx, {
         id: newId(),
         antennaId: id,
         ...amounts,
         terms,
-        validFromMs: nowMs,
+        validFromMs,
         createdMs: nowMs,
       });
     });
@@ -148,7 +153,11 @@ export class AntennasService {
       const touches = this.antennas.contactsIn(tx, antennaId, fromMs, toMs);
       return {
         blackout: blackoutView(blackout),
-        touches: touches.map(({ aosMs, ...contact }) => ({ ...contact, aosUtc: new Date(aosMs).toISOString() })),
+        touches: touches.map(({ bookingId, number, aosMs }) => ({
+          bookingId,
+          number,
+          aosUtc: new Date(aosMs).toISOString(),
+        })),
       };
     });
   }

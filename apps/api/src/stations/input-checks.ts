@@ -31,6 +31,20 @@ export function refuseBadPrice(card: z.output<typeof PriceCardInput>, currency: 
   refuse(faults.map(({ field, sentence }) => ({ pointer: `/${field.replaceAll('.', '/')}`, detail: sentence })));
 }
 
+/** Cards are announced up to two years ahead. */
+const FURTHEST_CARD_MS = 731 * 86_400_000;
+
+/** Throws `bad-input` for a card that would hold from a time that has gone by, or from too far ahead. */
+export function refuseBadValidFrom(validFromMs: number, nowMs: number): void {
+  const detail =
+    validFromMs < nowMs
+      ? 'A price holds from now or from a time to come; what was sold before keeps its price.'
+      : validFromMs > nowMs + FURTHEST_CARD_MS
+        ? 'A price can be announced two years ahead at most.'
+        : null;
+  refuse(detail === null ? [] : [{ pointer: '/validFromUtc', detail }]);
+}
+
 function refuse(faults: readonly FieldError[]): void {
   const [first] = faults;
   if (first) throw new DomainError('bad-input', faults.map((fault) => fault.detail).join(' '), faults);

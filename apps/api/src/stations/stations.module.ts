@@ -13,6 +13,6 @@ import { StationsService } from './stations.service.js';
   imports: [MailModule],
   controllers: [StationsController, AntennasController],
   providers: [AntennaCatalogue, AntennasRepository, AntennasService, StationsRepository, StationsService],
-  exports: [AntennaCatalogue],
+  exports: [AntennaCatalogue, AntennasRepository],
 })
 export class StationsModule {}

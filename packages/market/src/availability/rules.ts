@@ -32,6 +32,8 @@ export interface AvailabilityRule {
   readonly durationMin?: number | undefined;
   /** `HH:mm` on the station's clock, `24:00` allowed; not later than the start means the next day. */
   readonly endLocal?: string | undefined;
+  /** `YYYY-MM-DDTHH:mm` on the same clock: starts that are left out (EXDATE, RFC 5545 3.8.5.1). */
+  readonly exceptLocal?: readonly string[] | undefined;
 }
 
 /** The longest that one instance may last; longer openings are written as rules that touch. */
@@ -79,7 +81,11 @@ function nearStart(options: Partial<Options>, fromWallMs: number): Partial<Optio
 /** Starts of instances, on the station's clock, in `[fromWallMs, toWallMs)`. */
 export function recurrenceStarts(rule: AvailabilityRule, fromWallMs: number, toWallMs: number): number[] {
   const recurrence = new RRule(nearStart(parseRecurrence(rule.rrule, rule.startLocal, rule.timeZone), fromWallMs));
-  return recurrence.between(new Date(fromWallMs), new Date(toWallMs - 1), true).map((date) => date.getTime());
+  const starts = recurrence.between(new Date(fromWallMs), new Date(toWallMs - 1), true).map((date) => date.getTime());
+  if (rule.exceptLocal === undefined || rule.exceptLocal.length === 0) return starts;
+  // A count counts what is left out too, so the exceptions come off last.
+  const except = new Set(rule.exceptLocal.map(parseLocalDateTime));
+  return starts.filter((start) => !except.has(start));
 }
 
 /** The instant at which an instance that starts at this reading ends. */

@@ -56,6 +56,7 @@ function ruleFaults(rule: AvailabilityRule): MarketFault[] {
       `The length is ${durationMin} min; it must be a whole number from 1 to ${LONGEST_INSTANCE_MIN}.`,
     );
   }
+  for (const each of rule.exceptLocal ?? []) attempt('exceptLocal', () => parseLocalDateTime(each));
   if (endLocal !== undefined) attempt('endLocal', () => parseTimeOfDay(endLocal));
   if (faults.length > 0) return faults;
   attempt('rrule', () => parseRecurrence(rule.rrule, rule.startLocal, rule.timeZone));

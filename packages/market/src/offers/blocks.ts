@@ -74,8 +74,8 @@ export function commonBlocks(pass: OfferPass, input: OffersInput, times: Prepare
     ...(pass.limits ?? []).map(
       (limit): Block => ({
         ...limit,
-        code: 'mask',
-        word: 'mask',
+        code: 'mount',
+        word: 'mount',
         say: () => ({ sentence: limit.sentence, remedy: 'Take the part of the pass that the antenna can follow.' }),
       }),
     ),

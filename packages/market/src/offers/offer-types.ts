@@ -9,7 +9,7 @@ export const LOST_CODES = [
   'incompatible',
   'elements',
   'clearance',
-  'mask',
+  'mount',
   'too late',
   'notice',
   'horizon',
@@ -37,7 +37,7 @@ export interface OfferPass {
   readonly azimuthDeg: readonly [aos: number, highest: number, los: number];
   /** Azimuth at any instant of the pass; without it, straight between AOS, highest point and LOS the shorter way round. */
   readonly azimuthAtDeg?: ((timeMs: number) => number) | undefined;
-  /** Stretches the geometry takes away (below the lowest elevation for this use, travel limits, keyhole), in words. */
+  /** Stretches the geometry takes away (what the mount cannot follow: end stops, keyhole), in words. */
   readonly limits?: readonly PassLimit[] | undefined;
 }
 

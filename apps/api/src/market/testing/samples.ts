@@ -42,6 +42,7 @@ export function sampleAntenna(changes: Partial<AntennaInput> = {}): AntennaInput
     partsAllowed: true,
     timeZone: 'Europe/Oslo',
     weekly: [{ days: [1, 2, 3, 4, 5, 6, 7], fromLocal: '00:00', toLocal: '24:00' }],
+    openings: [],
     blackouts: [],
     price: {
       currency: 'EUR',
