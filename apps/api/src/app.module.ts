@@ -3,6 +3,7 @@ import { type DynamicModule, Module } from '@nestjs/common';
 import { AccountsModule } from './accounts/accounts.module.js';
 import { BookingsModule } from './bookings/bookings.module.js';
 import { DriftModule } from './drift/drift.module.js';
+import { FilesModule } from './files/files.module.js';
 import { InvoicesModule } from './invoices/invoices.module.js';
 import { JobsModule } from './jobs/jobs.module.js';
 import { LedgerModule } from './ledger/ledger.module.js';
@@ -18,6 +19,7 @@ import { PlatformModule } from './platform/platform.module.js';
 import { ReconciliationModule } from './reconciliation/reconciliation.module.js';
 import { RunSheetModule } from './run-sheet/run-sheet.module.js';
 import { SpacecraftModule } from './spacecraft/spacecraft.module.js';
+import { AvailabilityModule } from './availability/availability.module.js';
 import { StationsModule } from './stations/stations.module.js';
 import { SystemModule } from './system/system.module.js';
 
@@ -31,9 +33,11 @@ export class AppModule {
         JobsModule,
         OutboxModule,
         MailModule,
+        FilesModule,
         AccountsModule,
         SpacecraftModule,
         StationsModule,
+        AvailabilityModule,
         BookingsModule,
         LiveModule,
         RunSheetModule,
