@@ -18,8 +18,10 @@ export interface Targets {
   readonly booking: string;
   readonly invoice: string;
   readonly visit: string;
+  readonly file: string;
   readonly member: string;
   readonly organisation: string;
+  readonly dispute: string;
 }
 
 /** Targets that do not exist. */
@@ -31,14 +33,24 @@ export const nowhere = (): Targets => ({
   booking: randomUUID(),
   invoice: randomUUID(),
   visit: randomUUID(),
+  file: randomUUID(),
   member: randomUUID(),
   organisation: randomUUID(),
+  dispute: randomUUID(),
 });
 
 const ADDRESS = { line1: 'Quay 1', postalCode: '1', city: 'Porto Novo', country: 'DE' };
 const SPACECRAFT = { name: 'Curlew 9', shortName: 'C9' };
 const FROM = '2026-12-20T10:00:00Z';
 const TO = '2026-12-20T10:08:00Z';
+const OPENING = {
+  startLocal: '2026-12-20T10:00',
+  durationMin: 60,
+  endLocal: null,
+  timeZone: 'Europe/Oslo',
+  rrule: 'FREQ=WEEKLY',
+};
+const RULING = { outcome: 'none', refundBasisPoints: 0, borneBy: 'owner' };
 const REPORT = {
   outcome: 'good',
   cause: 'none',
@@ -57,6 +69,8 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
   const antenna = { id: to.antenna };
   const booking = { id: to.booking };
   return {
+    uploadFile: {},
+    downloadFile: { params: { id: to.file } },
     signUp: {
       body: {
         name: 'Kim',
@@ -101,6 +115,17 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     setPrice: { params: antenna, body: PRICE },
     addBlackout: { params: antenna, body: { fromUtc: FROM, toUtc: TO, reason: 'weather' } },
     removeBlackout: { params: { id: to.blackout } },
+    antennaCalendar: { params: antenna },
+    addOpening: { params: antenna, body: OPENING },
+    addBlackouts: { body: { antennaIds: [to.antenna], entries: [{ ...OPENING, reason: 'weather' }] } },
+    removeCalendarEntries: { body: { ids: [to.blackout] } },
+    readCalendarFile: { body: { text: 'BEGIN:VCALENDAR', timeZone: 'Europe/Oslo' } },
+    previewAntennaChange: { params: antenna, body: { hours: ALWAYS } },
+    priceExample: {
+      params: antenna,
+      body: { price: PRICE, contact: { lengthS: 480, day: 2, startLocal: '18:10', boughtHoursBefore: 24 } },
+    },
+    listPriceCards: { params: antenna },
     putOnSale: { params: antenna, body: { onSale: true } },
     searchProgress: { params: { searchId: randomUUID() } },
     searchPasses: { body: { spacecraftIds: [to.spacecraft], fromUtc: FROM, toUtc: TO } },
@@ -117,6 +142,7 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     declineBooking: { params: booking, body: { reason: 'no' } },
     reportContact: { params: booking, body: REPORT },
     contactEvents: { params: booking },
+    contactOrbit: { params: booking },
     contactLive: { params: booking },
     reportLive: { params: booking, body: { kind: 'acquired' } },
     enterDish: { params: antenna, body: { name: 'Kim' } },
@@ -135,6 +161,16 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     importMovements: { body: { text: 'id,type,amount,fee,net,currency,created\n' } },
     resolveMovement: { params: { id: 'txn_nowhere' }, body: { action: 'suspense', reason: 'Nobody knows it.' } },
     closeMonth: { params: { month: '2020-01' } },
+    listDisputes: {},
+    getDispute: { params: { id: to.dispute } },
+    openDispute: { params: booking, body: { reason: 'other', text: 'Nothing came down.' } },
+    stateInDispute: { params: { id: to.dispute }, body: { text: 'So it was.' } },
+    askInDispute: { params: { id: to.dispute }, body: { side: 'owner', text: 'Why?' } },
+    assembleEvidence: { params: { id: to.dispute } },
+    previewDecision: { params: { id: to.dispute }, body: RULING },
+    decideDispute: { params: { id: to.dispute }, body: { terms: RULING, text: 'So.', expectedRefundMinor: 0 } },
+    appealDecision: { params: { id: to.dispute }, body: { text: 'No.' } },
+    precedents: {},
     listAccounts: {},
     getAccount: { params: { id: to.organisation } },
     suspendAccount: { params: { id: to.organisation }, body: { reason: 'look' } },

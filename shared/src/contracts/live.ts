@@ -1,6 +1,6 @@
 /** A contact as it happens: what the station reports, and the streams by which the other side sees it at once. */
 import { z } from 'zod';
-import { Id, IdParams, UtcTime } from '../primitives.js';
+import { Id, IdParams, LatitudeDeg, LongitudeDeg, UtcTime } from '../primitives.js';
 import { defineRoute } from '../route.js';
 
 /** `diary` is a line of the booking's own diary; the others are the station's live reports. */
@@ -15,6 +15,16 @@ export const ContactEvent = z.object({
   by: z.string().describe('a person, or Skyberth'),
 });
 export type ContactEvent = z.infer<typeof ContactEvent>;
+
+/** What a page needs to work out by itself where the spacecraft stands over the antenna. */
+export const ContactOrbit = z.object({
+  site: z.object({ latitudeDeg: LatitudeDeg, longitudeDeg: LongitudeDeg, altitudeM: z.number() }),
+  omm: z
+    .string()
+    .nullable()
+    .describe('the elements in force as CCSDS OMM; null where the pass comes from an ephemeris'),
+});
+export type ContactOrbit = z.infer<typeof ContactOrbit>;
 
 /** Sent every few seconds, so that a line that is down is noticed on both ends. */
 export const LiveBeat = z.object({ serverTimeUtc: UtcTime });
@@ -60,8 +70,26 @@ export const liveRoutes = {
     access: 'bookings.read',
     data: 'parties',
     params: IdParams,
-    response: z.object({ items: z.array(ContactEvent) }),
+    response: z.object({
+      items: z.array(ContactEvent),
+      dishStop: z
+        .string()
+        .nullable()
+        .describe('why the contact cannot begin now: people at the dish, or it is kept still'),
+    }),
     errors: ['not-found'],
+  }),
+  contactOrbit: defineRoute({
+    name: 'contactOrbit',
+    method: 'GET',
+    path: '/api/contacts/:id/orbit',
+    summary: 'Site and elements of a contact, for the live position on the page',
+    tag,
+    access: 'bookings.read',
+    data: 'parties',
+    params: IdParams,
+    response: ContactOrbit,
+    errors: ['not-found', 'elements-unusable'],
   }),
   contactLive: defineRoute({
     name: 'contactLive',

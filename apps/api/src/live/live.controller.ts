@@ -1,6 +1,6 @@
 /** Translates between HTTP and live reports. */
 import { Controller, Req, Res } from '@nestjs/common';
-import { type ContactEvent, type ResponseOf, routes } from '@skyberth/shared';
+import { type ContactEvent, type ContactOrbit, type ResponseOf, routes } from '@skyberth/shared';
 import type { Request, Response } from 'express';
 import { BookingRepository } from '../bookings/bookings.repository.js';
 import { type HandlerInput, Handles, Input } from '../platform/contract.js';
@@ -17,7 +17,12 @@ export class LiveController {
 
   @Handles(routes.contactEvents)
   events(@Input() input: HandlerInput<typeof routes.contactEvents>): ResponseOf<typeof routes.contactEvents> {
-    return { items: this.live.events(input.caller, input.params.id) };
+    return this.live.events(input.caller, input.params.id);
+  }
+
+  @Handles(routes.contactOrbit)
+  orbit(@Input() input: HandlerInput<typeof routes.contactOrbit>): Promise<ContactOrbit> {
+    return this.live.orbit(input.caller, input.params.id);
   }
 
   @Handles(routes.contactLive)

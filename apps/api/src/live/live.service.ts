@@ -1,10 +1,12 @@
 /** What a station reports while a contact runs. */
 import { Inject, Injectable } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
-import type { ContactEvent, LiveReport, Principal } from '@skyberth/shared';
+import type { ContactEvent, ContactOrbit, LiveReport, Principal, ResponseOf, routes } from '@skyberth/shared';
 import { BookingTransitions } from '../bookings/booking-transitions.js';
 import { utcText } from '../bookings/booking-words.js';
 import { BookingRepository, type BookingRow } from '../bookings/bookings.repository.js';
+import { ContactFiles } from '../market/contact-files.js';
+import { MarketInputs } from '../market/market-inputs.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
 import { DomainError } from '../platform/domain-error.js';
@@ -28,13 +30,33 @@ export class LiveService {
     private readonly dishes: DishRepository,
     private readonly repository: LiveRepository,
     private readonly hub: LiveHub,
+    private readonly inputs: MarketInputs,
+    private readonly files: ContactFiles,
   ) {}
 
   /** Throws `not-found` for a contact of others. */
-  events(caller: Principal, bookingId: string): ContactEvent[] {
-    this.bookings.forViewer(caller, bookingId);
+  events(caller: Principal, bookingId: string): ResponseOf<typeof routes.contactEvents> {
+    const booking = this.bookings.forViewer(caller, bookingId);
     const listening = { viewer: caller, bookingId, stationId: null };
-    return this.repository.missed(listening, 0, 2 * MOST_REPORTS).map(contactEventView);
+    const stop = booking.state === 'confirmed' ? this.dishes.stopOf(this.db, booking.antennaId) : null;
+    const isStation = caller.organisationId === booking.ownerId;
+    return {
+      items: this.repository.missed(listening, 0, 2 * MOST_REPORTS).map(contactEventView),
+      // Who is at the dish is the station's business; the other side learns that it is not clear.
+      dishStop:
+        stop && (isStation ? stopWords(stop) : 'The dish is not clear yet. The station releases it before AOS.'),
+    };
+  }
+
+  /** Throws `not-found` for a contact of others, and `elements-unusable`. */
+  async orbit(caller: Principal, bookingId: string): Promise<ContactOrbit> {
+    const booking = this.bookings.forViewer(caller, bookingId);
+    const period = { fromMs: booking.aosMs, toMs: booking.losMs };
+    const { latitudeDeg, longitudeDeg, altitudeM } = this.inputs.antenna(booking.antennaId, period).site;
+    const [craft] = this.inputs.craft(booking.operatorId, [booking.spacecraftId], period);
+    const isOwnOrbit = craft?.spans.some((span) => span.ephemerides.length > 0) ?? false;
+    const omm = isOwnOrbit ? null : (await this.files.make('elements.omm', booking)).body;
+    return { site: { latitudeDeg, longitudeDeg, altitudeM }, omm };
   }
 
   /**
