@@ -25,6 +25,7 @@ export const ERROR_CODES = {
   'key-reused': { status: 409, title: 'The idempotency key was used for something else' },
   'in-progress': { status: 409, title: 'The same request is still being carried out' },
   'too-large': { status: 413, title: 'Too large' },
+  'file-refused': { status: 422, title: 'This kind of file is not taken' },
   'not-for-sale': { status: 422, title: 'That time is not for sale' },
   'elements-unusable': { status: 422, title: 'The orbital elements cannot be used' },
   'elements-too-old': { status: 422, title: 'The orbital elements are too old' },

@@ -7,6 +7,7 @@ export * from './contracts/bookings.js';
 export * from './contracts/disputes.js';
 export * from './contracts/drift.js';
 export * from './contracts/ephemerides.js';
+export * from './contracts/files.js';
 export * from './contracts/invoices.js';
 export * from './contracts/ledger.js';
 export * from './contracts/live.js';

@@ -77,7 +77,7 @@ export function openApiDocument(routes: Readonly<Record<string, RouteContract>>,
     if (route.body) {
       operation['requestBody'] = {
         required: true,
-        content: { 'application/json': { schema: schemaOf(route.body, 'input') } },
+        content: { [route.consumes ?? 'application/json']: { schema: schemaOf(route.body, 'input') } },
       };
     }
     paths[path] = { ...paths[path], [route.method.toLowerCase()]: operation };

@@ -33,6 +33,7 @@ export const PERMISSIONS = {
   'stations.read': { owner: ALL, staff: ['admin'] },
   'stations.write': { owner: WORKERS },
   'stations.approve': { staff: ['admin'] },
+  'files.upload': { operator: WORKERS, owner: WORKERS, staff: ['finance', 'admin'] },
   'clearances.read': { operator: ALL, owner: ALL, staff: ['admin'] },
   'clearances.request': { operator: WORKERS },
   'clearances.grant': { owner: WORKERS },

@@ -29,6 +29,8 @@ export interface RouteContract {
   readonly params?: z.ZodObject | undefined;
   readonly query?: z.ZodObject | undefined;
   readonly body?: z.ZodType | undefined;
+  /** Media type of a body that is bytes and no JSON; its schema is then `Bytes`. */
+  readonly consumes?: string | undefined;
   /** JSON answer; absent where `produces` names another media type. */
   readonly response?: z.ZodType | undefined;
   readonly produces?: string | undefined;

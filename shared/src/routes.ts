@@ -5,6 +5,7 @@ import { bookingRoutes } from './contracts/bookings.js';
 import { disputeRoutes } from './contracts/disputes.js';
 import { driftRoutes } from './contracts/drift.js';
 import { ephemerisRoutes } from './contracts/ephemerides.js';
+import { fileRoutes } from './contracts/files.js';
 import { invoiceRoutes } from './contracts/invoices.js';
 import { ledgerRoutes } from './contracts/ledger.js';
 import { liveRoutes } from './contracts/live.js';
@@ -28,6 +29,7 @@ export const routes = {
   ...runSheetRoutes,
   ...driftRoutes,
   ...disputeRoutes,
+  ...fileRoutes,
   ...invoiceRoutes,
   ...ledgerRoutes,
   ...reconciliationRoutes,

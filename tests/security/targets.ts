@@ -27,6 +27,8 @@ export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
     aosMs: clock.nowMs() + 100_000_000,
   });
   const visit = await must(call(routes.enterDish, { params: { id: antenna.id }, body: { name: 'Sam' }, as: owner }));
+  const paper = { query: { name: 'licence.pdf' }, body: Buffer.from('%PDF-1.7 paper'), as: operator };
+  const file = await must(call(routes.uploadFile, paper));
   return {
     spacecraft,
     station: station.id,
@@ -35,6 +37,7 @@ export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
     booking,
     invoice,
     visit: visit.id,
+    file: file.id,
     member: operator.personId,
     organisation: operator.organisationId,
   };

@@ -5,6 +5,7 @@ import type { IncomingMessage } from 'node:http';
 import { join } from 'node:path';
 import { NestFactory } from '@nestjs/core';
 import type { NestExpressApplication } from '@nestjs/platform-express';
+import { FILE_LIMITS, routes } from '@skyberth/shared';
 import cookieParser from 'cookie-parser';
 import type { NextFunction, Request, Response } from 'express';
 import helmet from 'helmet';
@@ -33,6 +34,7 @@ export async function createApp(config: Config, options: AppOptions = {}): Promi
   );
   app.useBodyParser('json', { limit: EPHEMERIS_LIMIT, type: holdsEphemeris });
   app.useBodyParser('json', { limit: BODY_LIMIT });
+  app.useBodyParser('raw', { limit: FILE_LIMITS.bytes, type: isUpload });
   app.use(
     helmet({
       contentSecurityPolicy: { directives: contentPolicy() },
@@ -51,6 +53,11 @@ export async function createApp(config: Config, options: AppOptions = {}): Promi
 function holdsEphemeris({ url = '', headers }: IncomingMessage): boolean {
   const isJson = (headers['content-type'] ?? '').startsWith('application/json');
   return isJson && /^\/api\/spacecraft\/[^/?]+\/ephemerides(\?|$)/.test(url);
+}
+
+/** Bytes are taken on the one route that stores files. */
+function isUpload({ url = '', headers }: IncomingMessage): boolean {
+  return headers['content-type'] === routes.uploadFile.consumes && url.split('?')[0] === routes.uploadFile.path;
 }
 
 /** Everything comes from our own origin; Mantine sets styles on elements, hence inline styles. */

@@ -93,12 +93,14 @@ export class Client {
     const response = await fetch(`${this.url}${path}${query.size > 0 ? `?${query}` : ''}`, {
       method: route.method,
       headers: {
-        ...(input.body === undefined ? {} : { 'Content-Type': 'application/json' }),
+        ...(input.body === undefined ? {} : { 'Content-Type': route.consumes ?? 'application/json' }),
         ...(typeof key === 'string' ? { [IDEMPOTENCY_HEADER]: key } : {}),
         ...(input.as ? { Cookie: input.as.jar.header(path) } : {}),
         ...input.headers,
       },
-      ...(input.body === undefined ? {} : { body: JSON.stringify(input.body) }),
+      ...(input.body === undefined
+        ? {}
+        : { body: route.consumes ? (input.body as Uint8Array<ArrayBuffer>) : JSON.stringify(input.body) }),
     });
     input.as?.jar.take(response);
     return response;

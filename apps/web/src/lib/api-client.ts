@@ -61,14 +61,16 @@ export function addressOf<C extends RouteContract>(route: C, input: Pick<LooseIn
 
 async function send(route: RouteContract, input: LooseInput): Promise<Response> {
   const headers: Record<string, string> = { Accept: 'application/json, application/problem+json' };
-  if (input.body !== undefined) headers['Content-Type'] = 'application/json';
+  if (input.body !== undefined) headers['Content-Type'] = route.consumes ?? 'application/json';
   if (needsIdempotencyKey(route)) headers[IDEMPOTENCY_HEADER] = input.idempotencyKey ?? newIdempotencyKey();
   try {
     return await fetch(addressOf(route, input), {
       method: route.method,
       headers,
       credentials: 'same-origin',
-      ...(input.body !== undefined ? { body: JSON.stringify(input.body) } : {}),
+      ...(input.body !== undefined
+        ? { body: route.consumes ? (input.body as Uint8Array<ArrayBuffer>) : JSON.stringify(input.body) }
+        : {}),
       ...(input.signal ? { signal: input.signal } : {}),
     });
   } catch (error) {
