@@ -202,6 +202,8 @@ export const PassDetail = z.object({
     .object({ id: Id, source: z.string(), startUtc: UtcTime, stopUtc: UtcTime, addedUtc: UtcTime })
     .nullable(),
   /** In force beside it, too. */
+  /** What of the stretch the mount cannot follow, and why; the rest it can. */
+  mountGaps: z.array(Interval.extend({ code: z.enum(['keyhole', 'travel', 'unwind']), sentence: z.string() })),
   elements: z.object({
     id: Id,
     epochUtc: UtcTime,

@@ -124,7 +124,8 @@ export class MarketInputs {
 
 /** Only what the engine uses: everything here is copied to a thread. */
 function engineFields(antenna: SaleAntenna): Omit<AntennaInput, 'busy' | 'bought'> {
-  const { id, version, name, site, mask, mount, tiltDeg, bands, timeZone, weekly, openings, blackouts, price } = antenna;
+  const { id, version, name, site, mask, mount, tiltDeg, bands, timeZone, weekly, openings, blackouts, price } =
+    antenna;
   const { slewAzimuthDegPerS, slewElevationDegPerS, lowestReceiveDeg, lowestTransmitDeg, setupS, teardownS } = antenna;
   const { beams, minNoticeMin, horizonDays, minContactS, maxContactS, partsAllowed } = antenna;
   return {

@@ -81,7 +81,7 @@ const ephemerisView = ({ id, source, startMs, stopMs, addedMs }: EphemerisInput)
 export function detailView(answer: PassAnswer, need: Need): Omit<PassDetail, 'reasons' | 'quote'> {
   const { outcome, sale, craft, span } = answer;
   if (outcome.detail === null) throw new Error('A pass in full must come with its track.');
-  const { track, sun, illumination, links, untrackable } = outcome.detail;
+  const { track, sun, illumination, links } = outcome.detail;
   const { freshness, ageH, timingErrorS } = freshnessFor(answer);
   const used = span.ephemerides.find((each) => each.id === outcome.ephemerisId);
   return {
@@ -101,6 +101,7 @@ export function detailView(answer: PassAnswer, need: Need): Omit<PassDetail, 're
     sun,
     illumination,
     links,
+    mountGaps: outcome.gaps.map((gap) => ({ ...utcInterval(gap), code: gap.code, sentence: gap.sentence })),
     source: outcome.source,
     ephemeris: used === undefined ? null : ephemerisView(used),
     elements: { id: span.elementSetId, epochUtc: utc(span.elementSet.epochMs), ageH, timingErrorS, freshness },
@@ -109,7 +110,7 @@ export function detailView(answer: PassAnswer, need: Need): Omit<PassDetail, 're
       sun,
       radiosOnFile: radiosFor(craft, need, []).length > 0,
       stale: freshness === 'stale',
-      untrackable,
+      untrackable: outcome.gaps.map((gap) => gap.sentence),
     }),
     acceptance: sale.acceptance,
   };

@@ -92,7 +92,7 @@ export class OfferService {
         sun: null,
         radiosOnFile: radiosFor(craft, request.need, []).length > 0,
         stale: freshnessFor(answer).freshness === 'stale',
-        untrackable: [],
+        untrackable: outcome.gaps.map((gap) => gap.sentence),
       }),
       reasons,
     };

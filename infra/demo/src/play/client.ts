@@ -96,6 +96,7 @@ async function signInAgain(url: string, who: Actor): Promise<void> {
 }
 
 async function answerOf(response: Response, route: RouteContract): Promise<unknown> {
+  if (response.ok && route.produces !== undefined) return response.text();
   const answer: unknown = await response.json();
   if (response.ok) return answer;
   const problem = answer as { code: string; detail: string; errors?: unknown };

@@ -3,6 +3,7 @@ import { OWNERS } from '../cast/owners.js';
 import { Chance } from './chance.js';
 import { PASSWORD } from './client.js';
 import { Season } from './days.js';
+import { giveEphemeris } from './own-ephemeris.js';
 import { settleIn } from './settle-in.js';
 import { STAFF, Stage } from './stage.js';
 import { buyForToday, leaveThingsOpen } from './today.js';
@@ -40,6 +41,7 @@ export async function loadDemo({ environment, days, say }: DemoSettings): Promis
     await buyForToday(stage, company, season, nowMs);
     await season.flyUntil(nowMs - 45 * 60_000);
     await stage.returnToPresent();
+    await giveEphemeris(stage, company);
     await leaveThingsOpen(stage, company, season);
   } finally {
     await stage.close();

@@ -3,8 +3,7 @@
  * keyhole, where an axis would have to turn faster than it can. The gap reckoned is the shortest one that a control unit
  * can manage when it knows the pass beforehand: it may run ahead of the spacecraft and let it pass, then take it up again.
  */
-import type { LookAngles } from '../types.js';
-import { axisAngles, axisMoveS, firstAxisTurns, inTravel, type Mount } from './mount.js';
+import { type AzEl, axisAngles, axisMoveS, firstAxisTurns, inTravel, type Mount } from './mount.js';
 
 export type MountGapCode = 'keyhole' | 'travel' | 'unwind';
 
@@ -20,6 +19,9 @@ export interface MountCoverage {
   readonly intervals: readonly { readonly fromMs: number; readonly toMs: number }[];
   readonly gaps: readonly MountGap[];
 }
+
+/** Where the spacecraft stands at an instant; look angles are. */
+export type TrackPoint = AzEl & { readonly timeMs: number };
 
 /** One sample of the track as the axes see it; `first` runs on through whole turns. */
 interface Sample {
@@ -40,7 +42,7 @@ interface Lost {
  * Judges a track whose samples lie close enough to see the axes' rates: one second is ample, ten are too few near the
  * zenith. Edges of gaps fall on samples.
  */
-export function mountCoverage(track: readonly LookAngles[], mount: Mount): MountCoverage {
+export function mountCoverage(track: readonly TrackPoint[], mount: Mount): MountCoverage {
   if (track.length < 2) return { intervals: [], gaps: [] };
   const samples = unwrap(track, mount);
   const lost = [...beyondStops(samples, mount), ...unwinding(samples, mount), ...tooFast(samples, mount)];
@@ -53,7 +55,7 @@ export function mountCoverage(track: readonly LookAngles[], mount: Mount): Mount
   return { intervals: between(gaps, samples[0]!.timeMs, samples.at(-1)!.timeMs), gaps };
 }
 
-function unwrap(track: readonly LookAngles[], mount: Mount): Sample[] {
+function unwrap(track: readonly TrackPoint[], mount: Mount): Sample[] {
   let turns = 0;
   let before: number | undefined;
   return track.map((look) => {

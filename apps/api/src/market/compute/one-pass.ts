@@ -1,7 +1,9 @@
 /** One pass for one caller: recomputed from elements, never taken from what the caller says it is. */
 import { type Offer, type PassOffers } from '@skyberth/market';
+import type { MountGap } from '@skyberth/orbit';
 import type { Reason } from '@skyberth/shared';
 import type { PassJob, PassOutcome } from '../workers/job-types.js';
+import { gapsNotSold, gapsWithin } from './mount-gaps.js';
 import { fitOf } from './objections.js';
 import { spanOf } from './pass-text.js';
 import { trackOf } from './pass-track.js';
@@ -39,13 +41,15 @@ export function onePass(job: PassJob, tools: SearchTools): PassOutcome {
   const stay = meant(stays[0] ?? [], job);
   if (stay === null && fault !== null) return { kind: 'elements unusable', sentence: fault };
   if (stay === null) return { kind: 'no pass', reasons: [noPass(job)] };
-  if (job.booked) return answer(job, tools, stay, job, []);
+  const horizon = tools.horizons.of(antenna, fit.floorDeg);
+  const gaps = tools.gaps.of({ stay, span: spanOf(craft, stay), antenna, horizon });
+  if (job.booked) return answer(job, tools, { stay, gaps }, job, []);
   const open = tools.hours.of(antenna, stay.aosMs, stay.losMs);
-  const [offers] = offersOf({ craft, antenna, fit, open, stays: [stay], nowMs });
+  const [offers] = offersOf({ craft, antenna, fit, open, stays: [stay], limits: [gapsNotSold(stay, gaps)], nowMs });
   if (offers === undefined) throw new Error('One pass must have one answer.');
   const stretch = sold(offers, job);
-  if (stretch !== null) return answer(job, tools, stay, stretch, []);
-  return answer(job, tools, stay, inside(stay, job), refusal(offers, job));
+  if (stretch !== null) return answer(job, tools, { stay, gaps }, stretch, []);
+  return answer(job, tools, { stay, gaps }, inside(stay, job), refusal(offers, job));
 }
 
 /** The stay that shares most time with the request. */
@@ -125,7 +129,7 @@ function distinct(reasons: readonly Reason[]): Reason[] {
 function answer(
   job: PassJob,
   tools: SearchTools,
-  stay: Stay,
+  { stay, gaps }: { stay: Stay; gaps: readonly MountGap[] },
   stretch: Stretch,
   reasons: readonly Reason[],
 ): PassOutcome {
@@ -145,6 +149,7 @@ function answer(
     tcaMs: part.tcaMs,
     losMs: part.losMs,
     part: geometryOf(part),
+    gaps: gapsWithin(gaps, part),
     reasons,
     price: forSale ? priceOf(antenna, { fromMs: part.aosMs, toMs: part.losMs }, job.nowMs) : null,
     detail: job.withTrack ? trackOf({ craft, antenna, source, part, need: job.need, bands: job.bands }) : null,

@@ -11,7 +11,11 @@ export class OpeningHours {
   private readonly kept = new WeightedCache<readonly Interval[]>(MAX_KEPT);
 
   /** Open time that covers `[fromMs, toMs)` at least; merged and sorted. */
-  of(antenna: Pick<AntennaInput, 'weekly' | 'openings' | 'timeZone'>, fromMs: number, toMs: number): readonly Interval[] {
+  of(
+    antenna: Pick<AntennaInput, 'weekly' | 'openings' | 'timeZone'>,
+    fromMs: number,
+    toMs: number,
+  ): readonly Interval[] {
     const weekly = this.weekly(antenna, fromMs, toMs);
     return antenna.openings.length === 0 ? weekly : mergeIntervals([...weekly, ...antenna.openings]);
   }

@@ -163,6 +163,7 @@ function stayOf(columns: PassColumns, row: number, elementSetId: string): Stay {
     elementSetId,
     shape: null,
     answer: null,
+    gaps: null,
     joined: null,
     aosMs: Math.round(timeMs[3 * row] ?? 0),
     tcaMs: Math.round(timeMs[3 * row + 1] ?? 0),

@@ -2,6 +2,7 @@
 import type { EngineJob, OutcomeOf } from '../workers/job-types.js';
 import { flightFile } from './flight-files.js';
 import { Horizons } from './horizons.js';
+import { MountGaps } from './mount-gaps.js';
 import { nightsOf } from './nights.js';
 import { onePass } from './one-pass.js';
 import { OpeningHours } from './opening-hours.js';
@@ -22,6 +23,7 @@ export class PassDesk {
       tables,
       horizons,
       blocks: new PassBlocks(horizons, tables),
+      gaps: new MountGaps(tables),
       hours: new OpeningHours(),
       names: new QuestionNames(),
       pairs: new PairAnswers(),

@@ -7,7 +7,6 @@ import {
   lightIntervals,
   linkAlongPass,
   lookAngles,
-  mountCoverage,
   type Polarisation,
   sunDirection,
   sunInterference,
@@ -17,7 +16,6 @@ import {
 } from '@skyberth/orbit';
 import type { AntennaBand, Need, PassDetail, Radio } from '@skyberth/shared';
 import type { AntennaInput, CraftInput, PassTrack } from '../workers/job-types.js';
-import { mountOf } from './mounts.js';
 import { radiosFor, serving } from './objections.js';
 import type { Stay } from './stay.js';
 
@@ -25,8 +23,6 @@ import type { Stay } from './stay.js';
 const TRACK_STEPS = 160;
 /** Nearer than this to the Sun a receive chain may be damaged. Common practice, no source. */
 export const SUN_KEEP_OFF_DEG = 5;
-/** Passes that climb higher may outrun an azimuth drive; below it no mount on sale is outrun. */
-const STEEP_DEG = 60;
 
 type Link = PassDetail['links'][number];
 
@@ -62,7 +58,6 @@ export function trackOf(question: TrackQuestion): PassTrack {
     },
     illumination: lightPhrase(lightIntervals(source, part.aosMs, part.losMs)),
     links: radiosFor(craft, need, bands).map((radio) => linkOf(radio, antenna, looks, highest)),
-    untrackable: untrackable(question),
   };
 }
 
@@ -179,12 +174,4 @@ function uplink(
     marginDb: looks.map((look) => rounded(margin(look), 2)),
     note: 'EIRP of the station beyond what the spacecraft asks for at any range of its orbit.',
   };
-}
-
-/** Sentences about what the mount cannot follow. Only steep passes are looked at second by second. */
-function untrackable({ antenna, source, part }: TrackQuestion): string[] {
-  if (part.maxElevationDeg < STEEP_DEG && antenna.mount === 'az-el') return [];
-  const lengthS = (part.losMs - part.aosMs) / 1000;
-  const looks = looksAlong(source, antenna, part, Math.max(1, lengthS / 7_200) * 1000);
-  return mountCoverage(looks, mountOf(antenna)).gaps.map((gap) => gap.sentence);
 }

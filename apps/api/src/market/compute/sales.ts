@@ -1,5 +1,6 @@
 /** What of each pass is for sale to this caller, in the words of the wire. */
 import { type Offer, type OfferPass, type OffersInput, offersFor, type PassOffers } from '@skyberth/market';
+import type { MountGap } from '@skyberth/orbit';
 import type { FoundPass, Need, Reason } from '@skyberth/shared';
 import type { AntennaInput, BusyInput, CraftInput, Wish } from '../workers/job-types.js';
 import { turnTimeOf } from './mounts.js';
@@ -15,14 +16,16 @@ export interface SaleQuestion {
   readonly fit: Fit;
   readonly open: OffersInput['open'];
   readonly stays: readonly Stay[];
+  /** What the mount cannot follow and is not sold, by the places of the stays. */
+  readonly limits: readonly (readonly MountGap[])[];
   readonly nowMs: number;
 }
 
 /** Everything that can be sold of each stay, and why the rest cannot; in the order of the stays. */
-export function offersOf({ craft, antenna, fit, open, stays, nowMs }: SaleQuestion): PassOffers[] {
+export function offersOf({ craft, antenna, fit, open, stays, limits, nowMs }: SaleQuestion): PassOffers[] {
   return offersFor({
     antenna: { ...antenna, turnTimeS: turnTimeOf(antenna) },
-    passes: stays.map((stay, index): OfferPass => ({ ...stay, id: String(index) })),
+    passes: stays.map((stay, index): OfferPass => ({ ...stay, id: String(index), limits: limits[index] })),
     open,
     blackouts: antenna.blackouts,
     bookings: antenna.busy.map((busy) => ({ ...busy, mine: busy.own !== null })),

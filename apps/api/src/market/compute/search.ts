@@ -4,11 +4,12 @@ import { OrbitError } from '@skyberth/orbit';
 import type { AntennaInput, CraftInput, SearchJob, SearchOutcome } from '../workers/job-types.js';
 import type { Horizons } from './horizons.js';
 import type { WrittenText } from './json-writer.js';
+import { gapsNotSold, type MountGaps } from './mount-gaps.js';
 import { type Fit, fitOf } from './objections.js';
 import type { OpeningHours } from './opening-hours.js';
 import { type PairAnswer, type PairAnswers, spansName } from './pair-answers.js';
 import type { PassBlocks } from './pass-blocks.js';
-import { isForSale, type PassTexts } from './pass-text.js';
+import { isForSale, type PassTexts, spanOf } from './pass-text.js';
 import { Pulse, SearchStopped } from './pulse.js';
 import { type QuestionNames, sameAnswer } from './sale-validity.js';
 import { offersOf, type Sale, saleOf } from './sales.js';
@@ -19,6 +20,7 @@ import type { TrackTables } from './track-table.js';
 export interface SearchTools {
   readonly blocks: PassBlocks;
   readonly horizons: Horizons;
+  readonly gaps: MountGaps;
   readonly hours: OpeningHours;
   readonly names: QuestionNames;
   readonly pairs: PairAnswers;
@@ -136,7 +138,10 @@ function answerOf(
   const fresh = stays.filter((stay) => !isKnown(stay, name, nowMs));
   const open = tools.hours.of(antenna, fromMs, toMs);
   const horizon = tools.horizons.of(antenna, fit.floorDeg);
-  const question = { craft, antenna, fit, open, stays: fresh, nowMs, wish };
+  const limits = fresh.map((stay) =>
+    gapsNotSold(stay, tools.gaps.of({ stay, span: spanOf(craft, stay), antenna, horizon })),
+  );
+  const question = { craft, antenna, fit, open, stays: fresh, limits, nowMs, wish };
   const sales = offersOf(question).map((offers, place) => saleOf(fresh[place] as Stay, offers, question));
   const texts: WrittenText[] = [];
   let forSale = 0;

@@ -1,6 +1,6 @@
 /** A stay above the mask in whole milliseconds, as the market sells it. */
 import type { Interval } from '@skyberth/market';
-import type { AosHighestLos, Pass } from '@skyberth/orbit';
+import type { AosHighestLos, MountGap, Pass } from '@skyberth/orbit';
 import type { PassGeometry } from '@skyberth/shared';
 import type { WrittenText } from './json-writer.js';
 
@@ -11,6 +11,8 @@ export interface Stay extends Pass {
   shape: WrittenText | null;
   /** The whole pass as it was last sent, and for which question; null until then. */
   answer: SentAnswer | null;
+  /** What the mount cannot follow of it, once somebody has asked; null until then. */
+  gaps: readonly MountGap[] | null;
   /** What joining it with the next day's piece has made, so that the whole is remembered like any other stay. */
   joined: { readonly second: Stay; readonly whole: Stay } | null;
 }
@@ -79,6 +81,7 @@ function joinAnew(first: Stay, second: Stay): Stay {
     elementSetId: first.elementSetId,
     shape: null,
     answer: null,
+    gaps: null,
     joined: null,
     aosMs: first.aosMs,
     clippedStart: first.clippedStart,

@@ -31,6 +31,7 @@ export function stretchOf(question: {
     elementSetId: stay.elementSetId,
     shape: null,
     answer: null,
+    gaps: null,
     joined: null,
     aosMs: fromMs,
     tcaMs,

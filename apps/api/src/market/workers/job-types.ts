@@ -3,7 +3,7 @@
  * data: no functions, no classes. Times are UTC milliseconds.
  */
 import type { Interval, LadderStep, OfferBlackout, PriceCard, Quote as PriceQuote } from '@skyberth/market';
-import type { ElementSet, GeodeticSite, MaskPoint } from '@skyberth/orbit';
+import type { ElementSet, GeodeticSite, MaskPoint, MountGap } from '@skyberth/orbit';
 import type {
   AntennaBand,
   BookingState,
@@ -162,6 +162,8 @@ export type PassOutcome =
       readonly tcaMs: number;
       readonly losMs: number;
       readonly part: PassGeometry;
+      /** What of the stretch the mount cannot follow. */
+      readonly gaps: readonly MountGap[];
       /** Why it cannot be sold; empty where it can. */
       readonly reasons: readonly Reason[];
       /** Before VAT; null where nothing is for sale. */
@@ -172,9 +174,7 @@ export type PassOutcome =
   | { readonly kind: 'elements unusable'; readonly sentence: string };
 
 /** The part of `PassDetail` that is geometry and radio. */
-export type PassTrack = Pick<PassDetail, 'track' | 'sun' | 'illumination' | 'links'> & {
-  readonly untrackable: readonly string[];
-};
+export type PassTrack = Pick<PassDetail, 'track' | 'sun' | 'illumination' | 'links'>;
 
 export const CONTACT_FILES = ['pointing.csv', 'frequency.csv', 'ephemeris.oem', 'elements.omm'] as const;
 export type ContactFileName = (typeof CONTACT_FILES)[number];

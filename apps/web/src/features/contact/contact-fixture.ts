@@ -111,6 +111,7 @@ export function detail(marginDb: readonly number[] = [3, 16, 8]): PassDetail {
     ],
     source: 'element set',
     ephemeris: null,
+    mountGaps: [],
     elements: { id: 'e', epochUtc: UTC(0), ageH: 9, timingErrorS: 0.4, freshness: 'fresh' },
     cautions: [],
     reasons: [],

@@ -6,7 +6,7 @@ import { formatBytes, formatDegrees, formatDuration, formatNumber } from '../../
 import { isNearSun, sunText } from '../../ui/sun-text.js';
 import { Figure, Figures } from '../../ui/values.js';
 import classes from './find-time.module.css';
-import { ageWords, dopplerWords, marginOf, spanWords } from './pass-words.js';
+import { ageWords, dopplerWords, followedMs, gapWords, marginOf, spanWords } from './pass-words.js';
 
 const BITS_PER_BYTE = 8;
 
@@ -67,6 +67,9 @@ export function PassFigures({ detail }: { readonly detail: PassDetail }) {
           tone={elements.freshness === 'stale' ? 'bad' : 'plain'}
           {...(elements.freshness === 'fresh' ? {} : { note: elements.freshness })}
         />
+        {detail.mountGaps.length > 0 && (
+          <Figure label="Mount follows" value={formatDuration(followedMs(detail))} note={gapWords(detail)} />
+        )}
         <Figure
           label="Sun, at its closest"
           value={sunText(detail.sun)}

@@ -1,10 +1,36 @@
 import { describe, expect, it } from 'vitest';
-import { dopplerWords, nearTime, refundNowWords, refundSteps, spanWords, standing } from './pass-words.js';
+import {
+  dopplerWords,
+  followedMs,
+  gapWords,
+  nearTime,
+  refundNowWords,
+  refundSteps,
+  spanWords,
+  standing,
+} from './pass-words.js';
 
 const NOW = Date.UTC(2026, 11, 1, 14, 5, 9);
 const plain = (text: string | null) => text?.replace(/[\u00a0\u202f]/g, ' ');
 
 describe('words of a pass', () => {
+  it('says what the mount can follow of it, and what is lost when', () => {
+    const detail = {
+      aosUtc: '2026-12-01T15:00:00.000Z',
+      losUtc: '2026-12-01T15:10:00.000Z',
+      mountGaps: [
+        {
+          fromUtc: '2026-12-01T15:04:10.000Z',
+          toUtc: '2026-12-01T15:04:32.000Z',
+          code: 'keyhole' as const,
+          sentence: 'Too fast.',
+        },
+      ],
+    };
+    expect(followedMs(detail)).toBe(578_000);
+    expect(plain(gapWords(detail))).toBe('keyhole 15:04:10, 22 s');
+  });
+
   it('says when it rises, sets or has set', () => {
     const [aos, los] = [NOW + 3_296_000, NOW + 3_866_000];
     expect(plain(standing('for sale', aos, los, NOW))).toBe('For sale. Rises in 54 min 56 s.');

@@ -69,3 +69,22 @@ export const ageWords = (ageH: number): string => `${formatDuration(ageH * 3_600
 export function marginOf(link: PassDetail['links'][number]): string | null {
   return spanWords(link.marginDb, 1);
 }
+
+type Followed = Pick<PassDetail, 'aosUtc' | 'losUtc' | 'mountGaps'>;
+
+const lengthMs = (from: string, to: string): number => Date.parse(to) - Date.parse(from);
+
+/** How much of the stretch the mount can follow. */
+export const followedMs = ({ aosUtc, losUtc, mountGaps }: Followed): number =>
+  mountGaps.reduce((left, gap) => left - lengthMs(gap.fromUtc, gap.toUtc), lengthMs(aosUtc, losUtc));
+
+const GAP_WORDS = { keyhole: 'keyhole', travel: 'end of travel', unwind: 'unwinding' } as const;
+
+/** What is lost when: `keyhole 15:04:10, 22 s`. */
+export const gapWords = ({ mountGaps }: Followed): string =>
+  mountGaps
+    .map((gap) => {
+      const length = formatDuration(lengthMs(gap.fromUtc, gap.toUtc));
+      return `${GAP_WORDS[gap.code]} ${gap.fromUtc.slice(11, 19)}, ${length}`;
+    })
+    .join('; ');
