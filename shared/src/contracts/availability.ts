@@ -124,7 +124,10 @@ export const availabilityRoutes = {
     path: '/api/antennas/:id/calendar',
     summary: 'When an antenna is open and blacked out; at most 62 days',
     access: 'stations.read',
-    query: z.object({ fromUtc: UtcTime, toUtc: UtcTime }),
+    query: z.object({
+      fromUtc: UtcTime.optional().describe('now where it is absent'),
+      toUtc: UtcTime.optional().describe('a week later where it is absent'),
+    }),
     response: AntennaCalendar,
     errors: ['not-found', 'bad-input'],
   }),

@@ -9,6 +9,7 @@ import type {
   CalendarRule,
   OpeningInput,
   Principal,
+  QueryOf,
   ResponseOf,
   routes,
   WeeklyRule,
@@ -42,8 +43,9 @@ export class AvailabilityService {
   ) {}
 
   /** Throws `bad-input` for a period that is upside down or too long. */
-  calendar(caller: Principal, id: string, query: { fromUtc: string; toUtc: string }): AntennaCalendar {
-    const [fromMs, toMs] = [Date.parse(query.fromUtc), Date.parse(query.toUtc)];
+  calendar(caller: Principal, id: string, { fromUtc, toUtc }: QueryOf<typeof routes.antennaCalendar>): AntennaCalendar {
+    const fromMs = fromUtc === undefined ? this.clock.nowMs() : Date.parse(fromUtc);
+    const toMs = toUtc === undefined ? fromMs + 7 * DAY_MS : Date.parse(toUtc);
     if (!(toMs > fromMs)) throw new DomainError('bad-input', 'The period must end after it begins.');
     if (toMs - fromMs > LONGEST_CALENDAR_MS) throw new DomainError('bad-input', 'A calendar shows 62 days at most.');
     const whole = this.find(this.db, caller, id, { fromMs, toMs });

@@ -4,9 +4,14 @@ import { entryInstances } from './entries.js';
 
 const OSLO = { timeZone: 'Europe/Oslo', reason: 'maintenance' } as const;
 const calendar = (...events: string[]) =>
-  ['BEGIN:VCALENDAR', 'VERSION:2.0', 'PRODID:-//Tern Rock//Plan//EN', ...events.map(eventText), 'END:VCALENDAR', ''].join(
-    '\r\n',
-  );
+  [
+    'BEGIN:VCALENDAR',
+    'VERSION:2.0',
+    'PRODID:-//Tern Rock//Plan//EN',
+    ...events.map(eventText),
+    'END:VCALENDAR',
+    '',
+  ].join('\r\n');
 const eventText = (lines: string) =>
   ['BEGIN:VEVENT', 'UID:1@tern.example', 'DTSTAMP:20261201T000000Z', ...lines.split('\n'), 'END:VEVENT'].join('\r\n');
 const read = (...events: string[]) => readCalendarFile(calendar(...events), OSLO);
@@ -42,7 +47,10 @@ describe('an iCalendar file of blackouts', () => {
       '2007-03-08T14:00',
       '2007-03-15T13:00',
     ]);
-    expect(startsOf(event, '2007-10-31T00:00:00Z', '2007-11-10T00:00:00Z')).toEqual(['2007-11-01T13:00', '2007-11-08T14:00']);
+    expect(startsOf(event, '2007-10-31T00:00:00Z', '2007-11-10T00:00:00Z')).toEqual([
+      '2007-11-01T13:00',
+      '2007-11-08T14:00',
+    ]);
   });
 
   it('leaves out what EXDATE names (RFC 5545 3.8.5.1), and counts it all the same', () => {
@@ -84,10 +92,16 @@ describe('an iCalendar file of blackouts', () => {
     expect(refusalOf('DTSTART;TZID=Tern Time:20261210T080000\nDURATION:PT1H')).toContain('“Tern Time”');
     expect(refusalOf('DTSTART:20261210T080000Z\nDURATION:PT1H\nRRULE:FREQ=HOURLY;COUNT=3')).toContain('FREQ');
     expect(refusalOf('DTSTART:20261210T080000Z\nDURATION:PT1H\nRDATE:20261211T080000Z')).toContain('RDATE');
-    expect(refusalOf('DTSTART:20261210T080000Z\nDURATION:PT1H\nRECURRENCE-ID:20261210T080000Z')).toContain('one instance');
-    expect(refusalOf('DTSTART;VALUE=DATE:20261210\nDTEND;VALUE=DATE:20261213\nRRULE:FREQ=MONTHLY')).toContain('whole days');
+    expect(refusalOf('DTSTART:20261210T080000Z\nDURATION:PT1H\nRECURRENCE-ID:20261210T080000Z')).toContain(
+      'one instance',
+    );
+    expect(refusalOf('DTSTART;VALUE=DATE:20261210\nDTEND;VALUE=DATE:20261213\nRRULE:FREQ=MONTHLY')).toContain(
+      'whole days',
+    );
     expect(refusalOf('SUMMARY:No start')).toContain('DTSTART');
-    expect(refusalOf('DTSTART:20261210T080000Z\nDURATION:PT30H\nRRULE:FREQ=DAILY;COUNT=3')).toContain('overlaps itself');
+    expect(refusalOf('DTSTART:20261210T080000Z\nDURATION:PT30H\nRRULE:FREQ=DAILY;COUNT=3')).toContain(
+      'overlaps itself',
+    );
   });
 
   it('refuses what is no calendar, an empty one and one with too many events', () => {

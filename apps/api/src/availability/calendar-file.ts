@@ -147,7 +147,8 @@ function daysOf(event: ICAL.Component, { time }: Begin, fromWallMs: number): num
 
 function durationMsOf(event: ICAL.Component): number {
   const duration: unknown = event.getFirstPropertyValue('duration');
-  if (!(duration instanceof ICAL.Duration)) throw new Refused('It has neither DTEND nor DURATION, so it takes no time.');
+  if (!(duration instanceof ICAL.Duration))
+    throw new Refused('It has neither DTEND nor DURATION, so it takes no time.');
   return duration.toSeconds() * 1_000;
 }
 

@@ -1,5 +1,5 @@
 /** Openings and blackouts as they are entered: checked by the market's own rules, and turned into what is kept. */
-import { isTimeZone, type Interval, MarketError, ruleInstances, validateRules } from '@skyberth/market';
+import { type Interval, isTimeZone, MarketError, ruleInstances, validateRules } from '@skyberth/market';
 import type { BlackoutEntry, FieldError, OpeningInput } from '@skyberth/shared';
 import { DomainError } from '../platform/domain-error.js';
 import { recurrenceOf } from '../stations/calendar-times.js';

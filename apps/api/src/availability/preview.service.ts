@@ -57,10 +57,20 @@ export class PreviewService {
     refuseBadChange(change, whole, nowMs);
     const sold = this.repository.sold(id, nowMs, MOST_SOLD);
     const week: Interval = { fromMs: nowMs, toMs: nowMs + WEEK_MS };
-    const period: Interval = { fromMs: nowMs - DAY_MS, toMs: Math.max(week.toMs, sold.at(-1)?.guardToMs ?? 0) + DAY_MS };
+    const period: Interval = {
+      fromMs: nowMs - DAY_MS,
+      toMs: Math.max(week.toMs, sold.at(-1)?.guardToMs ?? 0) + DAY_MS,
+    };
     const before = this.catalogue.byId(id, period);
     const soldMinor = sum(sold.filter((each) => each.aosMs < week.toMs).map((each) => each.netMinor));
-    const none = { currency: whole.station.currency, soldMinor, spacecraft: 0, before: null, after: null, lastMonth: null };
+    const none = {
+      currency: whole.station.currency,
+      soldMinor,
+      spacecraft: 0,
+      before: null,
+      after: null,
+      lastMonth: null,
+    };
     // Without a price nothing is for sale, so there is nothing that a change could change.
     if (before === null) return { ...none, touched: [] };
     const after = this.changed(before, change, period);
