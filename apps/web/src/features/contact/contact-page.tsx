@@ -19,8 +19,10 @@ import { Actions } from './actions.js';
 import classes from './contact.module.css';
 import { ContactFiles } from './contact-files.js';
 import { ContactPicture } from './contact-picture.js';
+import { DriftSection } from './drift-section.js';
 import { countdown } from './in-order.js';
 import { InOrderList } from './in-order-list.js';
+import { LiveSection, useLiveContact } from './live-section.js';
 import { MoneySection } from './money-section.js';
 import { PaymentReturn } from './payment-return.js';
 import { ReportSection } from './report-section.js';
@@ -65,6 +67,7 @@ function useListsFollow(state: Booking['state'] | undefined): void {
 function Contact({ booking, isBack }: { readonly booking: Booking; readonly isBack: boolean }) {
   const geometry = useQuery(bookingQueries.geometry(booking.id));
   const detail = geometry.data;
+  const live = useLiveContact(booking);
   return (
     <>
       <PageTitle
@@ -90,6 +93,8 @@ function Contact({ booking, isBack }: { readonly booking: Booking; readonly isBa
           </div>
         </div>
         <aside className={classes.side} aria-label="What happened and what to do">
+          <LiveSection booking={booking} live={live} />
+          <DriftSection booking={booking} spacecraftId={detail?.spacecraft.id} />
           <Actions booking={booking} />
           <ReportSection booking={booking} />
           {detail?.cautions.map((one) => (
@@ -97,7 +102,7 @@ function Contact({ booking, isBack }: { readonly booking: Booking; readonly isBa
               {one.text}
             </Caution>
           ))}
-          <InOrderList booking={booking} detail={detail} />
+          <InOrderList booking={booking} detail={detail} live={live.events} />
         </aside>
       </div>
     </>

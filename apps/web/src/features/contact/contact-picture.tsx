@@ -1,7 +1,10 @@
 import type { Booking, PassDetail } from '@skyberth/shared';
+import { useQuery } from '@tanstack/react-query';
 import { useMemo } from 'react';
 import { ContactCurves } from '../../drawing/curves/contact-curves.js';
 import { SkyPlot } from '../../drawing/sky-plot/sky-plot.js';
+import { liveQueries } from '../../lib/live.js';
+import { usePositionAt } from '../../lib/position.js';
 import { useNow } from '../../lib/use-now.js';
 import { formatDegrees, formatDuration, formatNumber } from '../../ui/format.js';
 import { sunText } from '../../ui/sun-text.js';
@@ -57,7 +60,11 @@ export function ContactPicture({ booking, detail }: ContactPictureProps) {
 
 function LiveFigures({ booking, detail, nowMs }: ContactPictureProps & { readonly nowMs: number }) {
   const track = useMemo(() => trackOf(detail), [detail]);
-  const live = liveAt(track, nowMs);
+  const isRunning = nowMs >= Date.parse(booking.aosUtc) && nowMs <= Date.parse(booking.losUtc);
+  const orbit = useQuery({ ...liveQueries.orbit(booking.id), enabled: isRunning });
+  const positionAt = usePositionAt(orbit.data);
+  const fromTrack = liveAt(track, nowMs);
+  const live = fromTrack && { ...fromTrack, ...(positionAt ? positionAt(nowMs) : {}) };
   if (live)
     return (
       <Figures columns={3} ruled>

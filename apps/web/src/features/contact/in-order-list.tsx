@@ -1,4 +1,4 @@
-import type { Booking, PassDetail } from '@skyberth/shared';
+import type { Booking, ContactEvent, PassDetail } from '@skyberth/shared';
 import { useNow } from '../../lib/use-now.js';
 import { DayTime } from '../../ui/day-time.js';
 import { formatDay } from '../../ui/format.js';
@@ -11,9 +11,15 @@ const KIND_WORDS: Readonly<Record<OrderEntry['kind'], string>> = {
   now: 'at this moment',
 };
 
+interface InOrderListProps {
+  readonly booking: Booking;
+  readonly detail: PassDetail | undefined;
+  readonly live: readonly ContactEvent[];
+}
+
 /** Predicted, reported and now on one line of time; what is to come is dashed. */
-export function InOrderList({ booking, detail }: { booking: Booking; detail: PassDetail | undefined }) {
-  const entries = inOrder(booking, detail, useNow());
+export function InOrderList({ booking, detail, live }: InOrderListProps) {
+  const entries = inOrder(booking, detail, useNow(), live);
   return (
     <section aria-labelledby="in-order-title">
       <h2 id="in-order-title" className={classes.heading}>

@@ -21,6 +21,24 @@ describe('everything in order', () => {
     ]);
   });
 
+  it('takes in what the station reports live, where it happened', () => {
+    const acquired = {
+      seq: 7,
+      bookingId: booking().id,
+      kind: 'acquired' as const,
+      atUtc: new Date(atMinute(3)).toISOString(),
+      happenedUtc: new Date(atMinute(3)).toISOString(),
+      value: null,
+      sentence: 'Acquired, 4.0 s after the predicted AOS',
+      by: 'Jess Birkett',
+    };
+    const entries = inOrder(booking(), detail(), atMinute(4), [acquired, { ...acquired, seq: 8, kind: 'diary' }]);
+    const titles = entries.map((entry) => entry.title);
+    expect(titles.filter((title) => title.startsWith('Acquired'))).toHaveLength(1);
+    expect(titles.indexOf('AOS predicted')).toBeLessThan(titles.indexOf(acquired.sentence));
+    expect(titles.indexOf(acquired.sentence)).toBeLessThan(titles.indexOf('Now'));
+  });
+
   it('predicts nothing of a contact that was called off, and has no now once all is past', () => {
     expect(inOrder(booking({ state: 'cancelled' }), detail(), atMinute(4)).map((one) => one.title)).toEqual(['Held.']);
     expect(inOrder(booking(), detail(), atMinute(30)).some((one) => one.kind === 'now')).toBe(false);

@@ -1,5 +1,5 @@
 /** Everything that happened and will happen, in order of time. Pure. */
-import type { Booking, PassDetail } from '@skyberth/shared';
+import type { Booking, ContactEvent, PassDetail } from '@skyberth/shared';
 import { formatCountdown, formatDegrees, formatNumber } from '../../ui/format.js';
 
 export interface OrderEntry {
@@ -14,7 +14,12 @@ export interface OrderEntry {
 
 const ENDED: readonly Booking['state'][] = ['lapsed', 'declined', 'cancelled'];
 
-export function inOrder(booking: Booking, detail: PassDetail | undefined, nowMs: number): OrderEntry[] {
+export function inOrder(
+  booking: Booking,
+  detail: PassDetail | undefined,
+  nowMs: number,
+  live: readonly ContactEvent[] = [],
+): OrderEntry[] {
   const happened = booking.events.map((event) => ({
     id: event.id,
     atMs: Date.parse(event.atUtc),
@@ -23,13 +28,24 @@ export function inOrder(booking: Booking, detail: PassDetail | undefined, nowMs:
     detail: event.by,
     isToCome: false,
   }));
+  // The diary's own lines among them stand above already.
+  const reported = live
+    .filter((event) => event.kind !== 'diary')
+    .map((event) => ({
+      id: `live ${event.seq}`,
+      atMs: Date.parse(event.happenedUtc),
+      kind: 'happened' as const,
+      title: event.sentence,
+      detail: `reported live by ${event.by}`,
+      isToCome: false,
+    }));
   // A contact that was called off has no future to predict.
   const predicted = ENDED.includes(booking.state) ? [] : predictions(booking, detail, nowMs);
   const isOpen = predicted.some((entry) => entry.isToCome);
   const now: OrderEntry[] = isOpen
     ? [{ id: 'now', atMs: nowMs, kind: 'now', title: 'Now', detail: '', isToCome: false }]
     : [];
-  return [...happened, ...predicted, ...now].toSorted((a, b) => a.atMs - b.atMs);
+  return [...happened, ...reported, ...predicted, ...now].toSorted((a, b) => a.atMs - b.atMs);
 }
 
 function predictions(booking: Booking, detail: PassDetail | undefined, nowMs: number): OrderEntry[] {
