@@ -26,6 +26,7 @@ export const ERROR_CODES = {
   'in-progress': { status: 409, title: 'The same request is still being carried out' },
   'too-large': { status: 413, title: 'Too large' },
   'file-refused': { status: 422, title: 'This kind of file is not taken' },
+  'over-limit': { status: 409, title: 'The monthly account does not bear it' },
   'not-for-sale': { status: 422, title: 'That time is not for sale' },
   'elements-unusable': { status: 422, title: 'The orbital elements cannot be used' },
   'elements-too-old': { status: 422, title: 'The orbital elements are too old' },

@@ -28,6 +28,7 @@ const MANAGERS: readonly Role[] = ['manager'];
 export const PERMISSIONS = {
   'organisation.read': { operator: ALL, owner: ALL, staff: ['finance', 'admin'] },
   'organisation.manage': { operator: MANAGERS, owner: MANAGERS },
+  'members.manage': { operator: MANAGERS, owner: MANAGERS, staff: ['admin'] },
   'spacecraft.read': { operator: ALL },
   'spacecraft.write': { operator: WORKERS },
   'stations.read': { owner: ALL, staff: ['admin'] },
@@ -49,6 +50,9 @@ export const PERMISSIONS = {
   'disputes.answer': { operator: WORKERS, owner: WORKERS },
   'disputes.decide': { staff: ['admin'] },
   'invoices.read': { operator: ALL, owner: ALL, staff: ['finance'] },
+  'credit.read': { operator: ALL },
+  'credit.ask': { operator: MANAGERS },
+  'credit.decide': { staff: ['finance'] },
   'ledger.read': { staff: ['finance'] },
   'ledger.close': { staff: ['finance'] },
   'reconciliation.read': { staff: ['finance'] },

@@ -2,6 +2,7 @@
 import { accountRoutes } from './contracts/accounts.js';
 import { availabilityRoutes } from './contracts/availability.js';
 import { bookingRoutes } from './contracts/bookings.js';
+import { creditRoutes } from './contracts/credit.js';
 import { disputeRoutes } from './contracts/disputes.js';
 import { driftRoutes } from './contracts/drift.js';
 import { ephemerisRoutes } from './contracts/ephemerides.js';
@@ -10,6 +11,7 @@ import { invoiceRoutes } from './contracts/invoices.js';
 import { ledgerRoutes } from './contracts/ledger.js';
 import { liveRoutes } from './contracts/live.js';
 import { marketRoutes } from './contracts/market.js';
+import { maskHistoryRoutes } from './contracts/mask-history.js';
 import { oversightRoutes } from './contracts/oversight.js';
 import { reconciliationRoutes } from './contracts/reconciliation.js';
 import { runSheetRoutes } from './contracts/run-sheet.js';
@@ -22,6 +24,7 @@ export const routes = {
   ...spacecraftRoutes,
   ...ephemerisRoutes,
   ...stationRoutes,
+  ...maskHistoryRoutes,
   ...availabilityRoutes,
   ...marketRoutes,
   ...bookingRoutes,
@@ -32,6 +35,7 @@ export const routes = {
   ...fileRoutes,
   ...invoiceRoutes,
   ...ledgerRoutes,
+  ...creditRoutes,
   ...reconciliationRoutes,
   ...oversightRoutes,
   ...systemRoutes,

@@ -1,9 +1,12 @@
 /** The application: the platform and one module for each feature. */
 import { type DynamicModule, Module } from '@nestjs/common';
 import { AccountsModule } from './accounts/accounts.module.js';
+import { AvailabilityModule } from './availability/availability.module.js';
 import { BookingsModule } from './bookings/bookings.module.js';
+import { DisputesModule } from './disputes/disputes.module.js';
 import { DriftModule } from './drift/drift.module.js';
 import { FilesModule } from './files/files.module.js';
+import { CreditModule } from './credit/credit.module.js';
 import { InvoicesModule } from './invoices/invoices.module.js';
 import { JobsModule } from './jobs/jobs.module.js';
 import { LedgerModule } from './ledger/ledger.module.js';
@@ -19,7 +22,6 @@ import { PlatformModule } from './platform/platform.module.js';
 import { ReconciliationModule } from './reconciliation/reconciliation.module.js';
 import { RunSheetModule } from './run-sheet/run-sheet.module.js';
 import { SpacecraftModule } from './spacecraft/spacecraft.module.js';
-import { AvailabilityModule } from './availability/availability.module.js';
 import { StationsModule } from './stations/stations.module.js';
 import { SystemModule } from './system/system.module.js';
 
@@ -46,7 +48,9 @@ export class AppModule {
         InvoicesModule,
         LedgerModule,
         ReconciliationModule,
+        CreditModule,
         MarketModule,
+        DisputesModule,
         OversightModule,
         SystemModule,
       ],

@@ -19,7 +19,7 @@ export class BookingSale {
 
   /** The price of a held booking is reserved. Where the owner answers each request (frozen with the hold), ask; else sell. */
   fundsSecured(tx: Db, booking: BookingRow): BookingRow {
-    const secured = `${moneyText(booking.toPayMinor, booking.currency)} are reserved`;
+    const secured = `${moneyText(booking.toPayMinor, booking.currency)} are secured`;
     if (booking.answerByMs === null) {
       return this.confirm(tx, booking, {
         cause: 'funds secured',
@@ -59,7 +59,7 @@ export class BookingSale {
     this.notices.toBuyer(tx, booking, {
       kind: 'declined',
       subject: `Declined: ${contactName(this.notices.names(tx, booking))}`,
-      sentences: [sentence, 'What was reserved on your card is let go; nothing is charged.'],
+      sentences: [sentence, 'What was reserved is let go; nothing is charged.'],
     });
     return declined;
   }
@@ -124,14 +124,16 @@ export class BookingSale {
     this.notices.toBuyer(tx, booking, {
       kind: 'confirmed',
       subject: `Confirmed: ${name}`,
-      sentences: ['The contact is yours. The price is reserved on your card and taken after the contact.'],
+      sentences: [
+        'The contact is yours. The price is secured, and charged after the contact: to your card, or on your monthly account.',
+      ],
       attachments: [calendarOf(booking)],
     });
     this.notices.toBilling(tx, booking, {
       kind: 'invoice',
       subject: `Invoice ${invoice.number}: ${name}`,
       sentences: [
-        'The invoice is attached. Nothing is to be transferred: the card that was given is charged after the contact.',
+        'The invoice is attached. Nothing is to be transferred: the card is charged after the contact, or the month’s bill collects it.',
       ],
       attachments: [pdfOf(invoice)],
     });

@@ -170,7 +170,7 @@ function writeTotals(pen: PdfPen, invoice: Invoice, from: number): void {
 function closingWords(invoice: Invoice): string {
   const payment =
     invoice.kind === 'invoice'
-      ? 'The amount is reserved on your card and taken after the contact. Nothing else is to be paid.'
+      ? 'The amount is taken from your card after the contact, or stands on your monthly bill. Nothing else is to be paid.'
       : 'The amount is not taken from your card, or is given back to it.';
   return `${invoice.vatNote}${/[.!]$/.test(invoice.vatNote) ? '' : '.'} ${payment}`;
 }

@@ -10,10 +10,12 @@ export const CAPTURE = 'payment.capture';
 export const RELEASE = 'payment.release';
 export const READ = 'payment.read';
 export const RENEW = 'payment.renew';
+export const REFUND = 'payment.refund';
 
 export const CaptureOrder = z.object({ intentId: z.string(), amountMinor: z.int().positive() });
 export const ReleaseOrder = z.object({ intentId: z.string().nullable(), checkoutId: z.string().nullable() });
 export const ReadOrder = z.object({ intentId: z.string() });
+export const RefundOrder = z.object({ intentId: z.string(), amountMinor: z.int().positive(), key: z.string() });
 export const RenewOrder = z.object({ intentId: z.string(), bookingId: z.string() });
 
 @Injectable()
@@ -87,5 +89,12 @@ export class PaymentOrders {
       dedupeKey: `${READ}:${intentId}`,
       payload: { intentId } satisfies z.input<typeof ReadOrder>,
     });
+  }
+
+  /** Gives so much of what was taken back to the card; `key` names the cause, which is carried out once. */
+  refund(tx: Db, payment: PaymentRow, refund: { amountMinor: number; key: string }): void {
+    if (!payment.intentId) throw new Error(`Nothing was taken for payment ${payment.id}.`);
+    const payload = { intentId: payment.intentId, ...refund };
+    this.outbox.enqueue(tx, { kind: REFUND, dedupeKey: `${REFUND}:${refund.key}`, payload });
   }
 }

@@ -19,8 +19,12 @@ import { type PaymentChange, PaymentRepository, type PaymentRow } from './paymen
 /** The bank may take so long while the hold runs out; nobody else has the time as long as the hold has not lapsed. */
 export const LATE_GRACE_MS = 120_000;
 
+export type BillHandler = (tx: Db, billId: string, facts: IntentFacts) => string;
+
 @Injectable()
 export class PaymentOutcomes {
+  private billHandler: BillHandler | undefined;
+
   constructor(
     private readonly bookings: BookingRepository,
     private readonly payments: PaymentRepository,
@@ -33,8 +37,14 @@ export class PaymentOutcomes {
     @Inject(CLOCK) private readonly clock: ClockPort,
   ) {}
 
+  /** Says who follows the payments of monthly bills; called once, when modules start. */
+  whenBill(handler: BillHandler): void {
+    this.billHandler = handler;
+  }
+
   /** Answers in a few words what it did, for the record of the event. */
   apply(tx: Db, facts: IntentFacts): string {
+    if (facts.billId !== null) return this.billHandler?.(tx, facts.billId, facts) ?? 'no bills are kept here';
     const booking = facts.bookingId === null ? undefined : this.bookings.byId(tx, facts.bookingId);
     if (!booking) return 'no booking of ours';
     const payment = this.payments.ofBooking(booking.id, tx);

@@ -51,14 +51,18 @@ export class PaymentRefunds {
     const { booking, payment, refunded } = what;
     const { operatorId, ownerId, currency } = booking;
     const amountMinor = refunded.refundedMinor - payment.refundedMinor;
-    const share = this.shares.between(tx, payment, {
-      beforeMinor: payment.refundedMinor,
-      afterMinor: refunded.refundedMinor,
-    });
     const cause = `Refund of berth ${booking.number}`;
     const key = `${refunded.chargeId}:${refunded.refundedMinor}`;
-    const refund = { operatorId, ownerId, ...share, fromReserveMinor: 0 };
-    this.ledger.post(tx, refundEntry({ causeKey: `refund:${key}`, cause, currency }, refund), booking.id);
+    // A dispute books its refund when it is decided; what comes without one was made at the provider itself.
+    const decidedMinor = Math.min(amountMinor, this.ledger.promisedBackMinor(tx, booking.id));
+    if (decidedMinor < amountMinor) {
+      const share = this.shares.between(tx, payment, {
+        beforeMinor: payment.refundedMinor + decidedMinor,
+        afterMinor: refunded.refundedMinor,
+      });
+      const refund = { operatorId, ownerId, ...share, fromReserveMinor: 0 };
+      this.ledger.post(tx, refundEntry({ causeKey: `refund:${key}`, cause, currency }, refund), booking.id);
+    }
     const returned = refundReturnedEntry({ causeKey: `returned:${key}`, cause, currency }, { operatorId, amountMinor });
     this.ledger.post(tx, returned, booking.id);
   }

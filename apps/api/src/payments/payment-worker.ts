@@ -14,9 +14,11 @@ import {
   CaptureOrder,
   PaymentOrders,
   READ,
+  REFUND,
   RELEASE,
   RENEW,
   ReadOrder,
+  RefundOrder,
   ReleaseOrder,
   RenewOrder,
 } from './payment-orders.js';
@@ -49,6 +51,7 @@ export class PaymentWorker implements OnModuleInit {
   ) {}
 
   onModuleInit(): void {
+    this.runner.register(REFUND, (payload) => this.refund(payload));
     this.runner.register(CAPTURE, (payload) => this.capture(payload));
     this.runner.register(RELEASE, (payload) => this.release(payload));
     this.runner.register(READ, (payload) => this.read(payload));
@@ -96,6 +99,12 @@ export class PaymentWorker implements OnModuleInit {
     if (facts.status !== 'released') throw new Error(`The intent ${intentId} is ${facts.status} instead of captured.`);
     write(this.db, (tx) => this.outcomes.apply(tx, facts));
     throw new PermanentFailure(`The reservation ${intentId} had ended before it was charged.`);
+  }
+
+  /** What is not taken yet can't be given back: until it is, the provider refuses, and this is tried again later. */
+  private async refund(payload: unknown): Promise<void> {
+    const { intentId, amountMinor, key } = RefundOrder.parse(payload);
+    await this.port.refund(intentId, { amountMinor, key });
   }
 
   private async release(payload: unknown): Promise<void> {

@@ -10,6 +10,8 @@ export interface IntentFacts {
   readonly intentId: string;
   /** Our booking, from the metadata that we gave; null for an intent that is not ours. */
   readonly bookingId: string | null;
+  /** Our monthly bill, from the metadata that we gave; null for every other intent. */
+  readonly billId: string | null;
   /** The intent whose reservation this one takes over; null for a first one. */
   readonly renews: string | null;
   readonly status: 'unpaid' | 'waiting for the bank' | 'authorised' | 'captured' | 'released' | 'other';
@@ -57,6 +59,11 @@ export interface PageOrder extends PaymentOrder {
   readonly cancelUrl: string;
 }
 
+/** A bill is paid at once: nothing is reserved first. */
+export interface BillPageOrder extends Omit<PageOrder, 'bookingId' | 'saveCard'> {
+  readonly billId: string;
+}
+
 export interface CardFacts {
   readonly id: string;
   readonly brand: string;
@@ -89,6 +96,7 @@ export interface PaymentPort {
   cards(customerId: string): Promise<CardFacts[]>;
   /** The page stays open for a day unless it is closed; the end of a hold closes it. */
   openPage(order: PageOrder): Promise<PageFacts>;
+  openBillPage(order: BillPageOrder): Promise<PageFacts>;
   readPage(checkoutId: string): Promise<PageFacts>;
   /** Nobody can pay on the page any more, unless it was already paid: the answer says so. */
   closePage(checkoutId: string): Promise<PageFacts>;
@@ -104,6 +112,8 @@ export interface PaymentPort {
   renew(intentId: string): Promise<IntentFacts>;
   /** Takes `amountMinor` of what is reserved and lets the rest go. */
   capture(intentId: string, amountMinor: number): Promise<IntentFacts>;
+  /** Gives back part of what was taken; the same `key` is carried out once. */
+  refund(intentId: string, refund: { amountMinor: number; key: string }): Promise<void>;
   /** Lets a reservation, or an unpaid intent, go. */
   release(intentId: string): Promise<IntentFacts>;
   /** Verifies signature and age. Throws `bad-signature`. */

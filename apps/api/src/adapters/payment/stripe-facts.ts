@@ -4,6 +4,7 @@ import type { CardFacts, IntentFacts, PageFacts, ProviderEvent } from '../../pay
 import type { ChargebackFacts, RefundedFacts } from '../../payments/provider-books.port.js';
 
 export const BOOKING_KEY = 'skyberth_booking';
+export const BILL_KEY = 'skyberth_bill';
 export const RENEWS_KEY = 'skyberth_renews';
 export const SAVES_CARD_KEY = 'skyberth_saves_card';
 
@@ -23,6 +24,7 @@ export function intentFacts(intent: Stripe.PaymentIntent): IntentFacts {
   return {
     intentId: intent.id,
     bookingId: intent.metadata?.[BOOKING_KEY] ?? null,
+    billId: intent.metadata?.[BILL_KEY] ?? null,
     renews: intent.metadata?.[RENEWS_KEY] ?? null,
     status: STATUS[intent.status] ?? 'other',
     amountMinor: intent.amount,

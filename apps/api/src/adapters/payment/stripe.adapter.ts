@@ -2,6 +2,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type Stripe from 'stripe';
 import type {
+  BillPageOrder,
   CardFacts,
   IntentFacts,
   PageFacts,
@@ -14,6 +15,7 @@ import { CONFIG, type Config } from '../../platform/config.js';
 import { DomainError } from '../../platform/domain-error.js';
 import { ask, stripeClient } from './stripe-client.js';
 import {
+  BILL_KEY,
   BOOKING_KEY,
   cardFacts,
   eventFacts,
@@ -80,6 +82,37 @@ export class StripeAdapter implements PaymentPort {
             metadata: { [BOOKING_KEY]: bookingId },
             ...(order.saveCard ? { setup_future_usage: 'off_session' as const } : {}),
           },
+          success_url: order.returnUrl,
+          cancel_url: order.cancelUrl,
+        },
+        { idempotencyKey },
+      ),
+    );
+    return pageFacts(session);
+  }
+
+  async openBillPage(order: BillPageOrder): Promise<PageFacts> {
+    const { billId, customerId, amountMinor, currency, description, idempotencyKey } = order;
+    const metadata = { [BILL_KEY]: billId };
+    const session = await ask(
+      this.stripe.checkout.sessions.create(
+        {
+          mode: 'payment',
+          customer: customerId,
+          client_reference_id: billId,
+          metadata,
+          line_items: [
+            {
+              quantity: 1,
+              price_data: {
+                currency: currency.toLowerCase(),
+                unit_amount: amountMinor,
+                product_data: { name: description },
+              },
+            },
+          ],
+          allowed_payment_method_types: ['card'],
+          payment_intent_data: { description, metadata },
           success_url: order.returnUrl,
           cancel_url: order.cancelUrl,
         },
@@ -162,6 +195,15 @@ export class StripeAdapter implements PaymentPort {
       { idempotencyKey: `skyberth:capture:${intentId}:${amountMinor}` },
     );
     return await ask(captured.then(intentFacts), () => this.readIntent(intentId));
+  }
+
+  async refund(intentId: string, { amountMinor, key }: { amountMinor: number; key: string }): Promise<void> {
+    await ask(
+      this.stripe.refunds.create(
+        { payment_intent: intentId, amount: amountMinor, reason: 'requested_by_customer' },
+        { idempotencyKey: `skyberth:refund:${key}` },
+      ),
+    );
   }
 
   async release(intentId: string): Promise<IntentFacts> {
