@@ -1,0 +1,4 @@
+/** A plan that cannot even be looked for, with a sentence for the person. */
+export class PlannerError extends Error {
+  override readonly name = 'PlannerError';
+}
