@@ -5,6 +5,7 @@ export * from './contracts/accounts.js';
 export * from './contracts/availability.js';
 export * from './contracts/bookings.js';
 export * from './contracts/credit.js';
+export * from './contracts/clearances.js';
 export * from './contracts/disputes.js';
 export * from './contracts/drift.js';
 export * from './contracts/ephemerides.js';

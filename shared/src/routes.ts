@@ -3,6 +3,7 @@ import { accountRoutes } from './contracts/accounts.js';
 import { availabilityRoutes } from './contracts/availability.js';
 import { bookingRoutes } from './contracts/bookings.js';
 import { creditRoutes } from './contracts/credit.js';
+import { clearanceRoutes } from './contracts/clearances.js';
 import { disputeRoutes } from './contracts/disputes.js';
 import { driftRoutes } from './contracts/drift.js';
 import { ephemerisRoutes } from './contracts/ephemerides.js';
@@ -33,6 +34,7 @@ export const routes = {
   ...driftRoutes,
   ...disputeRoutes,
   ...fileRoutes,
+  ...clearanceRoutes,
   ...invoiceRoutes,
   ...ledgerRoutes,
   ...creditRoutes,

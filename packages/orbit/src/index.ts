@@ -7,7 +7,6 @@ export * from './elements/parse-element-sets.js';
 export * from './elements/sgp4-source.js';
 export { tleChecksum } from './elements/tle-columns.js';
 export * from './elements/write-elements.js';
-export * from './engine/elevation-profile.js';
 export * from './engine/mask.js';
 export * from './engine/mask-csv.js';
 export * from './engine/pass-block.js';

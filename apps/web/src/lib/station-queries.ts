@@ -22,6 +22,11 @@ export const stationQueries = {
       queryKey: ['stations', 'antenna', id],
       queryFn: ({ signal }) => call(routes.getAntenna, { params: { id }, signal }),
     }),
+  masks: (antennaId: string) =>
+    queryOptions({
+      queryKey: ['stations', 'masks', antennaId],
+      queryFn: ({ signal }) => call(routes.listMasks, { params: { id: antennaId }, signal }),
+    }),
 };
 
 /** Puts a changed antenna in place, and lets lists that name it be read again. */
@@ -29,4 +34,5 @@ export function antennaChanged(client: QueryClient, antenna: Antenna): void {
   client.setQueryData(stationQueries.antenna(antenna.id).queryKey, antenna);
   void client.invalidateQueries({ queryKey: ['stations', 'list'] });
   void client.invalidateQueries({ queryKey: ['stations', 'one'] });
+  void client.invalidateQueries({ queryKey: ['stations', 'masks', antenna.id] });
 }

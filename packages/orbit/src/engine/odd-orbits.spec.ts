@@ -5,7 +5,6 @@ import { sgp4Source } from '../elements/sgp4-source.js';
 import { lookAngles } from '../frames/look-angles.js';
 import { OrbitError } from '../orbit-error.js';
 import type { MaskPoint, TrajectorySource } from '../types.js';
-import { elevationProfile } from './elevation-profile.js';
 import { findPasses, passAt, searchPassesColumns } from './search-passes.js';
 
 const HOUR_MS = 3_600_000;
@@ -162,18 +161,5 @@ describe('columns', () => {
     expect(new Set(result.blocks.flatMap(({ satellite, count }) => [...satellite.slice(0, count)]))).toEqual(
       new Set([0]),
     );
-  });
-});
-
-describe('a profile', () => {
-  it('stands at equal steps and at the very end', () => {
-    const source = sgp4Source(BASE);
-    const place = { latitudeDeg: 78, longitudeDeg: 15, altitudeM: 0 };
-    const profile = elevationProfile({ source, site: place, fromMs: EPOCH_MS, toMs: EPOCH_MS + 95_000, stepS: 10 });
-    expect(profile).toHaveLength(22);
-    const { azimuthDeg, elevationDeg } = lookAngles(source, place, EPOCH_MS + 95_000);
-    expect(profile[20]).toBeCloseTo(azimuthDeg, 4);
-    expect(profile[21]).toBeCloseTo(elevationDeg, 4);
-    expect(() => elevationProfile({ source, site: place, fromMs: 0, toMs: 1e9, stepS: 0 })).toThrowError(OrbitError);
   });
 });

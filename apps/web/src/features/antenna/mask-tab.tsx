@@ -13,6 +13,7 @@ import { ProblemNotice } from '../../ui/problem-notice.js';
 import { MaskCsv } from './mask-csv.js';
 import { beginDraft, isSameMask, maskDraft, maskOf, pointsOf } from './mask-draft.js';
 import { MaskEffect } from './mask-effect.js';
+import { MaskHistory } from './mask-history.js';
 import classes from './mask-tab.module.css';
 import { MaskTable } from './mask-table.js';
 import { minutesBySector } from './sold-contacts.js';
@@ -142,6 +143,7 @@ export function MaskTab({ antenna, mayWrite }: TabProps) {
           </div>
         )}
       </MaskEffect>
+      <MaskHistory antennaId={antenna.id} mayWrite={mayWrite} onTake={(mask) => change(pointsOf(mask.points), true)} />
     </div>
   );
 }
