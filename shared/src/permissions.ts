@@ -39,6 +39,7 @@ export const PERMISSIONS = {
   'clearances.request': { operator: WORKERS },
   'clearances.grant': { owner: WORKERS },
   'clearances.check': { staff: ['admin'] },
+  'clearances.withdraw': { operator: WORKERS, owner: WORKERS, staff: ['admin'] },
   'market.search': { operator: ALL },
   'bookings.read': { operator: ALL, owner: ALL, staff: ['finance', 'admin'] },
   'bookings.buy': { operator: WORKERS },

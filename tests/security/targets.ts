@@ -1,6 +1,7 @@
 /** Things of two organisations that nobody else may reach: made through the API, a sold contact straight in the database. */
 import { randomUUID } from 'node:crypto';
 import { routes } from '@skyberth/shared';
+import { addDispute } from '../api/harness/dispute.js';
 import { addSoldContact } from '../api/harness/sold-contact.js';
 import { antennaOnSale } from '../api/harness/stations.js';
 import { tleText } from '../api/harness/tle.js';
@@ -29,7 +30,9 @@ export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
   const visit = await must(call(routes.enterDish, { params: { id: antenna.id }, body: { name: 'Sam' }, as: owner }));
   const paper = { query: { name: 'licence.pdf' }, body: Buffer.from('%PDF-1.7 paper'), as: operator };
   const file = await must(call(routes.uploadFile, paper));
+  const dispute = addDispute(skyberth, { operator, owner, antennaId: antenna.id, spacecraftId: spacecraft });
   return {
+    dispute,
     spacecraft,
     station: station.id,
     antenna: antenna.id,

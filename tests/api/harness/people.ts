@@ -56,7 +56,7 @@ export class People {
   }
 
   /** Another member of the manager's organisation. */
-  async member(manager: Person, role: Extract<Role, 'manager' | 'member' | 'viewer'>): Promise<Person> {
+  async member(manager: Person, role: Role): Promise<Person> {
     this.count += 1;
     const email = `${role}-${this.count}@people.example`;
     const body = { name: `Jo ${role} ${this.count}`, email, role };

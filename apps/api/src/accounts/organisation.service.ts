@@ -1,7 +1,16 @@
 /** The organisation and its members. The last manager stays: an organisation without one could never be helped. */
 import { Inject, Injectable } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
-import type { BodyOf, Member, Organisation, Principal, routes } from '@skyberth/shared';
+import {
+  type BodyOf,
+  can,
+  type Member,
+  type Organisation,
+  type Principal,
+  ROLES_OF_KIND,
+  type Role,
+  type routes,
+} from '@skyberth/shared';
 import { AuditService } from '../platform/audit.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
@@ -73,6 +82,7 @@ export class OrganisationService {
 
   /** A person without an account gets a link to set a password; one with an account belongs at once and is told. */
   invite(caller: Principal, input: BodyOf<typeof routes.inviteMember>): Member {
+    checkRole(caller, input.role);
     return write(this.db, (tx) => {
       const organisation = this.byId(tx, caller.organisationId);
       const known = this.people.byEmail(tx, input.email);
@@ -103,9 +113,10 @@ export class OrganisationService {
 
   /** Throws `not-found`, or `wrong-state` for the last manager. */
   changeRole(caller: Principal, personId: string, role: BodyOf<typeof routes.changeMember>['role']): Member {
+    checkRole(caller, role);
     return write(this.db, (tx) => {
       const member = this.memberOf(tx, caller, personId);
-      if (member.role === 'manager' && role !== 'manager') this.keepAManager(tx, caller, personId);
+      if (member.role !== role) this.keepAnother(tx, caller, member);
       this.organisations.changeRole(tx, caller.organisationId, personId, role);
       this.note(tx, caller, 'member.change-role', personId, { from: member.role, to: role });
       return this.memberOf(tx, caller, personId);
@@ -116,7 +127,7 @@ export class OrganisationService {
   remove(caller: Principal, personId: string): { ok: true } {
     return write(this.db, (tx) => {
       const member = this.memberOf(tx, caller, personId);
-      if (member.role === 'manager') this.keepAManager(tx, caller, personId);
+      this.keepAnother(tx, caller, member);
       this.organisations.removeMember(tx, caller.organisationId, personId);
       const whose = { personId, organisationId: caller.organisationId };
       this.sessions.revokeOf(tx, whose, this.clock.nowMs(), 'removed from the organisation');
@@ -125,11 +136,13 @@ export class OrganisationService {
     });
   }
 
-  private keepAManager(tx: Db, caller: Principal, personId: string): void {
-    if (this.organisations.otherManagers(tx, caller.organisationId, personId) > 0) return;
+  /** Somebody must stay who can manage the organisation. */
+  private keepAnother(tx: Db, caller: Principal, { personId, role }: Member): void {
+    if (!can({ organisationKind: caller.organisationKind, role }, 'members.manage')) return;
+    if (this.organisations.othersWithRole(tx, caller.organisationId, { personId, role }) > 0) return;
     throw new DomainError(
       'wrong-state',
-      'This is the last manager who can sign in. Make another member manager first.',
+      `This is the last ${role} who can sign in. Make another member ${role} first.`,
     );
   }
 
@@ -163,3 +176,10 @@ const organisationView = (row: OrganisationRow): Organisation => ({
   billingEmail: row.billingEmail,
   createdUtc: new Date(row.createdMs).toISOString(),
 });
+
+/** A role exists in some kinds of organisation only. */
+function checkRole({ organisationKind }: Principal, role: Role): void {
+  if (ROLES_OF_KIND[organisationKind].includes(role)) return;
+  const detail = `Here the roles are ${ROLES_OF_KIND[organisationKind].join(', ')}.`;
+  throw new DomainError('bad-input', detail, [{ pointer: '/role', detail }]);
+}

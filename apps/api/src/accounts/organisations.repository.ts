@@ -88,20 +88,20 @@ export class OrganisationsRepository {
   }
 
   /** Managers who can sign in, this person not counted: an invited one may never come. */
-  otherManagers(tx: Db, organisationId: string, personId: string): number {
+  othersWithRole(tx: Db, organisationId: string, { personId, role }: { personId: string; role: Role }): number {
     const row = tx
-      .select({ managers: count() })
+      .select({ rows: count() })
       .from(memberships)
       .innerJoin(people, eq(people.id, memberships.personId))
       .where(
         and(
           eq(memberships.organisationId, organisationId),
-          eq(memberships.role, 'manager'),
+          eq(memberships.role, role),
           ne(memberships.personId, personId),
           isNotNull(people.passwordHash),
         ),
       )
       .get();
-    return row?.managers ?? 0;
+    return row?.rows ?? 0;
   }
 }

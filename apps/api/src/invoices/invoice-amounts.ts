@@ -3,6 +3,7 @@ import {
   allocateMinor,
   buildCreditNote,
   buildInvoice,
+  creditShare,
   type InvoiceAmounts,
   type InvoiceLineInput,
   percentOf,
@@ -65,6 +66,18 @@ export function creditOf(invoice: InvoiceAmounts, refundPercent: number): Invoic
     creditNetMinor: allocateMinor(creditMinor, nets),
     creditedBeforeMinor: nets.map(() => 0),
   });
+}
+
+/** The next step of crediting an invoice, from one share of it to a larger one; null where that is nothing. */
+export function creditStepOf(
+  invoice: InvoiceAmounts,
+  fromBasisPoints: number,
+  toBasisPoints: number,
+): InvoiceAmounts | null {
+  const before = creditShare(invoice, fromBasisPoints);
+  const step = creditShare(invoice, toBasisPoints).map((net, index) => net - (before[index] ?? 0));
+  if (step.every((net) => net === 0)) return null;
+  return buildCreditNote({ invoice, creditNetMinor: step, creditedBeforeMinor: before });
 }
 
 /** What `refundPercent` of a price is, net, VAT and together. */

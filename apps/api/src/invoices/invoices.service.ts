@@ -8,7 +8,7 @@ import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { CONFIG, type Config } from '../platform/config.js';
 import { newId } from '../platform/ids.js';
 import type { Db } from '../platform/transaction.js';
-import { amountsOf, creditOf, frozenTreatment } from './invoice-amounts.js';
+import { amountsOf, creditOf, creditStepOf, frozenTreatment } from './invoice-amounts.js';
 import { invoicePdf } from './invoice-pdf.js';
 import { InvoiceRepository, type InvoiceRow } from './invoices.repository.js';
 
@@ -59,6 +59,37 @@ export class InvoiceService implements OnModuleInit {
     if (!amounts) return null;
     const { subject } = credit;
     return this.write(tx, booking, { kind: 'credit note', amounts, treatment, subject, credits: invoice });
+  }
+
+  /** Credits a booking's invoice from one share of it to a larger one, as disputes and their appeals do. */
+  creditStep(
+    tx: Db,
+    booking: Billed,
+    step: { fromBasisPoints: number; toBasisPoints: number; subject: string },
+  ): InvoiceRow | null {
+    const invoice = this.repository.ofBooking(booking.id, 'invoice', tx);
+    if (!invoice) return null;
+    const treatment = this.treatmentOf(tx, booking);
+    const amounts = creditStepOf(amountsOf(booking.quote, treatment), step.fromBasisPoints, step.toBasisPoints);
+    if (!amounts) return null;
+    return this.write(tx, booking, {
+      kind: 'credit note',
+      amounts,
+      treatment,
+      subject: step.subject,
+      credits: invoice,
+    });
+  }
+
+  /** What crediting a share of a booking's price comes to, net and VAT, both positive. */
+  creditAmounts(booking: Billed, basisPoints: number): { netMinor: number; vatMinor: number } {
+    const credit = creditStepOf(amountsOf(booking.quote), 0, basisPoints);
+    return { netMinor: credit ? -credit.netMinor : 0, vatMinor: credit?.vatMinor ? -credit.vatMinor : 0 };
+  }
+
+  /** For those who caused it; who may read it is not asked. */
+  byId(invoiceId: string): InvoiceRow {
+    return this.repository.byId(invoiceId);
   }
 
   ofBooking(bookingId: string): InvoiceRow | undefined {

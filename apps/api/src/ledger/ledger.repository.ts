@@ -94,6 +94,33 @@ export class LedgerRepository {
     return sums;
   }
 
+  /** What the entries of one booking together hold in an account; debit positive. */
+  ofBookingMinor(tx: Db, bookingId: string, account: string): number {
+    const row = tx
+      .select({ minor: sql<number>`coalesce(sum(${journalPostings.amountMinor}), 0)` })
+      .from(journalPostings)
+      .innerJoin(journalEntries, eq(journalEntries.id, journalPostings.entryId))
+      .where(and(eq(journalEntries.bookingId, bookingId), eq(journalPostings.account, account)))
+      .get();
+    return row?.minor ?? 0;
+  }
+
+  /** The entries of one booking, oldest first, each with what it moved. */
+  storyOf(bookingId: string): { atMs: number; words: string; amountMinor: number }[] {
+    return this.db
+      .select({
+        atMs: journalEntries.atMs,
+        words: journalEntries.cause,
+        amountMinor: sql<number>`sum(max(${journalPostings.amountMinor}, 0))`,
+      })
+      .from(journalEntries)
+      .innerJoin(journalPostings, eq(journalPostings.entryId, journalEntries.id))
+      .where(eq(journalEntries.bookingId, bookingId))
+      .groupBy(journalEntries.id)
+      .orderBy(asc(journalEntries.atMs), asc(journalEntries.id))
+      .all();
+  }
+
   /** Writes the entry open, fills it and seals it, which is when the database checks that it balances. */
   add(tx: Db, entry: JournalEntry, about: { atMs: number; bookingId: string | null }): void {
     const id = newId();

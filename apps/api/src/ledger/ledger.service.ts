@@ -31,6 +31,17 @@ export class LedgerService {
     return amountMinor === 0 ? 0 : -amountMinor;
   }
 
+  /** What has been promised back to the buyer of a booking and not been returned yet. */
+  promisedBackMinor(tx: Db, bookingId: string): number {
+    const minor = this.repository.ofBookingMinor(tx, bookingId, 'refunds' satisfies AccountName);
+    return minor === 0 ? 0 : -minor;
+  }
+
+  /** Everything that was booked about one booking, oldest first. */
+  storyOf(bookingId: string): { atMs: number; words: string; amountMinor: number }[] {
+    return this.repository.storyOf(bookingId);
+  }
+
   /** What an account holds, all organisations together; debit positive. */
   balanceMinor(account: AccountName, currency: string, organisationId?: string): number {
     return this.repository

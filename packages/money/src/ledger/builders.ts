@@ -95,6 +95,19 @@ export function refundEntry(head: EntryHead, refund: RefundPosting): JournalEntr
   ]);
 }
 
+/** A refund that the marketplace bears: the owner keeps what was earned, and the fee stands. */
+export function goodwillRefundEntry(
+  head: EntryHead,
+  refund: { operatorId: string; netMinor: number; vatMinor: number },
+): JournalEntry {
+  requirePositive({ netMinor: refund.netMinor, vatMinor: refund.vatMinor });
+  return journalEntry(head, [
+    debit('adjustments', refund.netMinor),
+    debit('VAT', refund.vatMinor),
+    credit('refunds', refund.netMinor + refund.vatMinor, refund.operatorId),
+  ]);
+}
+
 /** The provider has returned the refund to the operator's card. */
 export function refundReturnedEntry(
   head: EntryHead,

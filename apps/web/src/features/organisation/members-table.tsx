@@ -2,21 +2,26 @@ import { Button, Select, Skeleton, Stack, Table, TextInput } from '@mantine/core
 import { useForm } from '@mantine/form';
 import { modals } from '@mantine/modals';
 import { notifications } from '@mantine/notifications';
-import { type Member, routes } from '@skyberth/shared';
+import { type Member, ROLES_OF_KIND, type Role, routes } from '@skyberth/shared';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { call } from '../../lib/api-client.js';
 import { fieldErrors, sentenceOf } from '../../lib/problem-fields.js';
+import { useSession } from '../../lib/session.js';
 import { DayTime } from '../../ui/day-time.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import classes from './organisation.module.css';
 import { organisationQueries } from './organisation-queries.js';
 
-type OrdinaryRole = 'manager' | 'member' | 'viewer';
-const ROLES: { value: OrdinaryRole; label: string }[] = [
-  { value: 'manager', label: 'Manager: everything, with members and money' },
-  { value: 'member', label: 'Member: does the work' },
-  { value: 'viewer', label: 'Viewer: reads' },
-];
+const ROLE_WORDS: Readonly<Record<Role, string>> = {
+  manager: 'Manager: everything, with members and money',
+  member: 'Member: does the work',
+  viewer: 'Viewer: reads',
+  finance: 'Finance: payouts, ledger, invoices',
+  admin: 'Admin: approvals, disputes, accounts, members',
+};
+
+/** Roles that exist where the caller belongs. */
+const useRoles = (): readonly Role[] => ROLES_OF_KIND[useSession().active.organisationKind];
 
 export function MembersTable({ mayManage }: { readonly mayManage: boolean }) {
   const members = useQuery(organisationQueries.members());
@@ -49,12 +54,12 @@ export function MembersTable({ mayManage }: { readonly mayManage: boolean }) {
 
 function MemberRow({ member, mayManage }: { readonly member: Member; readonly mayManage: boolean }) {
   const client = useQueryClient();
+  const roles = useRoles();
   const refresh = () => client.invalidateQueries({ queryKey: organisationQueries.members().queryKey });
   const refused = (error: Error) =>
     notifications.show({ title: `${member.name} stays as before`, message: sentenceOf(error), color: 'buoy' });
   const change = useMutation({
-    mutationFn: (role: OrdinaryRole) =>
-      call(routes.changeMember, { params: { personId: member.personId }, body: { role } }),
+    mutationFn: (role: Role) => call(routes.changeMember, { params: { personId: member.personId }, body: { role } }),
     onSuccess: refresh,
     onError: refused,
   });
@@ -80,11 +85,11 @@ function MemberRow({ member, mayManage }: { readonly member: Member; readonly ma
         {mayManage ? (
           <Select
             aria-label={`Role of ${member.name}`}
-            data={ROLES.map((role) => ({ value: role.value, label: role.value }))}
+            data={[...roles]}
             value={member.role}
             allowDeselect={false}
             disabled={change.isPending}
-            onChange={(role) => role && change.mutate(role as OrdinaryRole)}
+            onChange={(role) => role && change.mutate(role as Role)}
             w={130}
           />
         ) : (
@@ -119,7 +124,11 @@ function MemberRow({ member, mayManage }: { readonly member: Member; readonly ma
 
 function InviteForm() {
   const client = useQueryClient();
-  const form = useForm({ initialValues: { name: '', email: '', role: 'member' as OrdinaryRole } });
+  const roles = useRoles();
+  const usual = roles.includes('member') ? 'member' : (roles[0] ?? 'member');
+  const form = useForm<{ name: string; email: string; role: Role }>({
+    initialValues: { name: '', email: '', role: usual },
+  });
   const invite = useMutation({
     mutationFn: (values: typeof form.values) => call(routes.inviteMember, { body: values }),
     onSuccess: (member) => {
@@ -135,7 +144,12 @@ function InviteForm() {
       <div className={classes.row}>
         <TextInput label="Name" required {...form.getInputProps('name')} />
         <TextInput label="E-mail" type="email" required {...form.getInputProps('email')} />
-        <Select label="Role" data={ROLES} allowDeselect={false} {...form.getInputProps('role')} />
+        <Select
+          label="Role"
+          data={roles.map((role) => ({ value: role, label: ROLE_WORDS[role] }))}
+          allowDeselect={false}
+          {...form.getInputProps('role')}
+        />
         <Button type="submit" loading={invite.isPending}>
           Invite
         </Button>

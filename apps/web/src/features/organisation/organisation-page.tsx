@@ -13,7 +13,8 @@ import { organisationQueries } from './organisation-queries.js';
 export function OrganisationPage() {
   useTitle('Organisation');
   const session = useSession();
-  const mayManage = useCan()('organisation.manage');
+  const may = useCan();
+  const mayManage = may('organisation.manage');
   const details = useQuery(organisationQueries.details());
   return (
     <>
@@ -39,7 +40,7 @@ export function OrganisationPage() {
           <h2 id="members-title" className={classes.heading}>
             Members
           </h2>
-          <MembersTable mayManage={mayManage} />
+          <MembersTable mayManage={may('members.manage')} />
         </section>
       </div>
     </>
