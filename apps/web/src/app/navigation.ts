@@ -18,12 +18,14 @@ const OPERATOR: readonly Page[] = [
   { label: 'Bookings', to: paths.bookings },
   { label: 'Spacecraft', to: paths.spacecraft },
   { label: 'Invoices', to: paths.invoices },
+  { label: 'Monthly account', to: paths.monthlyAccount },
 ];
 const OWNER: readonly Page[] = [
   HOME,
   { label: 'Stations', to: paths.stations },
   { label: 'Availability', to: paths.availability },
   { label: 'Requests', to: paths.requests, count: 'requests', countNoun: 'requests wait for an answer' },
+  { label: 'Run sheet', to: paths.runSheet },
   { label: 'Bookings', to: paths.bookings },
   { label: 'Earnings', to: paths.invoices },
 ];
@@ -31,6 +33,8 @@ const FINANCE: readonly Page[] = [
   HOME,
   { label: 'Ledger', to: paths.ledger },
   { label: 'Reconciliation', to: paths.reconciliation },
+  { label: 'Tax and fees', to: paths.taxAndFees },
+  { label: 'Monthly accounts', to: paths.creditAccounts },
   { label: 'Invoices', to: paths.invoices },
   { label: 'Bookings', to: paths.bookings },
 ];

@@ -142,10 +142,34 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('../features/help/help-page.js')).HelpPage }),
   },
   {
+    path: paths.monthlyAccount,
+    lazy: async () => ({
+      Component: (await import('../features/credit-accounts/monthly-account-page.js')).MonthlyAccountPage,
+    }),
+  },
+  {
+    path: paths.creditAccounts,
+    lazy: async () => ({
+      Component: (await import('../features/credit-accounts/credit-accounts-page.js')).CreditAccountsPage,
+    }),
+  },
+  {
+    path: paths.taxAndFees,
+    lazy: async () => ({ Component: (await import('../features/tax/tax-page.js')).TaxPage }),
+  },
+  {
     path: paths.reconciliation,
     lazy: async () => ({
       Component: (await import('../features/reconciliation/reconciliation-page.js')).ReconciliationPage,
     }),
+  },
+  {
+    path: paths.runSheet,
+    lazy: async () => ({ Component: (await import('../features/run-sheet/run-sheet-page.js')).RunSheetPage }),
+  },
+  {
+    path: paths.runSheetWall,
+    lazy: async () => ({ Component: (await import('../features/run-sheet/wall-page.js')).WallPage }),
   },
   {
     path: paths.ledger,

@@ -24,6 +24,8 @@ export const paths = {
   antenna: (id: string) => `/stations/antennas/${id}`,
   antennaTab: (id: string, tab: string) => `/stations/antennas/${id}?tab=${tab}`,
   requests: '/requests',
+  runSheet: '/run-sheet',
+  runSheetWall: '/run-sheet/wall',
   availability: '/availability',
   availabilityOf: (antennaId: string) => `/availability?antenna=${antennaId}`,
   approvals: '/approvals',
@@ -34,6 +36,9 @@ export const paths = {
   help: '/help',
   ledger: '/ledger',
   reconciliation: '/reconciliation',
+  monthlyAccount: '/monthly-account',
+  creditAccounts: '/monthly-accounts',
+  taxAndFees: '/tax-and-fees',
   system: '/system',
   organisation: '/organisation',
 } as const;
