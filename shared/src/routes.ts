@@ -2,23 +2,27 @@
 import { accountRoutes } from './contracts/accounts.js';
 import { availabilityRoutes } from './contracts/availability.js';
 import { bookingRoutes } from './contracts/bookings.js';
-import { creditRoutes } from './contracts/credit.js';
 import { clearanceRoutes } from './contracts/clearances.js';
+import { creditRoutes } from './contracts/credit.js';
 import { disputeRoutes } from './contracts/disputes.js';
 import { driftRoutes } from './contracts/drift.js';
 import { ephemerisRoutes } from './contracts/ephemerides.js';
 import { fileRoutes } from './contracts/files.js';
+import { groupRoutes } from './contracts/groups.js';
 import { invoiceRoutes } from './contracts/invoices.js';
 import { ledgerRoutes } from './contracts/ledger.js';
 import { liveRoutes } from './contracts/live.js';
 import { marketRoutes } from './contracts/market.js';
 import { maskHistoryRoutes } from './contracts/mask-history.js';
 import { oversightRoutes } from './contracts/oversight.js';
+import { planningRoutes } from './contracts/planning.js';
 import { reconciliationRoutes } from './contracts/reconciliation.js';
 import { runSheetRoutes } from './contracts/run-sheet.js';
 import { spacecraftRoutes } from './contracts/spacecraft.js';
+import { standbyRoutes } from './contracts/standby.js';
 import { stationRoutes } from './contracts/stations.js';
 import { systemRoutes } from './contracts/system.js';
+import { taxRoutes } from './contracts/tax.js';
 
 export const routes = {
   ...accountRoutes,
@@ -28,7 +32,10 @@ export const routes = {
   ...maskHistoryRoutes,
   ...availabilityRoutes,
   ...marketRoutes,
+  ...planningRoutes,
   ...bookingRoutes,
+  ...groupRoutes,
+  ...standbyRoutes,
   ...liveRoutes,
   ...runSheetRoutes,
   ...driftRoutes,
@@ -38,6 +45,7 @@ export const routes = {
   ...invoiceRoutes,
   ...ledgerRoutes,
   ...creditRoutes,
+  ...taxRoutes,
   ...reconciliationRoutes,
   ...oversightRoutes,
   ...systemRoutes,

@@ -140,7 +140,7 @@ describe('a chargeback', () => {
     const charge = await chargeOf(booking.id);
     await shop.payments.hook('disputes', { charge: charge.id, reason: 'fraudulent' });
     await shop.settle();
-    const [opened] = (await must(call(routes.listChargebacks, { as: finance }))).items;
+    const [opened] = (await must(call(routes.listChargebacks, { query: {}, as: finance }))).items;
     expect(opened).toMatchObject({ bookingId: booking.id, state: 'open', amountMinor: booking.toPayMinor });
     expect(opened?.reservedMinor).toBeGreaterThan(0);
     expect(await balance('dispute reserve')).toBe(-(opened?.reservedMinor ?? 0));

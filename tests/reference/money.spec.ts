@@ -10,6 +10,7 @@ import {
   standardRateBasisPoints,
 } from '@skyberth/money';
 import { describe, expect, it } from 'vitest';
+import { currencyDecimals } from '../../apps/web/src/ui/format.js';
 
 const rowsOf = (name: string): string[][] =>
   readFileSync(new URL(`data/money/${name}`, import.meta.url), 'utf8')
@@ -27,6 +28,11 @@ describe('currency exponents against ISO 4217 list one, February 2026', () => {
     expect(CURRENCY_CODES).toEqual(priced.map((row) => row[0]).sort());
     for (const [code, , exponent] of priced)
       expect([code, currencyExponent(code as string)]).toEqual([code, Number(exponent)]);
+  });
+
+  it('are the same in the page, which has a table of its own', () => {
+    for (const [code, , exponent] of rows.filter((row) => row[2] !== ''))
+      expect([code, currencyDecimals(code as string)]).toEqual([code, Number(exponent)]);
   });
 
   it('keeps no amount in a code without a minor unit', () => {

@@ -3,9 +3,10 @@ import { Module } from '@nestjs/common';
 import { InvoicesController } from './invoices.controller.js';
 import { InvoiceRepository } from './invoices.repository.js';
 import { InvoiceService } from './invoices.service.js';
+import { TaxController } from './tax.controller.js';
 
 @Module({
-  controllers: [InvoicesController],
+  controllers: [InvoicesController, TaxController],
   providers: [InvoiceRepository, InvoiceService],
   exports: [InvoiceService],
 })

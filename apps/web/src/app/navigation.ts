@@ -42,6 +42,7 @@ const ADMIN: readonly Page[] = [
   HOME,
   { label: 'Approvals', to: paths.approvals, count: 'approvals', countNoun: 'stations wait for approval' },
   { label: 'Bookings', to: paths.bookings },
+  { label: 'Disputes', to: paths.disputes, count: 'disputes', countNoun: 'disputes wait for a decision' },
   { label: 'Accounts', to: paths.accounts },
   { label: 'Audit', to: paths.audit },
   { label: 'System', to: paths.system },

@@ -126,6 +126,18 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('../features/approvals/approval-page.js')).ApprovalPage }),
   },
   {
+    path: paths.disputes,
+    lazy: async () => ({ Component: (await import('../features/disputes/disputes-page.js')).DisputesPage }),
+  },
+  {
+    path: paths.dispute(':id'),
+    lazy: async () => ({ Component: (await import('../features/disputes/dispute-page.js')).DisputePage }),
+  },
+  {
+    path: paths.openDispute(':id'),
+    lazy: async () => ({ Component: (await import('../features/disputes/open-dispute-page.js')).OpenDisputePage }),
+  },
+  {
     path: paths.accounts,
     lazy: async () => ({ Component: (await import('../features/oversight/accounts-page.js')).AccountsPage }),
   },

@@ -73,6 +73,8 @@ describe('numbers', () => {
     expect(plain(formatMoney({ amountMinor: 8188, currency: 'CHF' }))).toBe('CHF 81.88');
     expect(plain(formatMoney({ amountMinor: 8188, currency: 'JPY' }))).toMatch(/8 188$/);
     expect(plain(formatMoney({ amountMinor: 8188, currency: 'KWD' }))).toBe('KWD 8.188');
+    // The engine's own data has no decimals for it; ISO 4217 (list one) has two.
+    expect(plain(formatMoney({ amountMinor: 8188, currency: 'HUF' }))).toBe('HUF 81.88');
   });
 
   it('writes volumes in decimal units', () => {

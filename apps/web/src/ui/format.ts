@@ -115,10 +115,18 @@ export interface Amount {
   readonly currency: string;
 }
 
-/** Decimals of a currency. Source: ISO 4217 minor units, as carried by ECMA-402 CurrencyDigits. */
-export function currencyDecimals(currency: string): number {
-  return new Intl.NumberFormat('en-GB', { style: 'currency', currency }).resolvedOptions().maximumFractionDigits ?? 2;
-}
+/**
+ * Currencies that have not two decimals, by ISO 4217 (list one, February 2026). Never the engine's own figures, which give
+ * none for HUF, IDR, IQD and others, so that amounts would be shown a hundred times too large.
+ */
+const DECIMALS = new Map<string, number>([
+  ...'BIF CLP DJF GNF ISK JPY KMF KRW PYG RWF UGX UYI VND VUV XAF XOF XPF'.split(' ').map((code) => [code, 0] as const),
+  ...'BHD IQD JOD KWD LYD OMR TND'.split(' ').map((code) => [code, 3] as const),
+  ...'CLF UYW'.split(' ').map((code) => [code, 4] as const),
+]);
+
+/** Decimals of a currency. */
+export const currencyDecimals = (currency: string): number => DECIMALS.get(currency) ?? 2;
 
 /** `€81.88`, `−€1 185.87`; a currency without a sign of its own is written `CHF 81.88`. */
 export function formatMoney({ amountMinor, currency }: Amount, whole = false): string {

@@ -5,7 +5,7 @@
  */
 import { MoneyError } from '../money-error.js';
 
-interface RateFrom {
+export interface RateFrom {
   /** First day, UTC, on which it holds. */
   readonly fromDay: string;
   readonly basisPoints: number;
@@ -70,6 +70,10 @@ const EU_STANDARD_RATES: Readonly<Record<string, readonly RateFrom[]>> = {
     { fromDay: '2025-01-01', basisPoints: 2300 },
   ],
 };
+
+/** Every rate that is kept with the day from which it holds, by ISO 3166 code; oldest first. */
+export const standardRates = (): readonly (readonly [country: string, steps: readonly RateFrom[]])[] =>
+  Object.entries(EU_STANDARD_RATES);
 
 /** ISO 3166 codes of the members, alphabetical. */
 export const EU_COUNTRIES: readonly string[] = Object.keys(EU_STANDARD_RATES);

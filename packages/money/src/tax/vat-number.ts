@@ -50,6 +50,14 @@ export type VatNumberCheck =
     }
   | { readonly ok: false; readonly sentence: string };
 
+/** Which VAT numbers are known here: prefix, form in words, and whether check digits are looked at too. */
+export const vatNumberForms = (): readonly { prefix: string; form: string; checksDigits: boolean }[] =>
+  Object.entries(FORMS).map(([prefix, { example }]) => ({
+    prefix,
+    form: example,
+    checksDigits: CHECK_DIGIT_RULES[prefix] !== undefined,
+  }));
+
 /**
  * Reads a VAT number with its country prefix; spaces, points and hyphens don't matter. A number that passes may still not
  * be registered: only the tax office knows that.

@@ -8,6 +8,7 @@ import { sentenceOf } from '../../lib/problem-fields.js';
 import { useCheckout } from '../../lib/use-checkout.js';
 import { formatMoney } from '../../ui/format.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
+import { AccountChoice } from './account-choice.js';
 import classes from './contact.module.css';
 
 const OTHER = 'other';
@@ -58,9 +59,10 @@ export function PaySection({ booking }: { readonly booking: Booking }) {
       >
         {card ? `Pay ${price} with card ending ${card.last4}` : `Pay ${price} on the payment page`}
       </Button>
+      <AccountChoice booking={booking} />
       <p className={classes.small}>
-        The sum is reserved now and taken once the contact has taken place. Until then you may cancel by the agreed
-        steps.
+        By card, the sum is reserved now and taken once the contact has taken place. Until then you may cancel by the
+        agreed steps.
       </p>
     </section>
   );
