@@ -24,12 +24,10 @@ export const PassGeometry = z.object({
 });
 export type PassGeometry = z.infer<typeof PassGeometry>;
 
-/** Elevation along the pass and the mask below it, equal steps from `fromUtc`; what the board draws. */
+/** Elevation along the pass and the mask below it, in equal steps from AOS to LOS; what the board draws. */
 export const Profile = z.object({
-  fromUtc: UtcTime,
-  stepS: z.number().positive(),
-  elevationDeg: z.array(z.number()),
-  maskDeg: z.array(z.number()),
+  elevationDeg: z.array(z.number()).min(2),
+  maskDeg: z.array(z.number()).min(1).describe('as many, or one where the mask is the same all along'),
 });
 export type Profile = z.infer<typeof Profile>;
 

@@ -1,7 +1,9 @@
 /** Gathers from the other features what a question to the pass engine needs. */
 import { Injectable } from '@nestjs/common';
 import { BookingRepository } from '../bookings/bookings.repository.js';
+import { ClearanceBook } from '../clearances/clearance-book.js';
 import { notFound } from '../platform/domain-error.js';
+import { WeightedCache } from '../platform/weighted-cache.js';
 import { ElementsService } from '../spacecraft/elements.service.js';
 import { EphemeridesService } from '../spacecraft/ephemerides.service.js';
 import { SpacecraftService } from '../spacecraft/spacecraft.service.js';
@@ -21,11 +23,25 @@ const MONTH_MS = 32 * 86_400_000;
 /** A pass that reaches over the end of a period is followed for a day or two. */
 const REACH_MS = 3 * 86_400_000;
 
+/** Antennas on sale with all that keeps them busy, as the engine takes them. */
+export interface Offered {
+  readonly sale: readonly SaleAntenna[];
+  readonly antennas: readonly AntennaInput[];
+}
+
+/** A new price becomes valid by itself, at a minute's notice; a hold always asks the database. */
+const STEADY_MS = 60_000;
+/** Questions whose antennas are kept. */
+const MAX_OFFERED = 16;
+
 @Injectable()
 export class MarketInputs {
+  private readonly offered = new WeightedCache<Offered & { readonly stamp: string }>(MAX_OFFERED);
+
   constructor(
     private readonly repository: MarketRepository,
     private readonly bookings: BookingRepository,
+    private readonly clearances: ClearanceBook,
     private readonly fleet: SpacecraftService,
     private readonly elements: ElementsService,
     private readonly ephemerides: EphemeridesService,
@@ -48,6 +64,7 @@ export class MarketInputs {
   craft(operatorId: string, ids: readonly string[], period: Period): CraftInput[] {
     const rows = this.fleet.forMarket(operatorId, ids);
     const busy = this.bookings.spacecraftBusyIn(ids, period.fromMs, period.toMs);
+    const clearances = groupBy(this.clearances.ofCraft(ids, period.fromMs, period.toMs), (each) => each.spacecraftId);
     const names = this.repository.antennaNames([...new Set(busy.map((each) => each.antennaId))]);
     return rows.map((row) => ({
       id: row.id,
@@ -55,6 +72,7 @@ export class MarketInputs {
       shortName: row.shortName,
       spans: this.spansOf(row.id, period),
       radios: row.radios,
+      clearances: clearances.get(row.id) ?? [],
       contacts: busy
         .filter((each) => each.spacecraftId === row.id)
         .map((each) => ({
@@ -64,6 +82,18 @@ export class MarketInputs {
           antennaName: names.get(each.antennaId) ?? 'another antenna',
         })),
     }));
+  }
+
+  /** For searches: what is on sale over a period, read anew only where anything was written since it was last asked. */
+  forSearch(operatorId: string, period: Period, stationIds: readonly string[], nowMs: number): Offered {
+    const key = `${operatorId} ${period.fromMs} ${period.toMs} ${Math.floor(nowMs / STEADY_MS)} ${stationIds.join(' ')}`;
+    const stamp = this.repository.writeStamp();
+    const known = this.offered.get(key);
+    if (known?.stamp === stamp) return known;
+    const sale = this.onSale(period, stationIds);
+    const offered = { stamp, sale, antennas: this.forEngine(operatorId, sale, period) };
+    this.offered.set(key, offered, 1);
+    return offered;
   }
 
   /** Antennas as the engine takes them, with what keeps them busy and what the caller has bought there. */
@@ -124,12 +154,29 @@ export class MarketInputs {
 
 /** Only what the engine uses: everything here is copied to a thread. */
 function engineFields(antenna: SaleAntenna): Omit<AntennaInput, 'busy' | 'bought'> {
-  const { id, version, name, site, mask, mount, tiltDeg, bands, timeZone, weekly, openings, blackouts, price } =
-    antenna;
+  const {
+    id,
+    stationId,
+    stationName,
+    version,
+    name,
+    site,
+    mask,
+    mount,
+    tiltDeg,
+    bands,
+    timeZone,
+    weekly,
+    openings,
+    blackouts,
+    price,
+  } = antenna;
   const { slewAzimuthDegPerS, slewElevationDegPerS, lowestReceiveDeg, lowestTransmitDeg, setupS, teardownS } = antenna;
   const { beams, minNoticeMin, horizonDays, minContactS, maxContactS, partsAllowed } = antenna;
   return {
     id,
+    stationId,
+    stationName,
     version,
     name,
     site,

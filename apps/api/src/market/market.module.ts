@@ -1,6 +1,7 @@
 /** Finding contact time: passes, offers, prices, and the files for flying a contact. */
 import { Inject, Module, type OnApplicationShutdown } from '@nestjs/common';
 import { BookingRecordsModule } from '../bookings/booking-records.module.js';
+import { ClearanceRecordsModule } from '../clearances/clearance-records.module.js';
 import { CONFIG, type Config } from '../platform/config.js';
 import { SpacecraftModule } from '../spacecraft/spacecraft.module.js';
 import { StationsModule } from '../stations/stations.module.js';
@@ -21,7 +22,7 @@ const engineFor = (config: Config): PassEngine =>
   config.passWorkers === 0 ? new InProcessEngine() : new PiscinaEngine(config.passWorkers);
 
 @Module({
-  imports: [BookingRecordsModule, SpacecraftModule, StationsModule],
+  imports: [BookingRecordsModule, ClearanceRecordsModule, SpacecraftModule, StationsModule],
   controllers: [MarketController],
   providers: [
     { provide: PASS_ENGINE, inject: [CONFIG], useFactory: engineFor },
@@ -33,7 +34,7 @@ const engineFor = (config: Config): PassEngine =>
     OfferService,
     ContactFiles,
   ],
-  exports: [MarketInputs, MarketService, OfferService, ContactFiles, PASS_ENGINE],
+  exports: [MarketInputs, MarketRepository, MarketService, OfferService, ContactFiles, PASS_ENGINE],
 })
 export class MarketModule implements OnApplicationShutdown {
   constructor(@Inject(PASS_ENGINE) private readonly engine: PassEngine) {}

@@ -20,6 +20,13 @@ const CHUNK = 500;
 export class MarketRepository {
   constructor(@Inject(DATABASE) private readonly db: SkyberthDatabase) {}
 
+  /** Changes with every write to the database, by whichever connection. */
+  writeStamp(): string {
+    const others = this.db.$client.pragma('data_version', { simple: true });
+    const own = this.db.$client.prepare('SELECT total_changes()').pluck().get();
+    return `${others} ${own}`;
+  }
+
   /** Names of antennas, also of those no longer on sale, by id. */
   antennaNames(ids: readonly string[]): Map<string, string> {
     const rows = chunks(ids).flatMap((some) =>

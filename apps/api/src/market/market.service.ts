@@ -100,8 +100,7 @@ export class MarketService {
     const period: Period = { fromMs: Date.parse(input.fromUtc), toMs: Date.parse(input.toUtc) };
     const about: Period = { fromMs: period.fromMs - ABOUT_MS, toMs: period.toMs + ABOUT_MS };
     const craft = this.inputs.craft(operatorId, [...new Set(input.spacecraftIds)], about);
-    const sale = this.inputs.onSale(about, input.stationIds);
-    const antennas = this.inputs.forEngine(operatorId, sale, about);
+    const { sale, antennas } = this.inputs.forSearch(operatorId, about, input.stationIds, nowMs);
     const pulse = newPulseMemory();
     const { searchId, ...wish } = input;
     const ask: SearchJob = {

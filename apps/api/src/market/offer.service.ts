@@ -5,7 +5,7 @@ import type { z } from 'zod';
 import { CONFIG, type Config } from '../platform/config.js';
 import { type Freshness, freshnessOf } from '../spacecraft/freshness.js';
 import { type Caution, cautionsFor } from './cautions.js';
-import { radiosFor } from './compute/objections.js';
+import { radiosFor, transmitBands } from './compute/objections.js';
 import { MarketRepository } from './market.repository.js';
 import { type PassAnswer, PassFinder } from './pass-finder.js';
 import { quoteFor } from './quote.js';
@@ -36,6 +36,8 @@ export interface BerthOffer {
   readonly spacecraftId: string;
   readonly antennaId: string;
   readonly beams: number;
+  /** Bands that the antenna would transmit in; empty where nothing is to be transmitted. */
+  readonly transmitBands: readonly string[];
   readonly cautions: readonly Caution[];
   /** Why it cannot be sold; empty where it can. */
   readonly reasons: readonly Reason[];
@@ -87,6 +89,7 @@ export class OfferService {
       spacecraftId: craft.id,
       antennaId: sale.id,
       beams: sale.beams,
+      transmitBands: request.need === 'downlink' ? [] : transmitBands(craft, answer.antenna, request.bands),
       cautions: cautionsFor({
         need: request.need,
         sun: null,

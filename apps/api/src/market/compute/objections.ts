@@ -3,6 +3,7 @@ import type { ClearanceVerdict, Objection } from '@skyberth/market';
 import { type Compatibility, compatibility } from '@skyberth/orbit';
 import type { AntennaBand, Need, Polarisation, Radio } from '@skyberth/shared';
 import type { AntennaInput, CraftInput } from '../workers/job-types.js';
+import { clearanceOf } from './clearance.js';
 
 export interface Fit {
   readonly objections: readonly Objection[];
@@ -20,14 +21,6 @@ const DIRECTIONS: Readonly<Record<Need, readonly Direction[]>> = {
   both: ['downlink', 'uplink'],
 };
 const BAND_SIDE = { downlink: 'receive', uplink: 'transmit' } as const;
-
-/** The wording of a transmission that nobody has cleared. */
-export const NOT_CLEARED: ClearanceVerdict = {
-  valid: [],
-  sentence:
-    'Transmitting needs a clearance for this spacecraft at this station and band, and there is none. Uplink is not sold without one.',
-  remedy: 'Take the pass for downlink only.',
-};
 
 /** Radios that the wish is about: of its directions and bands. */
 export function radiosFor(craft: CraftInput, need: Need, bands: readonly string[]): Radio[] {
@@ -50,10 +43,23 @@ export function fitOf(craft: CraftInput, antenna: AntennaInput, wish: { need: Ne
   const sides = DIRECTIONS[wish.need].map((direction) => sideOf(craft, antenna, direction, wish.bands));
   return {
     objections: sides.flatMap((side) => (side.objection === null ? [] : [side.objection])),
-    clearance: wish.need === 'downlink' ? null : NOT_CLEARED,
+    clearance: wish.need === 'downlink' ? null : clearanceOf(craft, antenna, transmitBands(craft, antenna, wish.bands)),
     // Both directions together begin where the first of them does.
     floorDeg: Math.min(...sides.map((side) => side.floorDeg)),
   };
+}
+
+/**
+ * Bands in which this antenna would transmit to the spacecraft: of its uplink radios that the antenna serves, or, without
+ * such a radio on file, of the antenna itself.
+ */
+export function transmitBands(craft: CraftInput, antenna: AntennaInput, bands: readonly string[]): string[] {
+  const radios = craft.radios.filter((radio) => radio.direction === 'uplink');
+  const all =
+    radios.length > 0
+      ? radios.filter((radio) => serving(radio, antenna).band !== null).map((radio) => radio.band)
+      : antenna.bands.filter((band) => band.direction === 'transmit').map((band) => band.band);
+  return [...new Set(all)].filter((band) => bands.length === 0 || bands.includes(band));
 }
 
 interface Side {

@@ -97,14 +97,11 @@ export class PassTexts {
       elevations[i] = look.elevationDeg;
       masks[i] = horizon.maskDeg(look.azimuthDeg);
     }
-    out.ascii('"profile":{"fromUtc":');
-    out.utc(stay.aosMs);
-    out.ascii(',"stepS":');
-    out.fixed(stepMs / 1000, 8);
-    out.ascii(',"elevationDeg":[');
+    out.ascii('"profile":{"elevationDeg":[');
     writeList(out, elevations, 1);
     out.ascii('],"maskDeg":[');
-    writeList(out, masks, 1);
+    if (horizon.mask.flat) out.fixed(masks[0] ?? 0, 1);
+    else writeList(out, masks, 1);
     out.ascii(']}');
   }
 }

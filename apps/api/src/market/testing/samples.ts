@@ -6,6 +6,8 @@ import type { AntennaInput, CraftInput, SearchJob } from '../workers/job-types.j
 export function sampleAntenna(changes: Partial<AntennaInput> = {}): AntennaInput {
   return {
     id: '01939f7e-0000-7000-8000-0000000000a1',
+    stationId: '01939f7e-0000-7000-8000-0000000000e1',
+    stationName: 'Hollenvik',
     version: 1,
     name: 'Hollenvik 1',
     site: { latitudeDeg: 69.3, longitudeDeg: 16.1, altitudeM: 40 },
@@ -87,6 +89,7 @@ export function sampleCraft(changes: Partial<CraftInput> = {}): CraftInput {
     shortName: 'W4',
     spans: [],
     radios: [sampleRadio()],
+    clearances: [],
     contacts: [],
     ...changes,
   };

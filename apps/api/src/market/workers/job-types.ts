@@ -17,6 +17,7 @@ import type {
   WeeklyRule,
 } from '@skyberth/shared';
 import type { z } from 'zod';
+import type { CraftClearance } from '../../clearances/clearance-book.js';
 import type { KeptEphemeris } from '../../spacecraft/ephemerides.service.js';
 
 /** One element set and the passes it answers for: those whose highest point lies in `[fromMs, toMs)`. */
@@ -39,6 +40,8 @@ export interface CraftInput {
   /** Sorted and touching; empty where the spacecraft has no elements. */
   readonly spans: readonly ElementsSpan[];
   readonly radios: readonly Radio[];
+  /** Leave to transmit to it, at whichever station; also what is asked for and not yet in force. */
+  readonly clearances: readonly CraftClearance[];
   /** Contacts it already has, on whichever antenna. */
   readonly contacts: readonly (Interval & { readonly antennaId: string; readonly antennaName: string })[];
 }
@@ -59,6 +62,8 @@ export interface BusyInput {
 /** An antenna on sale with all that bounds what it can sell in the period asked for. */
 export interface AntennaInput {
   readonly id: string;
+  readonly stationId: string;
+  readonly stationName: string;
   /** Rises with every change that can move a pass. */
   readonly version: number;
   readonly name: string;

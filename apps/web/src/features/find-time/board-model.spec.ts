@@ -38,9 +38,13 @@ describe('the board of a search', () => {
     expect(model.stations[0]?.rows[0]?.detail).toEqual(['7.3 m, S and X', 'from €6.40 a min']);
   });
 
-  it('ends a profile at its last sample', () => {
-    const profile = humpProfile(foundPass().profile);
-    expect(profile.toMs - profile.fromMs).toBe(600_000);
+  it('draws a profile from AOS to LOS, over a flat mask as over an uneven one', () => {
+    const pass = foundPass();
+    const { aosUtc, losUtc } = pass.geometry;
+    const profile = humpProfile(pass);
+    expect([profile.fromMs, profile.toMs]).toEqual([Date.parse(aosUtc), Date.parse(losUtc)]);
+    const flat = humpProfile({ ...pass, profile: { ...pass.profile, maskDeg: [5] } });
+    expect([...flat.maskDeg]).toEqual(pass.profile.elevationDeg.map(() => 5));
   });
 });
 

@@ -96,7 +96,7 @@ function boardHump(
     losMs: Date.parse(geometry.losUtc),
     highestMs: Date.parse(geometry.tcaUtc),
     highestDeg: geometry.maxElevationDeg,
-    profile: humpProfile(pass.profile),
+    profile: humpProfile(pass),
     state: pass.state === 'not for sale' && pass.reasons[0]?.code === 'taken' ? 'taken' : STATES[pass.state],
     ...(price ? { priceLabel: formatMoney(price, true), priceText: formatMoney(price) } : {}),
     ...(booking?.holdEndsUtc ? { holdEndsMs: Date.parse(booking.holdEndsUtc) } : {}),
@@ -105,14 +105,15 @@ function boardHump(
   };
 }
 
-/** Equal steps from `fromUtc`; the end follows from their number. */
-export function humpProfile(profile: FoundPass['profile']): HumpProfile {
-  const fromMs = Date.parse(profile.fromUtc);
+/** Equal steps from AOS to LOS; a mask that is one number is the same all along. */
+export function humpProfile({ geometry, profile }: Pick<FoundPass, 'geometry' | 'profile'>): HumpProfile {
+  const { elevationDeg, maskDeg } = profile;
   return {
-    fromMs,
-    toMs: fromMs + Math.max(1, profile.elevationDeg.length - 1) * profile.stepS * 1000,
-    elevationDeg: Float32Array.from(profile.elevationDeg),
-    maskDeg: Float32Array.from(profile.maskDeg),
+    fromMs: Date.parse(geometry.aosUtc),
+    toMs: Date.parse(geometry.losUtc),
+    elevationDeg: Float32Array.from(elevationDeg),
+    maskDeg:
+      maskDeg.length === 1 ? new Float32Array(elevationDeg.length).fill(maskDeg[0] ?? 0) : Float32Array.from(maskDeg),
   };
 }
 

@@ -22,7 +22,7 @@ export function foundPass(over: Partial<FoundPass> = {}): FoundPass {
       maxElevationDeg: 84.9,
     },
     source: 'element set',
-    profile: { fromUtc: '2026-12-01T15:00:00.000Z', stepS: 300, elevationDeg: [7, 84, 8], maskDeg: [8, 5, 9] },
+    profile: { elevationDeg: [7, 84, 8], maskDeg: [8, 5, 9] },
     state: 'for sale',
     bookingId: null,
     currency: 'EUR',

@@ -40,7 +40,7 @@ function NextPass({ pass, result, nowMs }: { pass: FoundPass; result: SearchResu
   const [part] = pass.parts;
   return (
     <>
-      <SmallHump profile={humpProfile(pass.profile)} aosMs={aosMs} losMs={losMs} widthPx={72} heightPx={34} />
+      <SmallHump profile={humpProfile(pass)} aosMs={aosMs} losMs={losMs} widthPx={72} heightPx={34} />
       <span>
         <strong>{nearTime(aosMs, nowMs)}</strong> {result.spacecraft.find((one) => one.id === pass.spacecraftId)?.name}
         <br />
