@@ -72,7 +72,7 @@ export class AntennaCatalogue {
     return saleAntenna(
       whole,
       openings,
-      repeated.map((each) => ({ fromMs: each.fromMs, toMs: each.toMs, reason: reasonWords(each.rule) })),
+      repeated.map((each) => ({ fromMs: each.fromMs, toMs: each.toMs, reason: each.rule.reason })),
     );
   }
 
@@ -103,8 +103,9 @@ function saleAntenna(
     bands: whole.bands.map(bandView),
     weekly: whole.rules.map(ruleView),
     openings,
+    // A note is for the owner's own people; buyers read the reason.
     blackouts: [
-      ...whole.blackouts.map((each) => ({ fromMs: each.fromMs, toMs: each.toMs, reason: reasonWords(each) })),
+      ...whole.blackouts.map((each) => ({ fromMs: each.fromMs, toMs: each.toMs, reason: each.reason })),
       ...repeated,
     ].sort((a, b) => a.fromMs - b.fromMs),
     price: {
@@ -120,6 +121,3 @@ function saleAntenna(
     onSale: state === 'on sale' && missingOf(whole).length === 0,
   };
 }
-
-const reasonWords = ({ reason, note }: { readonly reason: string; readonly note: string }): string =>
-  note ? `${reason}: ${note}` : reason;

@@ -56,6 +56,12 @@ export function readWallText(text: string): number {
   return Date.parse(`${text.length === 10 ? `${text}T00:00:00` : text.replace(' ', 'T')}Z`);
 }
 
+/** The instant at which the clock in `timeZone` reads this text; NaN for what is no reading. */
+export function instantOfText(text: string, timeZone: string): number {
+  const wallMs = readWallText(text);
+  return Number.isNaN(wallMs) ? Number.NaN : instantOf(wallMs, timeZone);
+}
+
 /** Wall time of the Monday 00:00 that begins the week of a wall time. */
 export function weekStart(wallMs: number): number {
   const day = Math.floor(wallMs / (24 * HOUR_MS));

@@ -8,16 +8,19 @@ import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import { z } from 'zod';
 import { call } from '../../lib/api-client.js';
+import type { AntennaChange } from '../../lib/availability-queries.js';
 import { formRules } from '../../lib/form-rules.js';
 import { paths } from '../../lib/paths.js';
 import { fieldErrors, sentenceOf } from '../../lib/problem-fields.js';
 import { serverNowMs } from '../../lib/server-clock.js';
 import { stationQueries } from '../../lib/station-queries.js';
 import { useLeaveGuard } from '../../lib/use-leave-guard.js';
+import { ChangeEffect } from '../../ui/change-effect.js';
 import { DayTime } from '../../ui/day-time.js';
 import { formatNumber } from '../../ui/format.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import classes from './antenna.module.css';
+import { CalendarRules } from './calendar-rules.js';
 import { openHoursAWeek } from './hours-words.js';
 import type { TabProps } from './tab-props.js';
 import { useAntennaChange } from './use-antenna-change.js';
@@ -106,16 +109,39 @@ export function HoursTab({ antenna, station, mayWrite }: TabProps) {
             </Group>
           )}
         </section>
-        <Blackouts antenna={antenna} mayWrite={mayWrite} timeZone={station.timeZone} />
       </form>
-      <Paper component="section" withBorder className={classes.card} aria-labelledby="week-title">
-        <h2 id="week-title" className={classes.cardTitle}>
-          Open {formatNumber(openHoursAWeek(form.values.rules), 1)} h a week
-        </h2>
-        <WeekDrawing rules={form.values.rules} />
-      </Paper>
+      <div className={classes.stack}>
+        <Paper component="section" withBorder className={classes.card} aria-labelledby="week-title">
+          <h2 id="week-title" className={classes.cardTitle}>
+            Open {formatNumber(openHoursAWeek(form.values.rules), 1)} h a week
+          </h2>
+          <WeekDrawing rules={form.values.rules} />
+        </Paper>
+        {mayWrite && (
+          <Paper component="section" withBorder className={classes.card} aria-labelledby="hours-effect-title">
+            <h2 id="hours-effect-title" className={classes.cardTitle}>
+              What these hours would do
+            </h2>
+            <ChangeEffect
+              antennaId={antenna.id}
+              change={form.isDirty() ? triedHours(form.values) : null}
+              idle="Change the hours to see the coming week by them."
+            />
+          </Paper>
+        )}
+      </div>
+      <div className={classes.form}>
+        <CalendarRules antenna={antenna} station={station} mayWrite={mayWrite} />
+        <Blackouts antenna={antenna} mayWrite={mayWrite} timeZone={station.timeZone} />
+      </div>
     </div>
   );
+}
+
+/** The hours as they are typed, as a change to try; null while they are incomplete. */
+function triedHours(values: z.input<typeof HoursInput>): AntennaChange | null {
+  const hours = HoursInput.safeParse(values);
+  return hours.success ? { hours: hours.data.rules } : null;
 }
 
 interface BlackoutsProps extends Pick<TabProps, 'antenna' | 'mayWrite'> {

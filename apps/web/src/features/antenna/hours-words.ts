@@ -49,24 +49,3 @@ export function openSpans(rules: readonly WeeklyRule[]): WeekSpan[] {
 /** Hours open in a week without a clock change. */
 export const openHoursAWeek = (rules: readonly WeeklyRule[]): number =>
   openSpans(rules).reduce((sum, span) => sum + span.toMin - span.fromMin, 0) / 60;
-
-/** `Mon to Fri, Sun` */
-export function daysText(days: readonly number[]): string {
-  const sorted = [...new Set(days)].sort((a, b) => a - b);
-  const runs: number[][] = [];
-  for (const day of sorted) {
-    const run = runs.at(-1);
-    if (run && run.at(-1) === day - 1) run.push(day);
-    else runs.push([day]);
-  }
-  const name = (day: number | undefined) => DAYS[(day ?? 1) - 1] ?? '';
-  return runs
-    .map((run) => (run.length > 2 ? `${name(run[0])} to ${name(run.at(-1))}` : run.map(name).join(', ')))
-    .join(', ');
-}
-
-/** Whether a time of day and weekday lies in hours that may run past midnight. */
-export function isWithin(rule: WeeklyRule, day: number, timeOfDay: string): boolean {
-  const at = (day - 1) * DAY_MINUTES + minuteOf(timeOfDay);
-  return spansOf(rule).some((span) => at >= span.fromMin && at < span.toMin);
-}

@@ -1,27 +1,25 @@
 /** What a changed mask does: to the sky, and to contacts that are sold already. */
-import { Anchor, Paper } from '@mantine/core';
+import { Paper } from '@mantine/core';
 import type { ReactNode } from 'react';
-import { Link } from 'react-router-dom';
 import type { EditableMaskPoint } from '../../drawing/mask-editor/mask-editor-types.js';
-import { paths } from '../../lib/paths.js';
-import { formatDayTime, formatDegrees, formatDuration, formatNumber } from '../../ui/format.js';
+import { ChangeEffect } from '../../ui/change-effect.js';
+import { formatDegrees, formatNumber } from '../../ui/format.js';
 import { Figure, Figures } from '../../ui/values.js';
-import { largestChange, skyAbovePercent } from './mask-draft.js';
+import { largestChange, maskOf, skyAbovePercent } from './mask-draft.js';
 import classes from './mask-tab.module.css';
-import { type MaskTouch, touchOf } from './sold-contacts.js';
-import type { SoldContacts } from './use-sold-tracks.js';
 
 interface MaskEffectProps {
   readonly before: readonly EditableMaskPoint[];
   readonly now: readonly EditableMaskPoint[];
   readonly isPublished: boolean;
-  readonly sold: SoldContacts;
+  readonly antennaId: string;
+  readonly isChanged: boolean;
   /** Why the mask in force was published. */
   readonly reason: string;
   readonly children: ReactNode;
 }
 
-export function MaskEffect({ before, now, isPublished, sold, reason, children }: MaskEffectProps) {
+export function MaskEffect({ before, now, isPublished, antennaId, isChanged, reason, children }: MaskEffectProps) {
   const nowPercent = skyAbovePercent(now);
   const change = nowPercent - skyAbovePercent(before);
   const { azimuthDeg, changeDeg } = largestChange(before, now);
@@ -46,7 +44,12 @@ export function MaskEffect({ before, now, isPublished, sold, reason, children }:
           In force because: <strong>{reason}</strong>
         </p>
       )}
-      <Touched before={before} now={now} sold={sold} />
+      <ChangeEffect antennaId={antennaId} change={isChanged ? { mask: maskOf(now) } : null} />
+      {isChanged && (
+        <p className={classes.small}>
+          Publishing does not move or cancel what is sold: write to the buyer, or cancel with a full refund.
+        </p>
+      )}
       {children}
       <p className={classes.small}>The mask bounds what is sold; it is no safety limit for dish or people.</p>
     </Paper>
@@ -70,50 +73,4 @@ function Change({ percent, azimuthDeg, changeDeg, isPublished }: ChangeProps) {
       {formatDegrees(changeDeg)}.
     </span>
   );
-}
-
-function Touched({ before, now, sold }: Pick<MaskEffectProps, 'before' | 'now' | 'sold'>) {
-  if (sold.isPending) return <p className={classes.small}>Reading the sold contacts ...</p>;
-  if (sold.total === 0) return <p className={classes.small}>No contact is sold here for the time to come.</p>;
-  const touched = sold.tracks.flatMap(({ booking, sold: track }) => {
-    const touch = touchOf(track, before, now);
-    return touch ? [{ booking, touch }] : [];
-  });
-  const looked = sold.tracks.length;
-  return (
-    <div>
-      <h3 className={classes.subtitle}>Sold contacts it touches</h3>
-      {touched.length === 0 ? (
-        <p className={classes.small}>None of the next {looked}.</p>
-      ) : (
-        <ul className={classes.touched}>
-          {touched.map(({ booking, touch }) => (
-            <li key={booking.id} data-lost={touch.isLost || undefined}>
-              <Anchor component={Link} to={paths.booking(booking.id)}>
-                {booking.spacecraftName}, {formatDayTime(Date.parse(booking.aosUtc))}
-              </Anchor>
-              <strong>{touchWords(touch)}</strong>
-            </li>
-          ))}
-        </ul>
-      )}
-      <p className={classes.small}>
-        {looked < sold.total && `Looked at the next ${looked} of ${sold.total}. `}
-        Publishing does not move or cancel what is sold: write to the buyer, or cancel with a full refund.
-      </p>
-    </div>
-  );
-}
-
-/** Less would be written as 0 s. */
-const LEAST_MS = 500;
-
-function touchWords({ startsLaterMs, endsSoonerMs, cutOutMs, isLost }: MaskTouch): string {
-  if (isLost) return 'falls below the mask';
-  const words = [
-    startsLaterMs > LEAST_MS ? `starts ${formatDuration(startsLaterMs)} later` : '',
-    cutOutMs > LEAST_MS ? `loses ${formatDuration(cutOutMs)} between` : '',
-    endsSoonerMs > LEAST_MS ? `ends ${formatDuration(endsSoonerMs)} sooner` : '',
-  ];
-  return words.filter(Boolean).join(', ');
 }

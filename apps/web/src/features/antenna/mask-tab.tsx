@@ -29,7 +29,7 @@ export function MaskTab({ antenna, mayWrite }: TabProps) {
   const [pickedId, pick] = useState<string | null>(null);
   const [reason, setReason] = useState('');
   const isChanged = !isSameMask(draft.points, inForce);
-  const sold = useSoldTracks(antenna.id);
+  const tracks = useSoldTracks(antenna.id);
   useLeaveGuard(isChanged, 'this mask', true);
   const publish = useAntennaChange(
     () => call(routes.setMask, { params: { id: antenna.id }, body: { points: maskOf(draft.points), reason } }),
@@ -51,7 +51,6 @@ export function MaskTab({ antenna, mayWrite }: TabProps) {
     change(more, true);
     pick(id);
   };
-  const tracks = sold.tracks.map((one) => one.sold);
   const minutes = tracks.length > 0 ? minutesBySector(tracks, inForce, draft.settled) : undefined;
   return (
     <div className={classes.layout}>
@@ -111,7 +110,8 @@ export function MaskTab({ antenna, mayWrite }: TabProps) {
         before={inForce}
         now={draft.settled}
         isPublished={isPublished}
-        sold={sold}
+        antennaId={antenna.id}
+        isChanged={mayWrite && isChanged}
         reason={antenna.maskReason}
       >
         {mayWrite && (

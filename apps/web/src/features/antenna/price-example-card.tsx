@@ -1,24 +1,30 @@
 import { Group, NumberInput, Paper, Select, TextInput } from '@mantine/core';
+import { useDebouncedValue } from '@mantine/hooks';
+import { PriceCardInput } from '@skyberth/shared';
+import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
+import { availabilityQueries, type ExampleInput } from '../../lib/availability-queries.js';
+import { sentenceOf } from '../../lib/problem-fields.js';
 import { formatMoney } from '../../ui/format.js';
 import classes from './antenna.module.css';
 import { DAYS, minuteOf } from './hours-words.js';
-import { type ExampleCard, type ExampleContact, exampleLines } from './price-example.js';
+import type { PriceValues } from './price-values.js';
 
 interface PriceExampleProps {
-  readonly card: ExampleCard;
-  readonly currency: string;
+  readonly antennaId: string;
+  readonly card: PriceValues;
 }
 
-const BEGIN: ExampleContact = { lengthS: 480, day: 2, startLocal: '18:10', boughtHoursBefore: 24 };
+type Contact = ExampleInput['contact'];
+const BEGIN: Contact = { lengthS: 480, day: 2, startLocal: '18:10', boughtHoursBefore: 24 };
+/** Typing settles before the server is asked. */
+const SETTLE_MS = 300;
 
-/** One contact, worked out by the card as it is typed. */
-export function PriceExample({ card, currency }: PriceExampleProps) {
+/** One contact, worked out by the server from the card as it is typed. */
+export function PriceExample({ antennaId, card }: PriceExampleProps) {
   const [contact, setContact] = useState(BEGIN);
   const [time, setTime] = useState(BEGIN.startLocal);
-  const lines = exampleLines(card, contact);
-  const totalMinor = lines.reduce((sum, line) => sum + line.amountMinor, 0);
-  const set = (part: Partial<ExampleContact>) => setContact({ ...contact, ...part });
+  const set = (part: Partial<Contact>) => setContact({ ...contact, ...part });
   const setNumber = (name: 'lengthS' | 'boughtHoursBefore', perUnit: number) => (value: number | string) => {
     const given = Number(value);
     if (value !== '' && Number.isFinite(given)) set({ [name]: given * perUnit });
@@ -33,6 +39,7 @@ export function PriceExample({ card, currency }: PriceExampleProps) {
           label="Length"
           suffix=" min"
           min={1}
+          max={1_440}
           value={contact.lengthS / 60}
           onChange={setNumber('lengthS', 60)}
           miw={80}
@@ -60,28 +67,53 @@ export function PriceExample({ card, currency }: PriceExampleProps) {
           label="Bought before"
           suffix=" h"
           min={0}
+          max={8_760}
           value={contact.boughtHoursBefore}
           onChange={setNumber('boughtHoursBefore', 1)}
           miw={84}
         />
       </Group>
-      <table className={classes.sum} style={{ marginTop: 12 }}>
-        <tbody aria-live="polite">
-          {lines.map((line) => (
-            <tr key={`${line.label} ${line.detail}`}>
-              <td>
-                {line.label}
-                {line.detail && <small>{line.detail}</small>}
-              </td>
-              <td>{formatMoney({ amountMinor: line.amountMinor, currency })}</td>
-            </tr>
-          ))}
-          <tr data-total>
-            <td>Before VAT</td>
-            <td>{formatMoney({ amountMinor: totalMinor, currency })}</td>
-          </tr>
-        </tbody>
-      </table>
+      <Sum antennaId={antennaId} card={card} contact={contact} />
     </Paper>
   );
 }
+
+function Sum({ antennaId, card, contact }: PriceExampleProps & { readonly contact: Contact }) {
+  const typed = PriceCardInput.safeParse(card);
+  const [asked] = useDebouncedValue(typed.success ? { price: typed.data, contact } : null, SETTLE_MS);
+  const example = useQuery({
+    ...availabilityQueries.priceExample(antennaId, asked ?? { price: EMPTY_CARD, contact }),
+    enabled: asked !== null,
+  });
+  if (!typed.success) return <p className={classes.quiet}>The sum stands here once the card is filled in.</p>;
+  if (example.error)
+    return (
+      <p className={classes.fieldError} role="alert">
+        {sentenceOf(example.error)}
+      </p>
+    );
+  if (!example.data) return <p className={classes.quiet}>Working it out ...</p>;
+  const { currency, lines, totalMinor } = example.data;
+  return (
+    <table className={classes.sum} style={{ marginTop: 12 }}>
+      <tbody aria-live="polite">
+        {lines.map((line) => (
+          <tr key={`${line.label} ${line.detail}`}>
+            <td>
+              {line.label}
+              <small>{line.detail}</small>
+            </td>
+            <td>{formatMoney({ amountMinor: line.amountMinor, currency })}</td>
+          </tr>
+        ))}
+        <tr data-total>
+          <td>Before VAT</td>
+          <td>{formatMoney({ amountMinor: totalMinor, currency })}</td>
+        </tr>
+      </tbody>
+    </table>
+  );
+}
+
+/** Only names the query while it waits. */
+const EMPTY_CARD: ExampleInput['price'] = { perMinuteMinor: 0, setupMinor: 0, minimumMinor: 0, ladder: [] };

@@ -1,7 +1,6 @@
 /** What the price form holds while it is filled in. */
 import type { PriceCard } from '@skyberth/shared';
 import type { NumberOrEmpty } from '../../lib/form-rules.js';
-import type { ExampleCard } from './price-example.js';
 
 export interface BusyValues {
   days: number[];
@@ -40,20 +39,6 @@ export function priceValues(card: PriceCard | null): PriceValues {
 }
 
 const orZero = (value: NumberOrEmpty): number => (value === '' ? 0 : value);
-
-/** The card as far as it is typed, for the example; an empty field counts as nothing. */
-export function typedCard(values: PriceValues): ExampleCard {
-  return {
-    perMinuteMinor: orZero(values.perMinuteMinor),
-    setupMinor: orZero(values.setupMinor),
-    minimumMinor: orZero(values.minimumMinor),
-    busyHours: values.busyHours.map((hours) => ({ ...hours, percent: orZero(hours.percent) })),
-    shortNotice: values.shortNotice && {
-      underHours: orZero(values.shortNotice.underHours),
-      percent: orZero(values.shortNotice.percent),
-    },
-  };
-}
 
 export interface DrawnStep {
   readonly percent: number;

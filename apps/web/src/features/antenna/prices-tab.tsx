@@ -1,19 +1,24 @@
 /** The price card: what a contact costs, what a cancellation gives back, and an example worked out while it is typed. */
 import { Button, Group, NumberInput, Paper, Switch } from '@mantine/core';
 import { useForm } from '@mantine/form';
-import { PriceCardInput, routes } from '@skyberth/shared';
+import { type BodyInput, PriceCardInput, routes } from '@skyberth/shared';
+import { useQueryClient } from '@tanstack/react-query';
+import { useState } from 'react';
 import { RefundSteps } from '../../drawing/curves/refund-steps.js';
 import { call } from '../../lib/api-client.js';
+import { type AntennaChange, availabilityQueries } from '../../lib/availability-queries.js';
 import { formRules } from '../../lib/form-rules.js';
 import { fieldErrors, sentenceOf } from '../../lib/problem-fields.js';
 import { useLeaveGuard } from '../../lib/use-leave-guard.js';
-import { formatDayTime } from '../../ui/format.js';
+import { instantOfText } from '../../lib/zone-time.js';
+import { ChangeEffect } from '../../ui/change-effect.js';
 import { MoneyInput } from '../../ui/money-input.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import classes from './antenna.module.css';
+import { PriceCards, ValidFrom } from './price-cards.js';
 import { PriceExample } from './price-example-card.js';
 import { BusyRows, LadderRows, type PriceForm, VolumeRows } from './price-rows.js';
-import { drawnSteps, type PriceValues, priceValues, typedCard } from './price-values.js';
+import { drawnSteps, type PriceValues, priceValues } from './price-values.js';
 import type { TabProps } from './tab-props.js';
 import { useAntennaChange } from './use-antenna-change.js';
 
@@ -21,10 +26,12 @@ const rules = formRules(PriceCardInput);
 
 export function PricesTab({ antenna, station, mayWrite }: TabProps) {
   const form = useForm<PriceValues>({ initialValues: priceValues(antenna.price) });
+  const client = useQueryClient();
   const currency = antenna.price?.currency ?? station.currency;
+  const [validFrom, setValidFrom] = useState<string | null>(null);
   useLeaveGuard(form.isDirty() && !form.submitting, 'these prices', true);
   const save = useAntennaChange(
-    (body: ReturnType<typeof PriceCardInput.parse>) => call(routes.setPrice, { params: { id: antenna.id }, body }),
+    (body: BodyInput<typeof routes.setPrice>) => call(routes.setPrice, { params: { id: antenna.id }, body }),
     'The prices are published. Quotes already given keep theirs.',
   );
   const submit = form.onSubmit(async (values) => {
@@ -34,7 +41,13 @@ export function PricesTab({ antenna, station, mayWrite }: TabProps) {
       return;
     }
     try {
-      const next = await save.mutateAsync(PriceCardInput.parse(values));
+      const card = PriceCardInput.parse(values);
+      const fromMs = validFrom === null ? null : instantOfText(validFrom, station.timeZone);
+      const next = await save.mutateAsync(
+        fromMs === null ? card : { ...card, validFromUtc: new Date(fromMs).toISOString() },
+      );
+      setValidFrom(null);
+      void client.invalidateQueries({ queryKey: availabilityQueries.priceCards(antenna.id).queryKey });
       form.setInitialValues(priceValues(next.price));
       form.setValues(priceValues(next.price));
       form.resetDirty(priceValues(next.price));
@@ -60,6 +73,7 @@ export function PricesTab({ antenna, station, mayWrite }: TabProps) {
         <ShortNotice form={priceForm} />
         <VolumeRows form={priceForm} />
         <LadderRows form={priceForm} />
+        {mayWrite && <ValidFrom value={validFrom} onChange={setValidFrom} timeZone={station.timeZone} />}
         {mayWrite && (
           <Group>
             <Button type="submit" size="md" loading={form.submitting} disabled={!form.isDirty()}>
@@ -72,12 +86,20 @@ export function PricesTab({ antenna, station, mayWrite }: TabProps) {
             )}
           </Group>
         )}
-        {antenna.price && (
-          <p className={classes.quiet}>In force since {formatDayTime(Date.parse(antenna.price.validFromUtc))} UTC.</p>
-        )}
+        <PriceCards antennaId={antenna.id} currency={currency} />
       </div>
       <div className={`${classes.stack} ${classes.sticky}`}>
-        <PriceExample card={typedCard(form.values)} currency={currency} />
+        <PriceExample antennaId={antenna.id} card={form.values} />
+        <Paper component="section" withBorder className={classes.card} aria-labelledby="price-effect-title">
+          <h2 id="price-effect-title" className={classes.cardTitle}>
+            What these prices would do
+          </h2>
+          <ChangeEffect
+            antennaId={antenna.id}
+            change={mayWrite && form.isDirty() ? triedPrice(form.values) : null}
+            idle="Change a price to see the coming week and the last month by it."
+          />
+        </Paper>
         <Paper component="section" withBorder className={classes.card} aria-labelledby="refund-title">
           <h2 id="refund-title" className={classes.cardTitle}>
             What a cancellation brings back
@@ -87,6 +109,12 @@ export function PricesTab({ antenna, station, mayWrite }: TabProps) {
       </div>
     </form>
   );
+}
+
+/** The card as it is typed, as a change to try; null while it is incomplete. */
+function triedPrice(values: PriceValues): AntennaChange | null {
+  const price = PriceCardInput.safeParse(values);
+  return price.success ? { price: price.data } : null;
 }
 
 function BaseFields({ form, currency }: { readonly form: PriceForm; readonly currency: string }) {

@@ -5,6 +5,7 @@ import type { Station } from '@skyberth/shared';
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Link, useSearchParams } from 'react-router-dom';
+import { availabilityQueries } from '../../lib/availability-queries.js';
 import { bookingQueries } from '../../lib/booking-queries.js';
 import { paths } from '../../lib/paths.js';
 import { sentenceOf } from '../../lib/problem-fields.js';
@@ -20,6 +21,7 @@ import { ProblemNotice } from '../../ui/problem-notice.js';
 import classes from './availability.module.css';
 import { BlackoutForm, type WallSpan } from './blackout-form.js';
 import { SHOWN_STATES } from './calendar-events.js';
+import { CalendarFileForm } from './calendar-file-form.js';
 import { WeekCalendar } from './week-calendar.js';
 
 const HOUR_MS = 3_600_000;
@@ -93,19 +95,23 @@ function OneWeek({ chosen, choices, week, onAntenna, onWeek }: OneWeekProps) {
   const asked = week ? readWallText(week) : Number.NaN;
   const startMs = weekStart(Number.isNaN(asked) ? nowWallMs : asked);
   const [blackout, setBlackout] = useState<WallSpan | null>(null);
-  const antenna = useQuery(stationQueries.antenna(chosen.antennaId));
+  const [isReading, setReading] = useState(false);
+  const shown = {
+    fromUtc: new Date(instantOf(startMs, timeZone) - DAY_MS).toISOString(),
+    toUtc: new Date(instantOf(startMs + WEEK_MS, timeZone) + DAY_MS).toISOString(),
+  };
+  const calendar = useQuery(availabilityQueries.calendar(chosen.antennaId, shown.fromUtc, shown.toUtc));
   const bookings = useQuery(
     bookingQueries.list({
       antennaId: chosen.antennaId,
-      fromUtc: new Date(instantOf(startMs, timeZone) - DAY_MS).toISOString(),
-      toUtc: new Date(instantOf(startMs + WEEK_MS, timeZone) + DAY_MS).toISOString(),
+      ...shown,
       state: SHOWN_STATES,
       sort: 'aos',
       pageSize: 200,
     }),
   );
   const dayOf = (wallMs: number) => wallText(wallMs).slice(0, 10);
-  const error = antenna.error ?? bookings.error;
+  const error = calendar.error ?? bookings.error;
   const nextHour = Math.ceil(nowWallMs / HOUR_MS) * HOUR_MS;
   return (
     <>
@@ -140,19 +146,27 @@ function OneWeek({ chosen, choices, week, onAntenna, onWeek }: OneWeekProps) {
             Week after
           </Button>
           {mayWrite && (
-            <Button onClick={() => setBlackout({ fromWallMs: nextHour, toWallMs: nextHour + 2 * HOUR_MS })}>
-              Block out time
-            </Button>
+            <>
+              <Button variant="default" onClick={() => setReading(true)}>
+                Read from a calendar file
+              </Button>
+              <Button onClick={() => setBlackout({ fromWallMs: nextHour, toWallMs: nextHour + 2 * HOUR_MS })}>
+                Block out time
+              </Button>
+            </>
           )}
         </Group>
       </div>
       {error && (
-        <ProblemNotice title="The week could not be read" onRetry={() => void antenna.refetch()}>
+        <ProblemNotice
+          title="The week could not be read"
+          onRetry={() => void (calendar.error ? calendar : bookings).refetch()}
+        >
           {sentenceOf(error)}
         </ProblemNotice>
       )}
-      {!error && (!antenna.data || !bookings.data) && <Skeleton height={560} />}
-      {antenna.data && bookings.data && (
+      {!error && (!calendar.data || !bookings.data) && <Skeleton height={560} />}
+      {calendar.data && bookings.data && (
         <>
           <p className={classes.quiet}>
             Times on the station's clock, {timeZone.replaceAll('_', ' ')}.
@@ -162,9 +176,8 @@ function OneWeek({ chosen, choices, week, onAntenna, onWeek }: OneWeekProps) {
             </Anchor>
           </p>
           <WeekCalendar
-            antenna={antenna.data}
+            calendar={calendar.data}
             bookings={bookings.data.items}
-            timeZone={timeZone}
             weekStartMs={startMs}
             mayWrite={mayWrite}
             onSelect={setBlackout}
@@ -174,18 +187,33 @@ function OneWeek({ chosen, choices, week, onAntenna, onWeek }: OneWeekProps) {
       <Modal
         opened={blackout !== null}
         onClose={() => setBlackout(null)}
-        title={`Block out time on ${chosen.name}`}
+        title="Block out time"
         size="lg"
         closeButtonProps={{ 'aria-label': 'Close' }}
       >
-        {blackout && antenna.data && (
+        {blackout && (
           <BlackoutForm
-            antenna={antenna.data}
+            antennaId={chosen.antennaId}
+            antennas={groupsOf(choices)}
             timeZone={timeZone}
             initial={blackout}
             onDone={() => setBlackout(null)}
           />
         )}
+      </Modal>
+      <Modal
+        opened={isReading}
+        onClose={() => setReading(false)}
+        title="Block out time from a calendar file"
+        size="lg"
+        closeButtonProps={{ 'aria-label': 'Close' }}
+      >
+        <CalendarFileForm
+          antennaId={chosen.antennaId}
+          antennas={groupsOf(choices)}
+          timeZone={timeZone}
+          onDone={() => setReading(false)}
+        />
       </Modal>
     </>
   );

@@ -1,87 +1,92 @@
-/** Blocks out time; shows before and after what is sold inside it. */
-import { Anchor, Button, Group, Select, Stack, TextInput } from '@mantine/core';
+/** Blocks out time, once or again and again, on one antenna or several; shows before what it would do. */
+import { Button, Group, MultiSelect, Select, Stack, TextInput } from '@mantine/core';
 import { DateTimePicker } from '@mantine/dates';
 import { useForm } from '@mantine/form';
-import { notifications } from '@mantine/notifications';
-import { type Antenna, BlackoutInput, type BookingSummary, routes } from '@skyberth/shared';
-import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
-import { Link } from 'react-router-dom';
-import { call } from '../../lib/api-client.js';
-import { bookingQueries } from '../../lib/booking-queries.js';
+import { BLACKOUT_REASONS, BlackoutEntry } from '@skyberth/shared';
 import { formRules } from '../../lib/form-rules.js';
-import { paths } from '../../lib/paths.js';
 import { fieldErrors, sentenceOf } from '../../lib/problem-fields.js';
-import { stationQueries } from '../../lib/station-queries.js';
-import { instantOf, readWallText, wallText } from '../../lib/zone-time.js';
+import { instantOfText, wallText } from '../../lib/zone-time.js';
+import { ChangeEffect } from '../../ui/change-effect.js';
 import { formatDayTime } from '../../ui/format.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
+import { asRrule, type Repeats, RepeatsField } from '../../ui/repeats-field.js';
 import classes from './availability.module.css';
-import { touchedBy } from './calendar-events.js';
+import { useAddBlackouts } from './use-add-blackouts.js';
 
 export interface WallSpan {
   readonly fromWallMs: number;
   readonly toWallMs: number;
 }
 
+/** Antennas of one station, as a select takes them. */
+export interface AntennaGroup {
+  readonly group: string;
+  readonly items: { readonly value: string; readonly label: string }[];
+}
+
 interface BlackoutFormProps {
-  readonly antenna: Antenna;
+  readonly antennaId: string;
+  readonly antennas: AntennaGroup[];
   readonly timeZone: string;
   readonly initial: WallSpan;
   readonly onDone: () => void;
 }
 
-const REASONS = ['maintenance', 'own use', 'weather', 'other'] as const;
-const REACH_MS = 86_400_000;
-/** Two days of contacts around a blackout are more than one antenna can serve in a page of this size. */
-const MOST = 200;
-
 interface Values {
+  antennaIds: string[];
   from: string;
   to: string;
-  reason: (typeof REASONS)[number];
+  repeats: Repeats;
+  reason: BlackoutEntry['reason'];
   note: string;
 }
 
-const utcOf = (wall: string, timeZone: string): string => {
-  const wallMs = readWallText(wall);
-  return Number.isNaN(wallMs) ? '' : new Date(instantOf(wallMs, timeZone)).toISOString();
-};
+const check = formRules(BlackoutEntry);
+const MINUTE_MS = 60_000;
 
-const check = formRules(BlackoutInput);
+/** Its length is that between the two instants, so a night of a clock change is as long as it really is. */
+const entryOf = ({ from, to, repeats, reason, note }: Values, timeZone: string) => ({
+  startLocal: from.slice(0, 16).replace(' ', 'T'),
+  durationMin: Math.round((instantOfText(to, timeZone) - instantOfText(from, timeZone)) / MINUTE_MS),
+  endLocal: null,
+  timeZone,
+  rrule: asRrule(repeats),
+  reason,
+  note,
+});
 
-export function BlackoutForm({ antenna, timeZone, initial, onDone }: BlackoutFormProps) {
-  const client = useQueryClient();
-  const bodyOf = ({ from, to, reason, note }: Values) => ({
-    fromUtc: utcOf(from, timeZone),
-    toUtc: utcOf(to, timeZone),
-    reason,
-    note,
-  });
+export function BlackoutForm({ antennaId, antennas, timeZone, initial, onDone }: BlackoutFormProps) {
   const form = useForm<Values>({
     initialValues: {
+      antennaIds: [antennaId],
       from: wallText(initial.fromWallMs),
       to: wallText(initial.toWallMs),
+      repeats: { kind: 'once', text: '' },
       reason: 'maintenance',
       note: '',
     },
-    validate: (values) => wallErrors(check(bodyOf(values))),
+    validate: (values) => ({
+      ...namedErrors(check(entryOf(values, timeZone))),
+      ...(values.antennaIds.length === 0 ? { antennaIds: 'Choose at least one antenna.' } : {}),
+    }),
   });
-  const save = useMutation({
-    mutationFn: (values: Values) =>
-      call(routes.addBlackout, { params: { id: antenna.id }, body: BlackoutInput.parse(bodyOf(values)) }),
-    onSuccess: ({ touches }) => {
-      void client.invalidateQueries({ queryKey: stationQueries.all });
-      const left = touches.length === 0 ? '' : ` ${touches.length} sold inside it stay yours to serve.`;
-      notifications.show({ message: `The time is blocked out.${left}` });
-      onDone();
-    },
-    onError: (error) => form.setErrors(wallErrors(fieldErrors(error))),
+  const save = useAddBlackouts(onDone);
+  const submit = form.onSubmit(async (values) => {
+    const entries = [BlackoutEntry.parse(entryOf(values, timeZone))];
+    try {
+      await save.mutateAsync({ antennaIds: values.antennaIds, entries });
+    } catch (error) {
+      form.setErrors(namedErrors(fieldErrors(error)));
+    }
   });
-  const { fromUtc, toUtc } = bodyOf(form.values);
+  const [fromMs, toMs] = [instantOfText(form.values.from, timeZone), instantOfText(form.values.to, timeZone)];
+  const tried = BlackoutEntry.safeParse(entryOf(form.values, timeZone));
+  const [first] = form.values.antennaIds;
   return (
-    <form onSubmit={form.onSubmit((values) => save.mutate(values))} noValidate>
+    <form onSubmit={submit} noValidate>
       <Stack>
         {save.error && <ProblemNotice title="The time stays open">{sentenceOf(save.error)}</ProblemNotice>}
+        <MultiSelect label="Antennas" data={antennas} searchable {...form.getInputProps('antennaIds')} />
         <Group grow align="start">
           <DateTimePicker
             label="From, on the station's clock"
@@ -90,20 +95,28 @@ export function BlackoutForm({ antenna, timeZone, initial, onDone }: BlackoutFor
           />
           <DateTimePicker label="To" valueFormat="ddd D MMM YYYY HH:mm" {...form.getInputProps('to')} />
         </Group>
-        {fromUtc && toUtc && (
+        {fromMs < toMs && (
           <p className={classes.quiet}>
-            In UTC: {formatDayTime(Date.parse(fromUtc))} to {formatDayTime(Date.parse(toUtc))}.
+            In UTC: {formatDayTime(fromMs)} to {formatDayTime(toMs)}.
           </p>
         )}
-        <Select label="Reason" data={[...REASONS]} allowDeselect={false} {...form.getInputProps('reason')} />
+        <RepeatsField
+          value={form.values.repeats}
+          onChange={(repeats) => form.setFieldValue('repeats', repeats)}
+          error={form.errors['repeats']}
+        />
+        <Select label="Reason" data={[...BLACKOUT_REASONS]} allowDeselect={false} {...form.getInputProps('reason')} />
         <TextInput
           label="Note"
           description="Only your own people read it."
           maxLength={120}
           {...form.getInputProps('note')}
         />
-        {fromUtc && toUtc && toUtc > fromUtc && (
-          <SoldInside antennaId={antenna.id} fromMs={Date.parse(fromUtc)} toMs={Date.parse(toUtc)} />
+        {first !== undefined && (
+          <ChangeEffect antennaId={first} change={tried.success ? { addBlackouts: [tried.data] } : null} />
+        )}
+        {form.values.antennaIds.length > 1 && (
+          <p className={classes.quiet}>That is for the first antenna; sold contacts on the others stay sold too.</p>
         )}
         <Group>
           <Button type="submit" loading={save.isPending}>
@@ -118,59 +131,15 @@ export function BlackoutForm({ antenna, timeZone, initial, onDone }: BlackoutFor
   );
 }
 
-/** The API's fields are in UTC; the form's are on the station's clock. */
-function wallErrors(errors: Record<string, string>): Record<string, string> {
+/** The API names the fields of an entry; the form has its own. */
+function namedErrors(errors: Record<string, string>): Record<string, string> {
   const named: Record<string, string> = {};
   for (const [path, message] of Object.entries(errors)) {
-    if (path === 'fromUtc') named['from'] = message.startsWith('Invalid') ? 'Choose when it begins.' : message;
-    else if (path === 'toUtc') named['to'] = message.startsWith('Invalid') ? 'Choose when it ends.' : message;
-    else named[path] = message;
+    const field = path.replace(/^entries\.0\./, '');
+    if (field === 'startLocal') named['from'] = message;
+    else if (field === 'durationMin') named['to'] = message.startsWith('Invalid') ? 'Choose when it ends.' : message;
+    else if (field === 'rrule') named['repeats'] = message;
+    else named[field] = message;
   }
   return named;
-}
-
-interface SoldInsideProps {
-  readonly antennaId: string;
-  readonly fromMs: number;
-  readonly toMs: number;
-}
-
-function SoldInside({ antennaId, fromMs, toMs }: SoldInsideProps) {
-  const bookings = useQuery(
-    bookingQueries.list({
-      antennaId,
-      fromUtc: new Date(fromMs - REACH_MS).toISOString(),
-      toUtc: new Date(toMs + REACH_MS).toISOString(),
-      sort: 'aos',
-      pageSize: MOST,
-    }),
-  );
-  if (!bookings.data) return <p className={classes.quiet}>Looking for sold contacts ...</p>;
-  const touched = touchedBy(bookings.data.items, fromMs, toMs);
-  if (touched.length === 0) return <p className={classes.quiet}>No sold contact lies inside it.</p>;
-  return (
-    <div className={classes.touched} role="status">
-      <strong>
-        {touched.length} sold {touched.length === 1 ? 'contact lies' : 'contacts lie'} inside it, and{' '}
-        {touched.length === 1 ? 'stays' : 'stay'} sold.
-      </strong>
-      <ul>
-        {touched.map((booking) => (
-          <TouchedContact key={booking.id} booking={booking} />
-        ))}
-      </ul>
-      Serve them all the same, or cancel each on its page; the buyer then gets all of it back.
-    </div>
-  );
-}
-
-function TouchedContact({ booking }: { readonly booking: BookingSummary }) {
-  return (
-    <li>
-      <Anchor component={Link} to={paths.booking(booking.id)}>
-        {booking.spacecraftName}, {formatDayTime(Date.parse(booking.aosUtc))}
-      </Anchor>{' '}
-      for {booking.operatorName}
-    </li>
-  );
 }

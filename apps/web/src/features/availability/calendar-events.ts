@@ -1,9 +1,8 @@
 /** What the week's calendar draws: opening hours, blackouts and contacts as wall times of the station. */
-import type { Antenna, BookingSummary } from '@skyberth/shared';
+import type { AntennaCalendar, BookingSummary } from '@skyberth/shared';
 import { wallTimeOf } from '../../lib/zone-time.js';
 
 const DAY_MS = 86_400_000;
-const MINUTE_MS = 60_000;
 
 export type CalendarKind = 'open' | 'blackout' | 'contact' | 'asked';
 
@@ -15,8 +14,6 @@ export interface CalendarSpan {
   readonly fromWallMs: number;
   readonly toWallMs: number;
 }
-
-const minutesOf = (timeOfDay: string): number => Number(timeOfDay.slice(0, 2)) * 60 + Number(timeOfDay.slice(3, 5));
 
 /** Cuts a span at midnights and to the week: a calendar draws one day's part at a time. */
 export function byDay(span: CalendarSpan, weekStartMs: number): CalendarSpan[] {
@@ -30,36 +27,26 @@ export function byDay(span: CalendarSpan, weekStartMs: number): CalendarSpan[] {
   return parts;
 }
 
-/** The weekly rules in the week that begins on a Monday, with the night that runs in from the Sunday before. */
-export function openingSpans(rules: Antenna['availability'], weekStartMs: number): CalendarSpan[] {
-  return rules.flatMap((rule, index) => {
-    const from = minutesOf(rule.fromLocal);
-    const to = minutesOf(rule.toLocal);
-    const lengthMin = to > from ? to - from : to + 1440 - from;
-    const days = rule.days.includes(7) ? [0, ...rule.days] : rule.days;
-    return days.flatMap((day) => {
-      const fromWallMs = weekStartMs + (day - 1) * DAY_MS + from * MINUTE_MS;
-      const span = {
-        id: `open ${index} ${day}`,
-        kind: 'open' as const,
-        title: 'Open',
-        fromWallMs,
-        toWallMs: fromWallMs + lengthMin * MINUTE_MS,
-      };
-      return byDay(span, weekStartMs);
-    });
-  });
+/** When the antenna is open, weekly hours and openings together. */
+export function openingSpans(calendar: AntennaCalendar, weekStartMs: number): CalendarSpan[] {
+  return calendar.open.flatMap((open, index) =>
+    byDay({ ...wallSpan(open, calendar.timeZone), id: `open${index}`, kind: 'open', title: 'Open' }, weekStartMs),
+  );
 }
 
-export function blackoutSpans(blackouts: Antenna['blackouts'], timeZone: string, weekStartMs: number): CalendarSpan[] {
+const wallSpan = ({ fromUtc, toUtc }: { fromUtc: string; toUtc: string }, timeZone: string) => ({
+  fromWallMs: wallTimeOf(Date.parse(fromUtc), timeZone),
+  toWallMs: wallTimeOf(Date.parse(toUtc), timeZone),
+});
+
+export function blackoutSpans({ blackouts, timeZone }: AntennaCalendar, weekStartMs: number): CalendarSpan[] {
   return blackouts.flatMap((blackout) =>
     byDay(
       {
+        ...wallSpan(blackout, timeZone),
         id: blackout.id,
         kind: 'blackout',
-        title: blackout.note ? `${blackout.reason}: ${blackout.note}` : blackout.reason,
-        fromWallMs: wallTimeOf(Date.parse(blackout.fromUtc), timeZone),
-        toWallMs: wallTimeOf(Date.parse(blackout.toUtc), timeZone),
+        title: `${blackout.note ? `${blackout.reason}: ${blackout.note}` : blackout.reason}${blackout.repeats ? ', again and again' : ''}`,
       },
       weekStartMs,
     ),
@@ -85,19 +72,5 @@ export function contactSpans(
       },
       weekStartMs,
     ),
-  );
-}
-
-/** Contacts that a blackout would lie over; they stay sold. */
-export function touchedBy(
-  bookings: readonly BookingSummary[],
-  fromMs: number,
-  toMs: number,
-): readonly BookingSummary[] {
-  return bookings.filter(
-    (booking) =>
-      ['awaiting owner', 'confirmed', 'under way'].includes(booking.state) &&
-      Date.parse(booking.aosUtc) < toMs &&
-      Date.parse(booking.losUtc) > fromMs,
   );
 }

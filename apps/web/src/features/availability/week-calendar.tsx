@@ -3,7 +3,7 @@ import { Box, UnstyledButton } from '@mantine/core';
 import { modals } from '@mantine/modals';
 import { notifications } from '@mantine/notifications';
 import { type ScheduleEventData, WeekView } from '@mantine/schedule';
-import { type Antenna, type BookingSummary, routes } from '@skyberth/shared';
+import { type AntennaCalendar, type BookingSummary, routes } from '@skyberth/shared';
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { type ComponentPropsWithoutRef, useEffect, useMemo, useRef } from 'react';
 import { useNavigate } from 'react-router-dom';
@@ -18,9 +18,8 @@ import type { WallSpan } from './blackout-form.js';
 import { blackoutSpans, type CalendarSpan, contactSpans, openingSpans } from './calendar-events.js';
 
 interface WeekCalendarProps {
-  readonly antenna: Antenna;
+  readonly calendar: AntennaCalendar;
   readonly bookings: readonly BookingSummary[];
-  readonly timeZone: string;
   readonly weekStartMs: number;
   readonly mayWrite: boolean;
   readonly onSelect: (span: WallSpan) => void;
@@ -50,18 +49,19 @@ const spanOf = (event: ScheduleEventData): CalendarSpan | undefined =>
   event.payload?.['span'] as CalendarSpan | undefined;
 
 export function WeekCalendar(props: WeekCalendarProps) {
-  const { antenna, bookings, timeZone, weekStartMs, mayWrite, onSelect } = props;
+  const { calendar, bookings, weekStartMs, mayWrite, onSelect } = props;
+  const { timeZone } = calendar;
   const navigate = useNavigate();
   const askOpen = useOpenAgain();
   const viewport = useScrollToHour(weekStartMs, timeZone);
   const events = useMemo(
     () =>
       [
-        ...openingSpans(antenna.availability, weekStartMs),
-        ...blackoutSpans(antenna.blackouts, timeZone, weekStartMs),
+        ...openingSpans(calendar, weekStartMs),
+        ...blackoutSpans(calendar, weekStartMs),
         ...contactSpans(bookings, timeZone, weekStartMs),
       ].map(eventOf),
-    [antenna, bookings, timeZone, weekStartMs],
+    [calendar, bookings, timeZone, weekStartMs],
   );
   const open = (event: ScheduleEventData) => {
     const span = spanOf(event);
@@ -158,17 +158,18 @@ function Legend() {
 function useOpenAgain(): (id: string, title: string) => void {
   const client = useQueryClient();
   const remove = useMutation({
-    mutationFn: (id: string) => call(routes.removeBlackout, { params: { id } }),
+    mutationFn: (id: string) => call(routes.removeCalendarEntries, { body: { ids: [id] } }),
     onSuccess: () => {
       void client.invalidateQueries({ queryKey: stationQueries.all });
-      notifications.show({ message: 'That time is open again, within the weekly hours.' });
+      notifications.show({ message: 'That time is open again, within the opening hours.' });
     },
     onError: (error) => notifications.show({ title: 'It stays closed', message: sentenceOf(error), color: 'buoy' }),
   });
   return (id, title) =>
     modals.openConfirmModal({
       title: `Open this time again? (${title})`,
-      children: 'The whole blackout goes, and operators can book the time at once, within the weekly hours.',
+      children:
+        'The whole blackout goes, every time that it comes, and operators can book the time at once, within the opening hours.',
       labels: { confirm: 'Open it again', cancel: 'Leave it closed' },
       onConfirm: () => remove.mutate(id),
     });
