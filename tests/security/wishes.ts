@@ -19,6 +19,7 @@ export interface Targets {
   readonly invoice: string;
   readonly visit: string;
   readonly file: string;
+  readonly clearance: string;
   readonly member: string;
   readonly organisation: string;
   readonly dispute: string;
@@ -34,6 +35,7 @@ export const nowhere = (): Targets => ({
   invoice: randomUUID(),
   visit: randomUUID(),
   file: randomUUID(),
+  clearance: randomUUID(),
   member: randomUUID(),
   organisation: randomUUID(),
   dispute: randomUUID(),
@@ -70,6 +72,21 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
   const booking = { id: to.booking };
   return {
     uploadFile: {},
+    getClearance: { params: { id: to.clearance } },
+    requestClearance: {
+      body: {
+        spacecraftId: to.spacecraft,
+        stationId: to.station,
+        band: 'S',
+        validFromUtc: FROM,
+        validToUtc: '2027-12-20T10:00:00Z',
+        purpose: 'Commands.',
+        fileIds: [to.file],
+      },
+    },
+    answerClearance: { params: { id: to.clearance }, body: { answer: 'grant' } },
+    checkClearance: { params: { id: to.clearance }, body: { answer: 'put in force' } },
+    withdrawClearance: { params: { id: to.clearance }, body: { reason: 'No longer needed.' } },
     downloadFile: { params: { id: to.file } },
     signUp: {
       body: {

@@ -3,10 +3,11 @@ import { type DynamicModule, Module } from '@nestjs/common';
 import { AccountsModule } from './accounts/accounts.module.js';
 import { AvailabilityModule } from './availability/availability.module.js';
 import { BookingsModule } from './bookings/bookings.module.js';
+import { ClearancesModule } from './clearances/clearances.module.js';
+import { CreditModule } from './credit/credit.module.js';
 import { DisputesModule } from './disputes/disputes.module.js';
 import { DriftModule } from './drift/drift.module.js';
 import { FilesModule } from './files/files.module.js';
-import { CreditModule } from './credit/credit.module.js';
 import { InvoicesModule } from './invoices/invoices.module.js';
 import { JobsModule } from './jobs/jobs.module.js';
 import { LedgerModule } from './ledger/ledger.module.js';
@@ -18,6 +19,7 @@ import { OversightModule } from './oversight/oversight.module.js';
 import { PaymentsModule } from './payments/payments.module.js';
 import type { ClockPort } from './platform/clock.js';
 import type { Config } from './platform/config.js';
+import { PlanningModule } from './planning/planning.module.js';
 import { PlatformModule } from './platform/platform.module.js';
 import { ReconciliationModule } from './reconciliation/reconciliation.module.js';
 import { RunSheetModule } from './run-sheet/run-sheet.module.js';
@@ -50,6 +52,8 @@ export class AppModule {
         ReconciliationModule,
         CreditModule,
         MarketModule,
+        PlanningModule,
+        ClearancesModule,
         DisputesModule,
         OversightModule,
         SystemModule,

@@ -1,6 +1,7 @@
 /** What happens to bookings because a time has come. Each turn asks what is due, so it catches up after any downtime. */
 import { Inject, Injectable, Logger, type OnModuleInit } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
+import { ClearanceBook } from '../clearances/clearance-book.js';
 import { JobsService } from '../jobs/jobs.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
@@ -14,6 +15,11 @@ import { CLOSE_AFTER_MS, REMIND_AFTER_MS } from './report-terms.js';
 
 const EVERY_MS = 5_000;
 
+const NOT_CLEARED_AT_AOS = {
+  sentence: 'At AOS no clearance to transmit was in force, so the contact did not begin; all of the price goes back.',
+  advice: 'Ask for a new clearance, or book a pass for downlink only.',
+};
+
 @Injectable()
 export class BookingClock implements OnModuleInit {
   private readonly log = new Logger('Bookings');
@@ -25,6 +31,7 @@ export class BookingClock implements OnModuleInit {
     private readonly sale: BookingSale,
     private readonly ending: BookingEnding,
     private readonly dishes: DishRepository,
+    private readonly clearances: ClearanceBook,
     private readonly jobs: JobsService,
   ) {}
 
@@ -42,6 +49,10 @@ export class BookingClock implements OnModuleInit {
     );
     // Asked in the transaction: a contact on a dish that is not clear waits, and begins when it is.
     this.each(this.repository.reached(this.db, 'confirmed', 'aosMs', nowMs), (tx, booking) => {
+      if (!this.clearances.permits(tx, booking)) {
+        this.ending.passLost(tx, booking, NOT_CLEARED_AT_AOS);
+        return;
+      }
       if (this.dishes.stopOf(tx, booking.antennaId) === null) this.ending.begin(tx, booking);
     });
     this.each(this.repository.reached(this.db, 'under way', 'losMs', nowMs), (tx, booking) =>

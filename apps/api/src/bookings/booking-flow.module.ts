@@ -1,5 +1,6 @@
 /** The moves of bookings with all that follows from them; used by people's requests, by payments and by the clock. */
 import { Module } from '@nestjs/common';
+import { ClearanceRecordsModule } from '../clearances/clearance-records.module.js';
 import { InvoicesModule } from '../invoices/invoices.module.js';
 import { LedgerModule } from '../ledger/ledger.module.js';
 import { PaymentRecordsModule } from '../payments/payment-records.module.js';
@@ -11,10 +12,11 @@ import { BookingSale } from './booking-sale.service.js';
 import { PartiesRepository } from './parties.repository.js';
 
 @Module({
-  imports: [BookingRecordsModule, PaymentRecordsModule, InvoicesModule, LedgerModule],
+  imports: [BookingRecordsModule, ClearanceRecordsModule, PaymentRecordsModule, InvoicesModule, LedgerModule],
   providers: [PartiesRepository, BookingNotices, BookingMoney, BookingSale, BookingEnding],
   exports: [
     BookingRecordsModule,
+    ClearanceRecordsModule,
     PaymentRecordsModule,
     InvoicesModule,
     LedgerModule,

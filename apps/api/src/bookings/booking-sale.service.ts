@@ -1,8 +1,11 @@
 /** From a hold to a sold contact, or to nothing: secured funds, the owner's answer, and time that ran out. */
-import { Injectable } from '@nestjs/common';
+import { Inject, Injectable } from '@nestjs/common';
+import { ClearanceBook } from '../clearances/clearance-book.js';
 import { InvoiceService } from '../invoices/invoices.service.js';
 import { PaymentOrders } from '../payments/payment-orders.js';
+import { CLOCK, type ClockPort } from '../platform/clock.js';
 import type { Db } from '../platform/transaction.js';
+import { BookingGroupRepository } from './booking-groups.repository.js';
 import { BookingNotices, contactName } from './booking-notices.js';
 import { BookingTransitions, BY_CLOCK, BY_PAYMENT, type Mover } from './booking-transitions.js';
 import { moneyText, utcText } from './booking-words.js';
@@ -15,10 +18,37 @@ export class BookingSale {
     private readonly notices: BookingNotices,
     private readonly invoices: InvoiceService,
     private readonly orders: PaymentOrders,
+    private readonly clearances: ClearanceBook,
+    private readonly groups: BookingGroupRepository,
+    @Inject(CLOCK) private readonly clock: ClockPort,
   ) {}
 
-  /** The price of a held booking is reserved. Where the owner answers each request (frozen with the hold), ask; else sell. */
+  /**
+   * The price of a held booking is reserved. One that was held with others waits until that is so for all of them, and then
+   * they are sold in this same transaction: none without the rest.
+   */
   fundsSecured(tx: Db, booking: BookingRow): BookingRow {
+    const groupId = this.groups.groupIdOf(booking.id, tx);
+    if (groupId === null) return this.sell(tx, booking);
+    this.groups.secure(tx, booking.id, this.clock.nowMs());
+    const members = this.groups.members(groupId, tx);
+    const isWhole = members.every((member) => member.isSecured && member.booking.state === 'held');
+    if (!isWhole) {
+      const sentence = `${moneyText(booking.toPayMinor, booking.currency)} are secured; sold once that is so for the whole group.`;
+      this.transitions.note(tx, booking, { kind: 'secured with its group', sentence, mover: BY_PAYMENT });
+      return booking;
+    }
+    if (!members.every((member) => this.clearances.permits(tx, member.booking))) {
+      for (const member of members) this.clearanceLost(tx, member.booking);
+      return { ...booking, state: 'cancelled' };
+    }
+    for (const member of members) this.sell(tx, member.booking);
+    return { ...booking, state: booking.answerByMs === null ? 'confirmed' : 'awaiting owner' };
+  }
+
+  /** Where the owner answers each request (frozen with the hold), ask; else sell. */
+  private sell(tx: Db, booking: BookingRow): BookingRow {
+    if (!this.clearances.permits(tx, booking)) return this.clearanceLost(tx, booking);
     const secured = `${moneyText(booking.toPayMinor, booking.currency)} are secured`;
     if (booking.answerByMs === null) {
       return this.confirm(tx, booking, {
@@ -45,6 +75,19 @@ export class BookingSale {
       sentences: [`${secured} and nothing is charged before the contact. The station answers by ${until}.`],
     });
     return asked;
+  }
+
+  /** The leave to transmit went between hold and payment: what was reserved goes back. */
+  private clearanceLost(tx: Db, booking: BookingRow): BookingRow {
+    const sentence = 'No clearance to transmit is in force any more, so the contact was not sold; nothing is charged.';
+    const lost = this.transitions.apply(tx, booking.id, { cause: 'pass lost', mover: BY_CLOCK, sentence });
+    this.orders.release(tx, booking.id);
+    this.notices.toBuyer(tx, booking, {
+      kind: 'pass lost',
+      subject: `Not booked: ${contactName(this.notices.names(tx, booking))}`,
+      sentences: [sentence, 'Ask for a clearance, or book the pass for downlink only.'],
+    });
+    return lost;
   }
 
   accept(tx: Db, booking: BookingRow, mover: Mover): BookingRow {

@@ -48,9 +48,17 @@ export class BookingTransitions {
       );
     }
     const changedMs = this.clock.nowMs();
-    this.repository.setState(tx, bookingId, { state: transition.to, changedMs });
+    this.setState(tx, bookingId, { state: transition.to, changedMs });
     this.record(tx, booking, { ...move, fromState: booking.state, toState: transition.to });
     return { ...booking, state: transition.to, changedMs };
+  }
+
+  private setState(tx: Db, bookingId: string, change: { state: BookingRow['state']; changedMs: number }): void {
+    try {
+      this.repository.setState(tx, bookingId, change);
+    } catch (error) {
+      throw refusalOf(error)?.includes('not-cleared') ? notCleared() : error;
+    }
   }
 
   /** Creates a held booking. Throws `berth-taken` or `spacecraft-busy` where the database refuses the time. */
@@ -115,6 +123,13 @@ function holdRefusal(error: unknown): DomainError | null {
   }
   return null;
 }
+
+/** The database lets nothing be sold or begin that transmits without leave. */
+export const notCleared = (): DomainError =>
+  new DomainError(
+    'not-cleared',
+    'No clearance in force covers this contact from AOS to LOS, so nothing may be transmitted. Ask for one under Clearances, or book it for downlink only.',
+  );
 
 export const berthTaken = (): DomainError =>
   new DomainError('berth-taken', 'Someone else has just taken that time on this antenna. Choose another pass.');

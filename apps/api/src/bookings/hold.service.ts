@@ -2,7 +2,8 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
 import type { BodyOf, Principal, Quote, routes } from '@skyberth/shared';
-import { type BerthOffer, OfferService } from '../market/offer.service.js';
+import { ClearanceBook } from '../clearances/clearance-book.js';
+import { type BerthOffer, type BerthRequest, OfferService } from '../market/offer.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
 import { DomainError } from '../platform/domain-error.js';
@@ -10,7 +11,7 @@ import { newId } from '../platform/ids.js';
 import { type Db, write } from '../platform/transaction.js';
 import { checkInvoiceable } from './booking-money.js';
 import { BookingSale } from './booking-sale.service.js';
-import { BookingTransitions, berthTaken } from './booking-transitions.js';
+import { BookingTransitions, berthTaken, notCleared } from './booking-transitions.js';
 import { moneyText, utcText } from './booking-words.js';
 import { BookingRepository, type BookingRow } from './bookings.repository.js';
 
@@ -19,7 +20,20 @@ export const HOLD_MS = 10 * 60_000;
 export const MOST_HOLDS = 20;
 
 type Sellable = BerthOffer & { readonly quote: Quote };
-type HoldWish = BodyOf<typeof routes.holdBerth>;
+export type HoldWish = BodyOf<typeof routes.holdBerth>;
+/** For whom it is held. */
+export type Buyer = Pick<Principal, 'personId' | 'organisationId'>;
+
+export interface PreparedHold {
+  readonly need: BerthRequest['need'];
+  readonly offer: Sellable;
+}
+
+export interface HoldTerms {
+  /** How many holds the organisation may have before this one. */
+  readonly most?: number;
+  readonly holdMs?: number;
+}
 
 @Injectable()
 export class HoldService {
@@ -30,6 +44,7 @@ export class HoldService {
     private readonly repository: BookingRepository,
     private readonly transitions: BookingTransitions,
     private readonly sale: BookingSale,
+    private readonly clearances: ClearanceBook,
   ) {}
 
   /**
@@ -37,7 +52,13 @@ export class HoldService {
    * `elements-too-old`, `too-many`, and what the offer throws.
    */
   async hold(caller: Principal, wish: HoldWish): Promise<BookingRow> {
-    const offer = forSale(await this.offers.evaluate(caller.organisationId, wish));
+    const prepared = await this.prepare(caller.organisationId, wish);
+    return write(this.db, (tx) => this.insert(tx, caller, prepared));
+  }
+
+  /** What is sure before the transaction: that it is for sale, at the price that the buyer saw. */
+  async prepare(operatorId: string, wish: HoldWish): Promise<PreparedHold> {
+    const offer = forSale(await this.offers.evaluate(operatorId, wish));
     if (offer.freshness.freshness === 'stale' && !wish.oldElementsAcknowledged) {
       throw new DomainError(
         'elements-too-old',
@@ -52,18 +73,31 @@ export class HoldService {
       );
     }
     checkInvoiceable(offer.quote);
-    return write(this.db, (tx) => this.insert(tx, caller, { wish, offer }));
+    return { need: wish.need, offer };
   }
 
-  private insert(tx: Db, caller: Principal, { wish, offer }: { wish: HoldWish; offer: Sellable }): BookingRow {
+  /** An offer at whatever it costs now, for someone who waited for it. Throws as `hold` does. */
+  async prepareAtPrice(operatorId: string, berth: BerthRequest): Promise<PreparedHold> {
+    const offer = forSale(await this.offers.evaluate(operatorId, berth));
+    checkInvoiceable(offer.quote);
+    return { need: berth.need, offer };
+  }
+
+  /** Inside a write transaction: the last questions, and the row. Throws `berth-taken`, `spacecraft-busy`, `too-many`. */
+  insert(
+    tx: Db,
+    caller: Buyer,
+    { need, offer }: PreparedHold,
+    { most = MOST_HOLDS, holdMs = HOLD_MS }: HoldTerms = {},
+  ): BookingRow {
     const nowMs = this.clock.nowMs();
     const { antennaId, spacecraftId, guardFromMs, guardToMs, quote } = offer;
     for (const ended of this.repository.endedHolds(tx, nowMs, { antennaId, spacecraftId }))
       this.sale.lapseHold(tx, ended);
-    if (this.repository.openHolds(tx, caller.organisationId, nowMs) >= MOST_HOLDS) {
+    if (this.repository.openHolds(tx, caller.organisationId, nowMs) >= most) {
       throw new DomainError(
         'too-many',
-        `Your organisation holds ${MOST_HOLDS} passes already. Pay for some, or let some go.`,
+        `Your organisation holds ${most} passes already. Pay for some, or let some go.`,
       );
     }
     if (!this.repository.stillOnSale(tx, antennaId)) {
@@ -71,7 +105,9 @@ export class HoldService {
     }
     const beam = this.repository.freeBeams(tx, { antennaId, beams: offer.beams, guardFromMs, guardToMs })[0];
     if (beam === undefined) throw berthTaken();
-    const holdEndsMs = nowMs + HOLD_MS;
+    const cleared = this.clearances.covering(tx, { ...offer, bands: offer.transmitBands });
+    if (need !== 'downlink' && cleared.length === 0) throw notCleared();
+    const holdEndsMs = nowMs + holdMs;
     const booking = this.transitions.hold(
       tx,
       {
@@ -83,7 +119,7 @@ export class HoldService {
         antennaId,
         beam,
         elementSetId: offer.elementSetId,
-        need: wish.need,
+        need,
         state: 'held',
         aosMs: offer.aosMs,
         tcaMs: offer.tcaMs,
@@ -107,6 +143,7 @@ export class HoldService {
         sentence: `Held until ${utcText(holdEndsMs)} at ${moneyText(quote.toPayMinor, quote.currency)}.`,
       },
     );
+    this.clearances.note(tx, booking.id, cleared);
     if (offer.ephemerisId !== null && offer.source !== 'element set')
       this.repository.noteEphemeris(tx, booking.id, offer.ephemerisId, offer.source);
     return booking;

@@ -34,7 +34,7 @@ const engineFor = (config: Config): PassEngine =>
     OfferService,
     ContactFiles,
   ],
-  exports: [MarketInputs, MarketRepository, MarketService, OfferService, ContactFiles, PASS_ENGINE],
+  exports: [MarketInputs, MarketService, OfferService, ContactFiles, PASS_ENGINE],
 })
 export class MarketModule implements OnApplicationShutdown {
   constructor(@Inject(PASS_ENGINE) private readonly engine: PassEngine) {}
