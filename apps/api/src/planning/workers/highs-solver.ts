@@ -22,7 +22,7 @@ export async function highsSolver(): Promise<Solve> {
 function solve(highs: Highs, question: SolverQuestion): SolverAnswer {
   const { program, whole, relativeGap, timeLimitS, onGap } = question;
   if (program.costs.length === 0) return empty(program);
-  return highs.withModel(modelOf(highs, program, whole), (model) => {
+  return highs.withModel(modelOf(highs, program, whole), (model): SolverAnswer => {
     model.options.set({ output_flag: false, time_limit: timeLimitS, mip_rel_gap: relativeGap });
     const { mipLogging } = highs.constants.callbackType;
     model.run({
