@@ -82,7 +82,7 @@ export const Booking = BookingSummary.extend({
   teardownEndsUtc: UtcTime,
   events: z.array(BookingEvent),
   /** What this caller may do now, from the state table. */
-  actions: z.array(z.enum(['pay', 'let go', 'cancel', 'accept', 'decline', 'report'])),
+  actions: z.array(z.enum(['pay', 'let go', 'cancel', 'accept', 'decline', 'report', 'dispute'])),
   refundNowMinor: AmountMinor.nullable().describe('what a cancellation now would give back'),
 });
 export type Booking = z.infer<typeof Booking>;

@@ -7,6 +7,7 @@ import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { BookingRepository, type BookingRow } from './bookings.repository.js';
 import { type BookingNames, PartiesRepository } from './parties.repository.js';
 import { cancelRefundMinor } from './refund-terms.js';
+import { DISPUTE_WITHIN_MS } from './report-terms.js';
 
 type Side = 'operator' | 'owner' | 'admin';
 
@@ -121,10 +122,23 @@ export class BookingViews {
     if (moves.has('owner accepts') && can(caller, 'bookings.decide') && nowMs < answerDueMs(booking))
       actions.push('accept', 'decline');
     if (moves.has('cancel') && mayCancel(caller, side) && nowMs < booking.aosMs) actions.push('cancel');
+    if (
+      side === 'operator' &&
+      moves.has('dispute opened') &&
+      can(caller, 'disputes.open') &&
+      mayDispute(booking, nowMs)
+    )
+      actions.push('dispute');
     const reports = moves.has('reported good') || moves.has('contact broken off');
     if (reports && side === 'owner' && can(caller, 'bookings.report')) actions.push('report');
     return actions;
   }
+}
+
+/** Within 14 days, and where something is charged: a contact that failed without the spacecraft's fault costs nothing. */
+function mayDispute({ state, report, losMs }: BookingRow, nowMs: number): boolean {
+  if (nowMs > losMs + DISPUTE_WITHIN_MS) return false;
+  return state !== 'failed' || report?.cause === 'spacecraft';
 }
 
 /** Until when the owner may answer: the agreed time, and never once the contact would have begun. */

@@ -1,7 +1,5 @@
 /** The clocks of a dispute. Own policy of the marketplace. */
 const DAY_MS = 86_400_000;
-/** After LOS. */
-export const OPEN_WITHIN_MS = 14 * DAY_MS;
 /** For the owner's first answer. */
 export const STATEMENT_WITHIN_MS = 3 * DAY_MS;
 /** For the decision, and again for that of an appeal. */

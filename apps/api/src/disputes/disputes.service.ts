@@ -15,6 +15,7 @@ import type {
 import { BookingTransitions, type Mover } from '../bookings/booking-transitions.js';
 import { moneyText } from '../bookings/booking-words.js';
 import { BookingRepository, type BookingRow } from '../bookings/bookings.repository.js';
+import { DISPUTE_WITHIN_MS } from '../bookings/report-terms.js';
 import { AuditService } from '../platform/audit.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
@@ -23,7 +24,7 @@ import { newId } from '../platform/ids.js';
 import { type Db, write } from '../platform/transaction.js';
 import { DisputeMoney } from './dispute-money.js';
 import { DisputeNotices } from './dispute-notices.js';
-import { APPEAL_WITHIN_MS, DECIDE_WITHIN_MS, OPEN_WITHIN_MS, STATEMENT_WITHIN_MS } from './dispute-terms.js';
+import { APPEAL_WITHIN_MS, DECIDE_WITHIN_MS, STATEMENT_WITHIN_MS } from './dispute-terms.js';
 import { DisputeViews, disputeSideOf } from './dispute-views.js';
 import { type DecisionRow, DisputeRepository, type DisputeRow } from './disputes.repository.js';
 import { EvidenceService, type Gap } from './evidence.service.js';
@@ -262,7 +263,7 @@ export class DisputesService {
         'wrong-state',
         `Berth ${booking.number} is ${booking.state}; only a contact that is over can be disputed.`,
       );
-    if (this.clock.nowMs() > booking.losMs + OPEN_WITHIN_MS)
+    if (this.clock.nowMs() > booking.losMs + DISPUTE_WITHIN_MS)
       throw new DomainError('wrong-state', `The 14 days to dispute berth ${booking.number} are over.`);
     this.money.checkCharged(db, booking);
   }

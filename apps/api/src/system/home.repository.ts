@@ -3,6 +3,7 @@ import { Inject, Injectable } from '@nestjs/common';
 import {
   antennas,
   bookings,
+  disputes,
   organisations,
   outbox,
   type SkyberthDatabase,
@@ -104,6 +105,31 @@ export class HomeRepository {
 
   countStations(state: WaitingStation['state']): number {
     return this.db.select({ rows: count() }).from(stations).where(eq(stations.state, state)).get()?.rows ?? 0;
+  }
+
+  /** Disputes that wait for a decision; of one side, or of all with null. */
+  disputes(side: 'operator' | 'owner' | null, organisationId = '') {
+    const ofSide = side && eq(side === 'operator' ? disputes.operatorId : disputes.ownerId, organisationId);
+    return this.db
+      .select({
+        id: disputes.id,
+        number: disputes.number,
+        reason: disputes.reason,
+        statementDueMs: disputes.statementDueMs,
+        decideByMs: disputes.decideByMs,
+        bookingNumber: bookings.number,
+      })
+      .from(disputes)
+      .innerJoin(bookings, eq(bookings.id, disputes.bookingId))
+      .where(and(inArray(disputes.state, ['open', 'appealed']), ofSide ?? undefined))
+      .orderBy(asc(disputes.decideByMs))
+      .limit(MOST)
+      .all();
+  }
+
+  countDisputes(): number {
+    const waiting = inArray(disputes.state, ['open', 'appealed']);
+    return this.db.select({ rows: count() }).from(disputes).where(waiting).get()?.rows ?? 0;
   }
 
   /** Active spacecraft of an operator. */

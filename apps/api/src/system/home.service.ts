@@ -59,7 +59,8 @@ export class HomeService {
     if (caller.organisationKind === 'owner') {
       return { requests: this.repository.countBookings('owner', caller.organisationId, ['awaiting owner']) };
     }
-    return can(caller, 'stations.approve') ? { approvals: this.repository.countStations('waiting') } : {};
+    if (!can(caller, 'stations.approve')) return {};
+    return { approvals: this.repository.countStations('waiting'), disputes: this.repository.countDisputes() };
   }
 
   private forOperator({ organisationId }: Principal): Waiting[] {
@@ -70,6 +71,7 @@ export class HomeService {
     return [
       ...open.map((each) => booking('hold', `Pay for the held contact ${titleOf(each)}.`, each, true, each.holdEndsMs)),
       ...soon.map((each) => this.contact(each, nowMs)),
+      ...this.disputes('operator', organisationId),
       ...this.oldElements(organisationId, nowMs),
     ];
   }
@@ -103,6 +105,7 @@ export class HomeService {
       }),
       ...read(['reporting']).map((each) => booking('report', `Report how ${titleOf(each)} went.`, each, false, null)),
       ...read(['confirmed', 'under way'], nowMs + AHEAD_MS).map((each) => this.contact(each, nowMs)),
+      ...this.disputes('owner', organisationId),
       ...stations.map(({ id, name, state, stateNote }) => ({
         kind: 'station',
         sentence: state === 'draft' ? `${name} is a draft: ask for its approval.` : `${name} is ${state}.`,
@@ -130,7 +133,28 @@ export class HomeService {
       urgent: false,
       dueUtc: null,
     }));
-    return [...stations, ...this.failures('/system')];
+    return [...this.disputes(null), ...stations, ...this.failures('/system')];
+  }
+
+  /** Disputes that wait; whose answer or decision is next stands in the words. */
+  private disputes(side: 'operator' | 'owner' | null, organisationId?: string): Waiting[] {
+    const nowMs = this.clock.nowMs();
+    return this.repository.disputes(side, organisationId).map((each) => {
+      const dueMs = side === 'owner' ? each.statementDueMs : each.decideByMs;
+      const words = {
+        operator: 'waits for a decision',
+        owner: 'waits for your statement',
+        admin: 'waits for your decision',
+      };
+      return {
+        kind: 'dispute',
+        sentence: `Dispute ${each.number} over berth ${each.bookingNumber} ${words[side ?? 'admin']}.`,
+        detail: each.reason,
+        path: `/disputes/${each.id}`,
+        urgent: side !== 'operator' && dueMs - nowMs < DAY_MS,
+        dueUtc: utc(dueMs),
+      };
+    });
   }
 
   private forFinance(): Waiting[] {

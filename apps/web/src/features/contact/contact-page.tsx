@@ -19,6 +19,7 @@ import { Actions } from './actions.js';
 import classes from './contact.module.css';
 import { ContactFiles } from './contact-files.js';
 import { ContactPicture } from './contact-picture.js';
+import { DisputeSection } from './dispute-section.js';
 import { DriftSection } from './drift-section.js';
 import { countdown } from './in-order.js';
 import { InOrderList } from './in-order-list.js';
@@ -97,6 +98,7 @@ function Contact({ booking, isBack }: { readonly booking: Booking; readonly isBa
           <DriftSection booking={booking} spacecraftId={detail?.spacecraft.id} />
           <Actions booking={booking} />
           <ReportSection booking={booking} />
+          <DisputeSection booking={booking} />
           {detail?.cautions.map((one) => (
             <Caution key={one.title} title={one.title}>
               {one.text}
