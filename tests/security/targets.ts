@@ -2,10 +2,11 @@
 import { randomUUID } from 'node:crypto';
 import { routes } from '@skyberth/shared';
 import { addDispute } from '../api/harness/dispute.js';
+import { RADIO } from '../api/harness/shop.js';
 import { addSoldContact } from '../api/harness/sold-contact.js';
 import { antennaOnSale } from '../api/harness/stations.js';
 import { tleText } from '../api/harness/tle.js';
-import { must, type Skyberth } from '../api/harness.js';
+import { must, type Person, type Skyberth } from '../api/harness.js';
 import type { Targets } from './wishes.js';
 
 export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
@@ -41,7 +42,37 @@ export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
     invoice,
     visit: visit.id,
     file: file.id,
+    clearance: await askForClearance(skyberth, {
+      operator,
+      spacecraftId: spacecraft,
+      stationId: station.id,
+      fileId: file.id,
+    }),
     member: operator.personId,
     organisation: operator.organisationId,
   };
+}
+
+/** A request for leave to transmit to a spacecraft that gets the uplink radio it takes. */
+async function askForClearance(
+  { call, clock }: Skyberth,
+  ask: { operator: Person; spacecraftId: string; stationId: string; fileId: string },
+): Promise<string> {
+  const { operator, spacecraftId, stationId, fileId } = ask;
+  const uplink = { ...RADIO, direction: 'uplink' as const, centreFrequencyMhz: 2_067, eirpDbw: null };
+  const radios = [{ ...uplink, requiredEbN0Db: null, requiredEirpDbw: 40 }];
+  const params = { id: spacecraftId };
+  const { name, shortName, catalogNumber } = await must(call(routes.getSpacecraft, { params, as: operator }));
+  const body = { name, shortName, catalogNumber, radios };
+  await must(call(routes.updateSpacecraft, { params, body, as: operator }));
+  const [validFromUtc, validToUtc] = [0, 30].map((days) => new Date(clock.nowMs() + days * 86_400_000).toISOString());
+  const wish = {
+    spacecraftId,
+    stationId,
+    band: 'S' as const,
+    validFromUtc: validFromUtc ?? '',
+    validToUtc: validToUtc ?? '',
+  };
+  const asked = { ...wish, purpose: 'Commands.', fileIds: [fileId] };
+  return (await must(call(routes.requestClearance, { body: asked, as: operator }))).id;
 }
