@@ -17,6 +17,7 @@ const OPERATOR: readonly Page[] = [
   { label: 'Find time', to: paths.findTime },
   { label: 'Bookings', to: paths.bookings },
   { label: 'Spacecraft', to: paths.spacecraft },
+  { label: 'Clearances', to: paths.clearances },
   { label: 'Invoices', to: paths.invoices },
   { label: 'Monthly account', to: paths.monthlyAccount },
 ];
@@ -26,6 +27,7 @@ const OWNER: readonly Page[] = [
   { label: 'Availability', to: paths.availability },
   { label: 'Requests', to: paths.requests, count: 'requests', countNoun: 'requests wait for an answer' },
   { label: 'Run sheet', to: paths.runSheet },
+  { label: 'Clearances', to: paths.clearances },
   { label: 'Bookings', to: paths.bookings },
   { label: 'Earnings', to: paths.invoices },
 ];
@@ -41,6 +43,7 @@ const FINANCE: readonly Page[] = [
 const ADMIN: readonly Page[] = [
   HOME,
   { label: 'Approvals', to: paths.approvals, count: 'approvals', countNoun: 'stations wait for approval' },
+  { label: 'Clearances', to: paths.clearances },
   { label: 'Bookings', to: paths.bookings },
   { label: 'Disputes', to: paths.disputes, count: 'disputes', countNoun: 'disputes wait for a decision' },
   { label: 'Accounts', to: paths.accounts },

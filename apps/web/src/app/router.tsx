@@ -118,6 +118,18 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('../features/requests/requests-page.js')).RequestsPage }),
   },
   {
+    path: paths.clearances,
+    lazy: async () => ({ Component: (await import('../features/clearances/clearances-page.js')).ClearancesPage }),
+  },
+  {
+    path: paths.newClearance,
+    lazy: async () => ({ Component: (await import('../features/clearances/request-page.js')).RequestClearancePage }),
+  },
+  {
+    path: paths.clearance(':id'),
+    lazy: async () => ({ Component: (await import('../features/clearances/clearance-page.js')).ClearancePage }),
+  },
+  {
     path: paths.approvals,
     lazy: async () => ({ Component: (await import('../features/approvals/approvals-page.js')).ApprovalsPage }),
   },

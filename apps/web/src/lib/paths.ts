@@ -28,6 +28,12 @@ export const paths = {
   runSheetWall: '/run-sheet/wall',
   availability: '/availability',
   availabilityOf: (antennaId: string) => `/availability?antenna=${antennaId}`,
+  clearances: '/clearances',
+  newClearance: '/clearances/new',
+  renewClearance: (id: string) => `/clearances/new?renews=${id}`,
+  clearanceFor: (spacecraftId: string, stationId: string) =>
+    `/clearances/new?spacecraft=${spacecraftId}&station=${stationId}`,
+  clearance: (id: string) => `/clearances/${id}`,
   approvals: '/approvals',
   approval: (stationId: string) => `/approvals/${stationId}`,
   disputes: '/disputes',
