@@ -73,6 +73,12 @@ export class DriftWatch implements OnModuleInit {
     const sold = this.elements.byId(booking.elementSetId);
     const newer = this.elements.inForce(booking.spacecraftId, booking.tcaMs);
     if (!sold || !newer) return;
+    const known = this.repository.check(booking.id);
+    if (known?.elementSetId === newer.id) {
+      // What came says nothing newer about this pass.
+      write(this.db, (tx) => this.repository.saveCheck(tx, { ...known, checkedMs }));
+      return;
+    }
     const isSame = newer.id === sold.id;
     const to = isSame ? unmoved(booking) : await this.geometry.carry(booking, sold, newer);
     write(this.db, (tx) => {
