@@ -2,6 +2,7 @@
 import { randomUUID } from 'node:crypto';
 import { routes } from '@skyberth/shared';
 import { addDispute } from '../api/harness/dispute.js';
+import { addGroupAndPlace } from '../api/harness/line.js';
 import { RADIO } from '../api/harness/shop.js';
 import { addSoldContact } from '../api/harness/sold-contact.js';
 import { antennaOnSale } from '../api/harness/stations.js';
@@ -32,8 +33,19 @@ export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
   const paper = { query: { name: 'licence.pdf' }, body: Buffer.from('%PDF-1.7 paper'), as: operator };
   const file = await must(call(routes.uploadFile, paper));
   const dispute = addDispute(skyberth, { operator, owner, antennaId: antenna.id, spacecraftId: spacecraft });
+  const need = {
+    name: 'A day',
+    firstDay: new Date(clock.nowMs() + 2 * 86_400_000).toISOString().slice(0, 10),
+    days: 1,
+    craft: [{ spacecraftId: spacecraft, contactsPerDay: 1 }],
+    currency: { kind: 'one' as const, currency: 'EUR' },
+  };
+  const plan = await must(call(routes.createPlan, { body: need, as: operator }));
+  const line = addGroupAndPlace(skyberth, { operator, antennaId: antenna.id, spacecraftId: spacecraft });
   return {
+    ...line,
     dispute,
+    plan: plan.id,
     spacecraft,
     station: station.id,
     antenna: antenna.id,

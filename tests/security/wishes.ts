@@ -23,6 +23,9 @@ export interface Targets {
   readonly member: string;
   readonly organisation: string;
   readonly dispute: string;
+  readonly group: string;
+  readonly place: string;
+  readonly plan: string;
 }
 
 /** Targets that do not exist. */
@@ -39,6 +42,9 @@ export const nowhere = (): Targets => ({
   member: randomUUID(),
   organisation: randomUUID(),
   dispute: randomUUID(),
+  group: randomUUID(),
+  place: randomUUID(),
+  plan: randomUUID(),
 });
 
 const ADDRESS = { line1: 'Quay 1', postalCode: '1', city: 'Porto Novo', country: 'DE' };
@@ -52,6 +58,13 @@ const OPENING = {
   timeZone: 'Europe/Oslo',
   rrule: 'FREQ=WEEKLY',
 };
+const plan = (spacecraftId: string) => ({
+  name: 'A day',
+  firstDay: '2027-01-04',
+  days: 1,
+  craft: [{ spacecraftId, contactsPerDay: 1 }],
+  currency: { kind: 'one', currency: 'EUR' },
+});
 const RULING = { outcome: 'none', refundBasisPoints: 0, borneBy: 'owner' };
 const REPORT = {
   outcome: 'good',
@@ -154,6 +167,12 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     bookingFile: { params: { ...booking, file: 'pointing.csv' } },
     holdBerth: { body: { ...berth, expectedToPayMinor: 1 } },
     letGo: { params: booking },
+    holdGroup: { body: { items: [{ ...berth, expectedToPayMinor: 1 }] } },
+    getGroup: { params: { id: to.group } },
+    checkoutGroup: { params: { id: to.group }, body: {} },
+    letGroupGo: { params: { id: to.group } },
+    joinStandby: { body: berth },
+    leaveStandby: { params: { id: to.place } },
     checkout: { params: booking, body: {} },
     cancelBooking: { params: booking, body: { expectedRefundMinor: 0 } },
     acceptBooking: { params: booking },
@@ -185,6 +204,12 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     closeMonth: { params: { month: '2020-01' } },
     listDisputes: {},
     getDispute: { params: { id: to.dispute } },
+    createPlan: { body: plan(to.spacecraft) },
+    getPlan: { params: { id: to.plan } },
+    replan: { params: { id: to.plan }, body: { need: plan(to.spacecraft) } },
+    stopPlan: { params: { id: to.plan } },
+    holdPlan: { params: { id: to.plan }, body: {} },
+    giveUpPlan: { params: { id: to.plan } },
     openDispute: { params: booking, body: { reason: 'other', text: 'Nothing came down.' } },
     stateInDispute: { params: { id: to.dispute }, body: { text: 'So it was.' } },
     askInDispute: { params: { id: to.dispute }, body: { side: 'owner', text: 'Why?' } },

@@ -24,6 +24,7 @@ import { PlatformModule } from './platform/platform.module.js';
 import { ReconciliationModule } from './reconciliation/reconciliation.module.js';
 import { RunSheetModule } from './run-sheet/run-sheet.module.js';
 import { SpacecraftModule } from './spacecraft/spacecraft.module.js';
+import { StandbyModule } from './standby/standby.module.js';
 import { StationsModule } from './stations/stations.module.js';
 import { SystemModule } from './system/system.module.js';
 
@@ -43,6 +44,7 @@ export class AppModule {
         StationsModule,
         AvailabilityModule,
         BookingsModule,
+        StandbyModule,
         LiveModule,
         RunSheetModule,
         DriftModule,

@@ -16,6 +16,7 @@ import { DATABASE } from '../platform/database.module.js';
 import { DomainError } from '../platform/domain-error.js';
 import { type Db, write } from '../platform/transaction.js';
 import { BookingEnding } from './booking-ending.service.js';
+import { BookingGroupRepository } from './booking-groups.repository.js';
 import { BookingListRepository } from './booking-list.repository.js';
 import { BookingSale } from './booking-sale.service.js';
 import { answerDueMs, BookingViews, mayCancel, sideOf, summaryOf } from './booking-views.js';
@@ -35,6 +36,7 @@ export class BookingsService {
     private readonly holds: HoldService,
     private readonly sale: BookingSale,
     private readonly ending: BookingEnding,
+    private readonly groups: BookingGroupRepository,
   ) {}
 
   list(caller: Principal, query: QueryOf<typeof routes.listBookings>): ResponseOf<typeof routes.listBookings> {
@@ -67,9 +69,11 @@ export class BookingsService {
   }
 
   letGo(caller: Principal, bookingId: string): Booking {
-    return this.move(caller, bookingId, (tx, booking) =>
-      this.sale.letGo(tx, booking, { actor: 'operator', person: caller }),
-    );
+    return this.move(caller, bookingId, (tx, booking) => {
+      if (booking.state === 'held' && this.groups.groupIdOf(bookingId, tx) !== null)
+        throw new DomainError('wrong-state', 'It is held together with others: let the whole group go, or pay for it.');
+      return this.sale.letGo(tx, booking, { actor: 'operator', person: caller });
+    });
   }
 
   accept(caller: Principal, bookingId: string): Booking {

@@ -9,9 +9,10 @@ import { DATABASE } from '../platform/database.module.js';
 import { DomainError } from '../platform/domain-error.js';
 import { newId } from '../platform/ids.js';
 import { type Db, write } from '../platform/transaction.js';
+import { StandbyRepository } from '../standby/standby.repository.js';
 import { checkInvoiceable } from './booking-money.js';
 import { BookingSale } from './booking-sale.service.js';
-import { BookingTransitions, berthTaken, notCleared } from './booking-transitions.js';
+import { BookingTransitions, BY_CLOCK, berthTaken, notCleared } from './booking-transitions.js';
 import { moneyText, utcText } from './booking-words.js';
 import { BookingRepository, type BookingRow } from './bookings.repository.js';
 
@@ -33,6 +34,8 @@ export interface HoldTerms {
   /** How many holds the organisation may have before this one. */
   readonly most?: number;
   readonly holdMs?: number;
+  /** It is offered to the first of those who wait for it. */
+  readonly isFromLine?: boolean;
 }
 
 @Injectable()
@@ -44,6 +47,7 @@ export class HoldService {
     private readonly repository: BookingRepository,
     private readonly transitions: BookingTransitions,
     private readonly sale: BookingSale,
+    private readonly line: StandbyRepository,
     private readonly clearances: ClearanceBook,
   ) {}
 
@@ -88,7 +92,7 @@ export class HoldService {
     tx: Db,
     caller: Buyer,
     { need, offer }: PreparedHold,
-    { most = MOST_HOLDS, holdMs = HOLD_MS }: HoldTerms = {},
+    { most = MOST_HOLDS, holdMs = HOLD_MS, isFromLine = false }: HoldTerms = {},
   ): BookingRow {
     const nowMs = this.clock.nowMs();
     const { antennaId, spacecraftId, guardFromMs, guardToMs, quote } = offer;
@@ -105,6 +109,13 @@ export class HoldService {
     }
     const beam = this.repository.freeBeams(tx, { antennaId, beams: offer.beams, guardFromMs, guardToMs })[0];
     if (beam === undefined) throw berthTaken();
+    const operatorId = caller.organisationId;
+    if (!isFromLine && this.line.isAwaitedByOthers(tx, { operatorId, antennaId, guardFromMs, guardToMs })) {
+      throw new DomainError(
+        'berth-taken',
+        'Others wait for this time and are offered it first. You can join the line.',
+      );
+    }
     const cleared = this.clearances.covering(tx, { ...offer, bands: offer.transmitBands });
     if (need !== 'downlink' && cleared.length === 0) throw notCleared();
     const holdEndsMs = nowMs + holdMs;
@@ -143,10 +154,19 @@ export class HoldService {
         sentence: `Held until ${utcText(holdEndsMs)} at ${moneyText(quote.toPayMinor, quote.currency)}.`,
       },
     );
-    this.clearances.note(tx, booking.id, cleared);
+    this.noteClearances(tx, booking, cleared);
     if (offer.ephemerisId !== null && offer.source !== 'element set')
       this.repository.noteEphemeris(tx, booking.id, offer.ephemerisId, offer.source);
     return booking;
+  }
+
+  /** Both sides read in the diary of the contact in which band, and how, may be transmitted. */
+  private noteClearances(tx: Db, booking: BookingRow, clearanceIds: readonly string[]): void {
+    this.clearances.note(tx, booking.id, clearanceIds);
+    for (const { number, band, conditions } of this.clearances.ofBooking(tx, booking.id)) {
+      const sentence = `May transmit in ${band} band under clearance ${number}. ${conditions}`.trim();
+      this.transitions.note(tx, booking, { kind: 'clearance', sentence, mover: BY_CLOCK });
+    }
   }
 }
 

@@ -6,6 +6,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
 import type { BodyOf, Principal, ResponseOf, routes } from '@skyberth/shared';
+import { BookingGroupRepository } from '../bookings/booking-groups.repository.js';
 import { contactName } from '../bookings/booking-notices.js';
 import { BookingSale } from '../bookings/booking-sale.service.js';
 import { utcText } from '../bookings/booking-words.js';
@@ -42,10 +43,18 @@ export class CheckoutService {
     private readonly orders: PaymentOrders,
     private readonly parties: PartiesRepository,
     private readonly sale: BookingSale,
+    private readonly groups: BookingGroupRepository,
   ) {}
 
   /** Throws `hold-ended`, `wrong-state`, `card-declined`, `payment-unavailable`, and `not-found` for another's hold or card. */
   async pay(caller: Principal, bookingId: string, wish: Wish): Promise<Result> {
+    if (this.groups.groupIdOf(bookingId) !== null && this.bookings.forViewer(caller, bookingId).state === 'held')
+      throw new DomainError('wrong-state', 'It is held together with others: pay for the whole group, or let it go.');
+    return this.payInGroup(caller, bookingId, wish);
+  }
+
+  /** Pays for one booking of a group, or for one that stands alone. */
+  async payInGroup(caller: Principal, bookingId: string, wish: Wish): Promise<Result> {
     const payment = write(this.db, (tx) => this.begin(tx, caller, bookingId));
     if (payment === null || payment.state !== 'waiting for the buyer') return PROCESSING;
     const booking = this.bookings.forViewer(caller, bookingId);

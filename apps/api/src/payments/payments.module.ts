@@ -6,6 +6,7 @@ import { BookingFlowModule } from '../bookings/booking-flow.module.js';
 import { JobsModule } from '../jobs/jobs.module.js';
 import { ChargebackRepository } from './chargebacks.repository.js';
 import { CheckoutService } from './checkout.service.js';
+import { GroupCheckoutService } from './group-checkout.service.js';
 import { PAYMENT_PORT } from './payment.port.js';
 import { PaymentChargebacks } from './payment-chargebacks.js';
 import { PaymentEvents } from './payment-events.service.js';
@@ -25,6 +26,7 @@ import { SaleShares } from './sale-shares.js';
     { provide: PROVIDER_BOOKS, useClass: StripeBooks },
     ChargebackRepository,
     CheckoutService,
+    GroupCheckoutService,
     PaymentChargebacks,
     PaymentEvents,
     PaymentOutcomes,
