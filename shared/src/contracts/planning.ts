@@ -235,6 +235,16 @@ export const planningRoutes = {
     summary: 'Stop looking; the plan keeps what it had before',
     errors: ['not-found', 'wrong-state'],
   }),
+  holdPlan: defineRoute({
+    ...onePlan,
+    access: 'bookings.buy',
+    name: 'holdPlan',
+    method: 'POST',
+    path: '/api/plans/:id/hold',
+    summary: 'Hold every new contact of a plan for ten minutes at the planned prices, all or none',
+    body: z.object({ oldElementsAcknowledged: z.boolean().default(false) }),
+    errors: ['not-found', 'wrong-state', 'group-refused', 'too-large', 'too-many'],
+  }),
   giveUpPlan: defineRoute({
     ...onePlan,
     name: 'giveUpPlan',

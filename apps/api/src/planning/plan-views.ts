@@ -1,5 +1,5 @@
 /** Plans in the form of the wire. */
-import type { Plan, PlanProgress, PlanSummary } from '@skyberth/shared';
+import type { Plan, PlanProgress, PlanState, PlanSummary } from '@skyberth/shared';
 import type { PlanRow } from './planning.repository.js';
 
 const utc = (timeMs: number): string => new Date(timeMs).toISOString();
@@ -8,16 +8,16 @@ const utc = (timeMs: number): string => new Date(timeMs).toISOString();
 export const workOf = (row: PlanRow, running: boolean): Plan['work'] =>
   row.work === 'working' && !running ? 'stopped' : row.work;
 
-export function planView(row: PlanRow, progress: PlanProgress | null): Plan {
+export function planView(row: PlanRow, state: PlanState, progress: PlanProgress | null): Plan {
   return {
     id: row.id,
-    state: row.state,
+    state,
     work: workOf(row, progress !== null),
     need: row.need,
     pinnedKeys: row.pinnedKeys,
     struckKeys: row.struckKeys,
     failure: row.failure,
-    groupId: row.groupId,
+    groupId: state === 'draft' ? null : row.groupId,
     progress,
     outcome: row.outcome,
     createdByName: row.createdByName,
@@ -26,12 +26,12 @@ export function planView(row: PlanRow, progress: PlanProgress | null): Plan {
   };
 }
 
-export function planSummary(row: PlanRow, running: boolean): PlanSummary {
+export function planSummary(row: PlanRow, state: PlanState, running: boolean): PlanSummary {
   const { need, outcome } = row;
   return {
     id: row.id,
     name: need.name,
-    state: row.state,
+    state,
     work: workOf(row, running),
     status: outcome?.status ?? null,
     firstDay: need.firstDay,

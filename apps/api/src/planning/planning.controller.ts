@@ -10,7 +10,7 @@ export class PlanningController {
 
   @Handles(routes.listPlans)
   list(@Input() input: HandlerInput<typeof routes.listPlans>): ResponseOf<typeof routes.listPlans> {
-    return this.planning.list(input.caller.organisationId, input.query);
+    return this.planning.list(input.caller, input.query);
   }
 
   @Handles(routes.createPlan)
@@ -20,7 +20,7 @@ export class PlanningController {
 
   @Handles(routes.getPlan)
   one(@Input() input: HandlerInput<typeof routes.getPlan>): Plan {
-    return this.planning.one(input.caller.organisationId, input.params.id);
+    return this.planning.one(input.caller, input.params.id);
   }
 
   @Handles(routes.replan)
@@ -30,11 +30,16 @@ export class PlanningController {
 
   @Handles(routes.stopPlan)
   stop(@Input() input: HandlerInput<typeof routes.stopPlan>): Plan {
-    return this.planning.stop(input.caller.organisationId, input.params.id);
+    return this.planning.stop(input.caller, input.params.id);
+  }
+
+  @Handles(routes.holdPlan)
+  hold(@Input() input: HandlerInput<typeof routes.holdPlan>): Promise<Plan> {
+    return this.planning.hold(input.caller, input.params.id, input.body.oldElementsAcknowledged);
   }
 
   @Handles(routes.giveUpPlan)
   giveUp(@Input() input: HandlerInput<typeof routes.giveUpPlan>): Plan {
-    return this.planning.giveUp(input.caller.organisationId, input.params.id);
+    return this.planning.giveUp(input.caller, input.params.id);
   }
 }

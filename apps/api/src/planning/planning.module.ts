@@ -1,5 +1,6 @@
 /** Planning a fleet's contacts over the market. */
 import { Module } from '@nestjs/common';
+import { BookingsModule } from '../bookings/bookings.module.js';
 import { MarketModule } from '../market/market.module.js';
 import { PlanGatherer } from './plan-gatherer.js';
 import { PlanningController } from './planning.controller.js';
@@ -7,7 +8,7 @@ import { PlanningRepository } from './planning.repository.js';
 import { PlanningService } from './planning.service.js';
 
 @Module({
-  imports: [MarketModule],
+  imports: [BookingsModule, MarketModule],
   controllers: [PlanningController],
   providers: [PlanningRepository, PlanGatherer, PlanningService],
 })

@@ -2,7 +2,19 @@
 import { Inject, Injectable, Logger, type OnApplicationShutdown } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
 import { needFaults } from '@skyberth/planner';
-import type { BodyOf, Plan, PlanInput, PlanProgress, Principal, QueryOf, ResponseOf, routes } from '@skyberth/shared';
+import {
+  type BodyOf,
+  MOST_IN_GROUP,
+  type Plan,
+  type PlanInput,
+  type PlanProgress,
+  type PlanState,
+  type Principal,
+  type QueryOf,
+  type ResponseOf,
+  type routes,
+} from '@skyberth/shared';
+import { BookingGroupsService } from '../bookings/booking-groups.service.js';
 import { MarketInputs } from '../market/market-inputs.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
@@ -18,6 +30,9 @@ const [HOUR_MS, DAY_MS] = [3_600_000, 86_400_000];
 /** A plan takes a core for up to half a minute; more of them at a time would starve the market. */
 const MOST_AT_ONCE = 2;
 const MOST_OF_ONE = 1;
+
+/** What a plan is whose holds have ended, once it is planned again. */
+const REOPENED = { state: 'draft', groupId: null } as const;
 
 interface Running {
   readonly operatorId: string;
@@ -36,19 +51,33 @@ export class PlanningService implements OnApplicationShutdown {
     private readonly repository: PlanningRepository,
     private readonly inputs: MarketInputs,
     private readonly gatherer: PlanGatherer,
+    private readonly groups: BookingGroupsService,
   ) {}
 
   onApplicationShutdown(): void {
     for (const { stop } of this.running.values()) stop.abort();
   }
 
-  list(operatorId: string, query: QueryOf<typeof routes.listPlans>): ResponseOf<typeof routes.listPlans> {
-    const { rows, total } = this.repository.list(operatorId, query);
-    return { items: rows.map((row) => planSummary(row, this.running.has(row.id))), total, ...query };
+  list(caller: Principal, query: QueryOf<typeof routes.listPlans>): ResponseOf<typeof routes.listPlans> {
+    const { rows, total } = this.repository.list(caller.organisationId, query);
+    return {
+      items: rows.map((row) => planSummary(row, this.stateOf(caller, row), this.running.has(row.id))),
+      total,
+      ...query,
+    };
   }
 
-  one(operatorId: string, id: string): Plan {
-    return this.view(this.row(operatorId, id));
+  one(caller: Principal, id: string): Plan {
+    const row = this.row(caller.organisationId, id);
+    return planView(row, this.stateOf(caller, row), this.running.get(row.id)?.progress ?? null);
+  }
+
+  /** What has become of its holds: a plan whose holds ended unpaid is a draft again. */
+  private stateOf(caller: Principal, { state, groupId }: PlanRow): PlanState {
+    if (state !== 'held' || groupId === null) return state;
+    const group = this.groups.get(caller, groupId);
+    if (group.state === 'bought') return 'bought';
+    return group.state === 'ended' ? 'draft' : 'held';
   }
 
   /** Throws `bad-input`, `not-found` for someone else's spacecraft, and `too-many`. */
@@ -62,41 +91,73 @@ export class PlanningService implements OnApplicationShutdown {
     const row = { id, operatorId: caller.organisationId, state: 'draft' as const, work: 'working' as const };
     write(this.db, (tx) => this.repository.insert(tx, { ...row, ...fresh, ...made }));
     this.start(this.row(caller.organisationId, id));
-    return this.one(caller.organisationId, id);
+    return this.one(caller, id);
   }
 
   /** Throws what `create` does, and `wrong-state` for a plan that is not a draft or is being made. */
   replan(caller: Principal, id: string, wish: BodyOf<typeof routes.replan>): Plan {
     this.check(caller.organisationId, wish.need, wish);
     const row = this.row(caller.organisationId, id);
-    if (row.state !== 'draft')
-      throw new DomainError('wrong-state', `This plan is ${row.state}; make a new one from it.`);
-    if (this.running.has(id)) throw new DomainError('wrong-state', 'This plan is being made. Stop that first.');
+    this.refuseUnlessDraft(caller, row);
     this.refuseCrowd(caller.organisationId);
     const changedMs = this.clock.nowMs();
-    write(this.db, (tx) => this.repository.change(tx, id, { ...wish, work: 'working', failure: null, changedMs }));
+    write(this.db, (tx) =>
+      this.repository.change(tx, id, { ...wish, ...REOPENED, work: 'working', failure: null, changedMs }),
+    );
     this.start(this.row(caller.organisationId, id));
-    return this.one(caller.organisationId, id);
+    return this.one(caller, id);
   }
 
-  stop(operatorId: string, id: string): Plan {
-    this.row(operatorId, id);
+  stop(caller: Principal, id: string): Plan {
+    this.row(caller.organisationId, id);
     const running = this.running.get(id);
     if (running === undefined) throw new DomainError('wrong-state', 'Nothing is being looked for in this plan.');
     running.stop.abort();
     this.running.delete(id);
     this.settle(id, { kind: 'stopped' });
-    return this.one(operatorId, id);
+    return this.one(caller, id);
   }
 
-  giveUp(operatorId: string, id: string): Plan {
-    const row = this.row(operatorId, id);
+  /**
+   * Holds every contact of the plan that is not had yet at the price that the plan shows, all or none. Throws `wrong-state`,
+   * `too-large` for more than fit into one group, and `group-refused` with every contact that cannot be had.
+   */
+  async hold(caller: Principal, id: string, oldElementsAcknowledged: boolean): Promise<Plan> {
+    const row = this.row(caller.organisationId, id);
+    this.refuseUnlessDraft(caller, row);
+    const fresh = (row.outcome?.passes ?? []).filter((each) => each.bookedBefore === null);
+    if (fresh.length === 0) throw new DomainError('wrong-state', 'There is nothing in this plan that could be held.');
+    if (fresh.length > MOST_IN_GROUP)
+      throw new DomainError(
+        'too-large',
+        `The plan has ${fresh.length} new contacts, and at most ${MOST_IN_GROUP} can be held together. Plan fewer days or fewer spacecraft.`,
+      );
+    const items = fresh.map(({ antennaId, spacecraftId, need, aosUtc, losUtc, toPayMinor }) => {
+      return {
+        antennaId,
+        spacecraftId,
+        need,
+        bands: [],
+        aosUtc,
+        losUtc,
+        expectedToPayMinor: toPayMinor,
+        oldElementsAcknowledged,
+      };
+    });
+    const { groupId } = await this.groups.hold(caller, items);
+    const changedMs = this.clock.nowMs();
+    write(this.db, (tx) => this.repository.change(tx, id, { state: 'held', groupId, changedMs }));
+    return this.one(caller, id);
+  }
+
+  giveUp(caller: Principal, id: string): Plan {
+    const row = this.row(caller.organisationId, id);
     if (row.state === 'given up') throw new DomainError('wrong-state', 'This plan was given up before.');
     this.running.get(id)?.stop.abort();
     this.running.delete(id);
     const work = row.work === 'working' ? 'stopped' : row.work;
     write(this.db, (tx) => this.repository.change(tx, id, { state: 'given up', work, changedMs: this.clock.nowMs() }));
-    return this.one(operatorId, id);
+    return this.one(caller, id);
   }
 
   private row(operatorId: string, id: string): PlanRow {
@@ -105,8 +166,10 @@ export class PlanningService implements OnApplicationShutdown {
     return row;
   }
 
-  private view(row: PlanRow): Plan {
-    return planView(row, this.running.get(row.id)?.progress ?? null);
+  private refuseUnlessDraft(caller: Principal, row: PlanRow): void {
+    const state = this.stateOf(caller, row);
+    if (state !== 'draft') throw new DomainError('wrong-state', `This plan is ${state}; make a new one from it.`);
+    if (this.running.has(row.id)) throw new DomainError('wrong-state', 'This plan is being made. Stop that first.');
   }
 
   private refuseCrowd(operatorId: string): void {

@@ -1,6 +1,6 @@
 /** A whole planning job in one thread: offers, program, plan, and the plan in the form of the wire. */
 import { createHash } from 'node:crypto';
-import { formatMoney } from '@skyberth/money';
+import { currencyExponent, formatMoney } from '@skyberth/money';
 import { type Candidate, makePlan, type PlanNeed, PlannerError, type PlanResult, type Solve } from '@skyberth/planner';
 import type { PlanInput, PlanOutcome, PlanProgress } from '@skyberth/shared';
 import { type Offers, offersOf } from './offers.js';
@@ -37,7 +37,9 @@ export function workOut(job: PlanJob, solve: Solve, onProgress: (progress: PlanP
 function ratesOf({ currency }: PlanInput, offered: readonly string[]): { rates: Record<string, number>; base: string } {
   if (currency.kind === 'one') return { rates: { [currency.currency]: 1 }, base: currency.currency };
   const rates = Object.fromEntries([
-    ...currency.rates.map((each) => [each.currency, each.inBase] as const),
+    ...currency.rates.map(
+      (each) => [each.currency, each.inBase * minorPerMinor(currency.base, each.currency)] as const,
+    ),
     [currency.base, 1] as const,
   ]);
   const missing = offered.filter((code) => rates[code] === undefined);
@@ -47,6 +49,9 @@ function ratesOf({ currency }: PlanInput, offered: readonly string[]): { rates: 
     );
   return { rates, base: currency.base };
 }
+
+/** Rates are given for whole units; costs are counted in minor ones, of which a unit has 1 to 10,000. */
+const minorPerMinor = (base: string, other: string): number => 10 ** (currencyExponent(base) - currencyExponent(other));
 
 function needOf(job: PlanJob, rates: Record<string, number>): PlanNeed {
   const { input, fromMs, toMs, pinnedKeys, struckKeys } = job;
