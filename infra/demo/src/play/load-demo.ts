@@ -1,15 +1,21 @@
 import { OPERATORS } from '../cast/operators.js';
 import { OWNERS } from '../cast/owners.js';
 import { Chance } from './chance.js';
+import { buyUplinks, clearFleet, leaveClearancesOpen, reportUplinks } from './clearances.js';
 import { PASSWORD } from './client.js';
 import { Season } from './days.js';
+import { disputeAndDecide, leaveDisputesOpen } from './disputes.js';
+import { moveSomePasses } from './drift.js';
+import { buyForThisMinute, reportWhatRuns } from './live.js';
 import { giveEphemeris } from './own-ephemeris.js';
+import { manTheStations } from './run-sheet.js';
 import { settleIn } from './settle-in.js';
 import { STAFF, Stage } from './stage.js';
 import { buyForToday, leaveThingsOpen } from './today.js';
 
 const HOUR_MS = 3_600_000;
 const DAY_MS = 24 * HOUR_MS;
+const DISPUTE_EVERY_DAYS = 11;
 
 export interface DemoSettings {
   readonly environment: Readonly<Record<string, string | undefined>>;
@@ -30,19 +36,33 @@ export async function loadDemo({ environment, days, say }: DemoSettings): Promis
   const stage = await Stage.open({ environment, startMs: firstDayMs });
   try {
     const company = await settleIn(stage, say);
+    await clearFleet(stage, company);
     const season = new Season(stage, company, new Chance(335));
     for (let day = 0; day < days - 1; day += 1) {
       if (day % 10 === 0) say(`day ${day + 1} of ${days}`);
       await season.day(firstDayMs + day * DAY_MS, day);
+      if (day % DISPUTE_EVERY_DAYS === DISPUTE_EVERY_DAYS - 1)
+        await disputeAndDecide(stage, company, Math.floor(day / DISPUTE_EVERY_DAYS));
     }
     const nowMs = Date.now();
     await stage.moveTo(nowMs - 9 * HOUR_MS);
     await season.renewElements();
+    season.liveFromMs = nowMs - DAY_MS;
+    await buyForThisMinute(stage, company, season, nowMs);
     await buyForToday(stage, company, season, nowMs);
+    const flown = { fromMs: nowMs - 8 * HOUR_MS, toMs: nowMs - HOUR_MS, count: 3 };
+    const uplinks = await buyUplinks(stage, company, season, flown);
     await season.flyUntil(nowMs - 45 * 60_000);
     await stage.returnToPresent();
+    await reportUplinks(stage, uplinks);
+    await buyUplinks(stage, company, season, { fromMs: nowMs + 2 * HOUR_MS, toMs: nowMs + 44 * HOUR_MS, count: 2 });
+    await leaveClearancesOpen(stage, company);
     await giveEphemeris(stage, company);
     await leaveThingsOpen(stage, company, season);
+    await leaveDisputesOpen(stage, company);
+    await moveSomePasses(stage, company);
+    await manTheStations(stage, company);
+    await reportWhatRuns(stage, company);
   } finally {
     await stage.close();
   }
