@@ -16,8 +16,8 @@ import {
 } from '@skyberth/drizzle';
 
 const HOUR_MS = 3_600_000;
-/** One antenna in four has that many contacts sold to others, one every eight hours. */
-const SOLD_EACH = 20;
+/** One antenna in four has so many contacts sold to others, one every eight hours, where nothing else is asked for. */
+const SOLD = { oneAntennaIn: 4, each: 20, everyMs: 8 * HOUR_MS };
 
 /** Fractions 0 to 1 that are the same in every run (linear congruence of Numerical Recipes). */
 function fractions(seed) {
@@ -29,7 +29,10 @@ function fractions(seed) {
 }
 
 /** @returns {{ stationIds: string[], spacecraftIds: string[] }} */
-export function seedMarket(db, { organisationId, antennas: antennaCount, spacecraft: craftCount, startMs }) {
+export function seedMarket(
+  db,
+  { organisationId, antennas: antennaCount, spacecraft: craftCount, startMs, sold = SOLD },
+) {
   const next = fractions(20_261_201);
   return db.transaction((tx) => {
     const owner = addOrganisation(tx, 'owner', 'Measured Owner', startMs);
@@ -40,9 +43,9 @@ export function seedMarket(db, { organisationId, antennas: antennaCount, spacecr
     );
     const placed = Array.from({ length: antennaCount }, (_, index) => addAntenna(tx, owner, index, startMs, next));
     placed
-      .filter((_, index) => index % 4 === 0)
+      .filter((_, index) => index % sold.oneAntennaIn === 0)
       .forEach((place) => {
-        const contact = { place, owner, other, personId, startMs };
+        const contact = { place, owner, other, personId, startMs, sold };
         addContacts(tx, contact, addCraft(tx, other, randomUUID(), startMs, next));
       });
     return { stationIds: placed.map((each) => each.stationId), spacecraftIds };
@@ -202,14 +205,14 @@ function addAntenna(tx, owner, index, startMs, next) {
 }
 
 let number = 1_000;
-function addContacts(tx, { place, owner, other, personId, startMs }, spacecraftId) {
+function addContacts(tx, { place, owner, other, personId, startMs, sold }, spacecraftId) {
   const elementSetId = tx
     .select({ id: elementSets.id, of: elementSets.spacecraftId })
     .from(elementSets)
     .all()
     .find((row) => row.of === spacecraftId).id;
-  for (let i = 0; i < SOLD_EACH; i += 1) {
-    const aosMs = startMs + i * 8 * HOUR_MS;
+  for (let i = 0; i < sold.each; i += 1) {
+    const aosMs = startMs + Math.round(i * sold.everyMs);
     const losMs = aosMs + 600_000;
     const [aosUtc, tcaUtc, losUtc] = [aosMs, aosMs + 300_000, losMs].map((timeMs) => new Date(timeMs).toISOString());
     const pass = {

@@ -23,8 +23,8 @@ import { PassFinder } from './pass-finder.js';
 import type { AntennaInput, SearchJob, SearchOutcome } from './workers/job-types.js';
 import { PASS_ENGINE, type PassEngine } from './workers/pass-engine.js';
 
-/** A board of more passes than this serves nobody, and its answer would be tens of megabytes. */
-export const MOST_PASSES = 10_000;
+/** 200 antennas for 14 days have some 16,000 passes of one spacecraft; a board of more serves nobody. */
+export const MOST_PASSES = 20_000;
 /** Spacecraft in one job of a lane: some tenths of a second of work at the most. */
 const CRAFT_AT_ONCE = 4;
 /** Few people search twice at the same time. */

@@ -1,5 +1,6 @@
 /** The last hours before the present: one booking in each state that a visitor should meet. */
 import { routes } from '@skyberth/shared';
+import { fillCalendars } from './calendar.js';
 import type { Season } from './days.js';
 import { utc } from './days.js';
 import type { Company } from './settle-in.js';
@@ -33,6 +34,7 @@ export async function leaveThingsOpen(stage: Stage, company: Company, season: Se
     };
     await stage.call(manager, routes.addBlackout, { params: { id: antenna.id }, body });
   }
+  await fillCalendars(stage, company);
   const [first] = company.operators;
   if (!first) return;
   const passes = await season.forSale(first, nowMs + 3 * HOUR_MS, nowMs + 48 * HOUR_MS);
