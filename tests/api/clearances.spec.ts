@@ -103,6 +103,10 @@ describe('a request', () => {
     expect(asked).toMatchObject({ state: 'requested', acts: ['withdraw'], papers: [{ name: 'licence.pdf' }] });
     expect((await request({ validFromUtc })).problem?.code).toBe('already-exists');
     expect((await check(asked.id)).problem?.code).toBe('wrong-state');
+    const home = await must(shop.skyberth.call(routes.home, { as: shop.owner }));
+    expect(home.waiting).toContainEqual(
+      expect.objectContaining({ kind: 'clearance', path: `/clearances/${asked.id}` }),
+    );
     const otherOwner = await shop.skyberth.people.owner();
     expect((await answer(asked.id, { answer: 'grant' }, otherOwner)).problem?.code).toBe('not-found');
     const file = { params: { id: asked.papers[0]?.id ?? '' } };
@@ -141,6 +145,7 @@ describe('uplink', () => {
     const clearance = await inForce();
     const held = await must(hold(passAfter(2)));
     const sold = await pay(held.id);
+    expect(sold.events.map((event) => event.sentence)).toContainEqual(expect.stringContaining('At most 46 dBW.'));
     expect(sold.state).toBe('confirmed');
     const view = { params: { id: clearance.id }, as: shop.owner };
     expect(await must(shop.skyberth.call(routes.getClearance, view))).toMatchObject({ contactsToCome: 1 });

@@ -129,7 +129,9 @@ export const clearanceRoutes = {
     tag,
     access: 'clearances.request',
     data: 'market',
-    response: z.object({ stations: z.array(z.object({ id: Id, name: z.string(), bands: z.array(Band) })) }),
+    response: z.object({
+      stations: z.array(z.object({ id: Id, name: z.string(), bands: z.array(Band), antennaIds: z.array(Id) })),
+    }),
   }),
   requestClearance: defineRoute({
     name: 'requestClearance',

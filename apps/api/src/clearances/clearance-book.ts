@@ -1,6 +1,14 @@
 /** Which clearances bear on time for sale and on bookings: read by the market, by holds and by the clock. */
 import { Inject, Injectable } from '@nestjs/common';
-import { antennas, bookingClearances, bookings, clearances, type SkyberthDatabase } from '@skyberth/drizzle';
+import {
+  antennas,
+  bookingClearances,
+  bookings,
+  clearances,
+  type SkyberthDatabase,
+  spacecraft,
+  stations,
+} from '@skyberth/drizzle';
 import type { Band, ClearanceState } from '@skyberth/shared';
 import { and, asc, eq, gt, gte, inArray, lt, lte } from 'drizzle-orm';
 import { DATABASE } from '../platform/database.module.js';
@@ -25,6 +33,17 @@ export interface Transmission {
   readonly losMs: number;
 }
 
+export interface WaitingClearance {
+  readonly id: string;
+  readonly number: number;
+  readonly spacecraftName: string;
+  readonly stationName: string;
+  readonly purpose: string;
+  readonly endMs: number;
+}
+
+/** More than a person reads at once. */
+const MOST_WAITING = 50;
 type BookingRow = typeof bookings.$inferSelect;
 /** These still say something about why time is not sold; the others are over. */
 const OPEN: ClearanceState[] = ['requested', 'granted', 'in force'];
@@ -107,19 +126,47 @@ export class ClearanceBook {
     return this.bookingsUnder(tx, clearanceId, ['under way']);
   }
 
-  /** For the contact page: what may be transmitted, under which clearance. */
-  ofBooking(bookingId: string): { number: number; band: Band; state: ClearanceState; conditions: string }[] {
-    return this.db
+  /** What may be transmitted in a contact, and what the station asks for. */
+  ofBooking(tx: Db, bookingId: string): { number: number; band: Band; conditions: string }[] {
+    return tx
       .select({
         number: clearances.number,
         band: clearances.band,
-        state: clearances.state,
         conditions: clearances.conditions,
       })
       .from(bookingClearances)
       .innerJoin(clearances, eq(clearances.id, bookingClearances.clearanceId))
       .where(eq(bookingClearances.bookingId, bookingId))
       .orderBy(asc(clearances.number))
+      .all();
+  }
+
+  /** What waits for the station to answer, for staff to check, or for the operator to renew before `endMs`. */
+  waitingFor(side: 'operator' | 'owner' | 'admin', organisationId: string, endMs: number): WaitingClearance[] {
+    const which = {
+      operator: and(
+        eq(clearances.operatorId, organisationId),
+        eq(clearances.state, 'in force'),
+        lte(clearances.validToMs, endMs),
+      ),
+      owner: and(eq(clearances.ownerId, organisationId), eq(clearances.state, 'requested')),
+      admin: eq(clearances.state, 'granted'),
+    }[side];
+    return this.db
+      .select({
+        id: clearances.id,
+        number: clearances.number,
+        spacecraftName: spacecraft.name,
+        stationName: stations.name,
+        purpose: clearances.purpose,
+        endMs: clearances.validToMs,
+      })
+      .from(clearances)
+      .innerJoin(spacecraft, eq(spacecraft.id, clearances.spacecraftId))
+      .innerJoin(stations, eq(stations.id, clearances.stationId))
+      .where(which)
+      .orderBy(asc(clearances.validToMs), asc(clearances.number))
+      .limit(MOST_WAITING)
       .all();
   }
 

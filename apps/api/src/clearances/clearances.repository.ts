@@ -28,6 +28,14 @@ export interface NamedClearance extends ClearanceRow {
   readonly ownerName: string;
 }
 
+interface TransmittingStation {
+  readonly id: string;
+  readonly name: string;
+  readonly ownerId: string;
+  readonly bands: Band[];
+  readonly antennaIds: string[];
+}
+
 const operators = alias(organisations, 'clearance_operators');
 const owners = alias(organisations, 'clearance_owners');
 /** Those that somebody must act on stand first, then those that matter, then what is over. */
@@ -142,13 +150,14 @@ export class ClearancesRepository {
   }
 
   /** Approved stations whose antennas on sale transmit, with their bands. */
-  transmitting(db: Db = this.db): { id: string; name: string; ownerId: string; bands: Band[] }[] {
+  transmitting(db: Db = this.db): TransmittingStation[] {
     const rows = db
       .selectDistinct({
         id: stations.id,
         name: stations.name,
         ownerId: stations.organisationId,
         band: antennaBands.band,
+        antennaId: antennas.id,
       })
       .from(stations)
       .innerJoin(antennas, eq(antennas.stationId, stations.id))
@@ -163,10 +172,11 @@ export class ClearancesRepository {
       )
       .orderBy(asc(stations.name), asc(stations.id), asc(antennaBands.band))
       .all();
-    const found = new Map<string, { id: string; name: string; ownerId: string; bands: Band[] }>();
-    for (const { band, ...station } of rows) {
-      const known = found.get(station.id) ?? { ...station, bands: [] };
-      known.bands.push(band as Band);
+    const found = new Map<string, TransmittingStation>();
+    for (const { band, antennaId, ...station } of rows) {
+      const known = found.get(station.id) ?? { ...station, bands: [], antennaIds: [] };
+      if (!known.bands.includes(band as Band)) known.bands.push(band as Band);
+      if (!known.antennaIds.includes(antennaId)) known.antennaIds.push(antennaId);
       found.set(station.id, known);
     }
     return [...found.values()];

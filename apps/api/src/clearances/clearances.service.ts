@@ -62,7 +62,7 @@ export class ClearancesService implements OnModuleInit {
   }
 
   choices(): ResponseOf<typeof routes.clearanceChoices> {
-    return { stations: this.repository.transmitting().map(({ id, name, bands }) => ({ id, name, bands })) };
+    return { stations: this.repository.transmitting().map(({ ownerId: _ownerId, ...station }) => station) };
   }
 
   /** Throws `not-found`, `bad-input` for dates or a band that cannot be, `already-exists` for the same request twice. */

@@ -2,6 +2,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { can, type HomeView, type Principal } from '@skyberth/shared';
 import { utcText } from '../bookings/booking-words.js';
+import { ClearanceBook } from '../clearances/clearance-book.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { StandingService } from '../platform/standing.js';
 import { ElementsService } from '../spacecraft/elements.service.js';
@@ -16,6 +17,7 @@ const DAY_MS = 24 * HOUR_MS;
 /** A contact stands on the home page a day ahead, and presses an hour ahead. */
 const AHEAD_MS = DAY_MS;
 const PRESSING_MS = HOUR_MS;
+const RENEW_WITHIN_MS = 30 * DAY_MS;
 const FAILED_SHOWN_MS = 30 * DAY_MS;
 
 const utc = (timeMs: number): string => new Date(timeMs).toISOString();
@@ -26,6 +28,7 @@ export class HomeService {
     private readonly repository: HomeRepository,
     private readonly figures: HomeFiguresService,
     private readonly elements: ElementsService,
+    private readonly clearances: ClearanceBook,
     private readonly standing: StandingService,
     @Inject(CLOCK) private readonly clock: ClockPort,
   ) {}
@@ -72,6 +75,7 @@ export class HomeService {
       ...open.map((each) => booking('hold', `Pay for the held contact ${titleOf(each)}.`, each, true, each.holdEndsMs)),
       ...soon.map((each) => this.contact(each, nowMs)),
       ...this.disputes('operator', organisationId),
+      ...this.clearancesOf('operator', organisationId),
       ...this.oldElements(organisationId, nowMs),
     ];
   }
@@ -106,6 +110,7 @@ export class HomeService {
       ...read(['reporting']).map((each) => booking('report', `Report how ${titleOf(each)} went.`, each, false, null)),
       ...read(['confirmed', 'under way'], nowMs + AHEAD_MS).map((each) => this.contact(each, nowMs)),
       ...this.disputes('owner', organisationId),
+      ...this.clearancesOf('owner', organisationId),
       ...stations.map(({ id, name, state, stateNote }) => ({
         kind: 'station',
         sentence: state === 'draft' ? `${name} is a draft: ask for its approval.` : `${name} is ${state}.`,
@@ -133,7 +138,21 @@ export class HomeService {
       urgent: false,
       dueUtc: null,
     }));
-    return [...this.disputes(null), ...stations, ...this.failures('/system')];
+    return [...this.disputes(null), ...stations, ...this.clearancesOf('admin', ''), ...this.failures('/system')];
+  }
+
+  /** Clearances that this side must answer, check, or renew before they end. */
+  private clearancesOf(side: 'operator' | 'owner' | 'admin', organisationId: string): Waiting[] {
+    const untilMs = this.clock.nowMs() + RENEW_WITHIN_MS;
+    const words = { operator: 'ends soon; renew it.', owner: 'waits for your answer.', admin: 'waits for your check.' };
+    return this.clearances.waitingFor(side, organisationId, untilMs).map((each) => ({
+      kind: 'clearance',
+      sentence: `Clearance ${each.number} for ${each.spacecraftName} at ${each.stationName} ${words[side]}`,
+      detail: each.purpose,
+      path: `/clearances/${each.id}`,
+      urgent: false,
+      dueUtc: side === 'operator' ? utc(each.endMs) : null,
+    }));
   }
 
   /** Disputes that wait; whose answer or decision is next stands in the words. */

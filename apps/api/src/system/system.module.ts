@@ -1,5 +1,7 @@
 /** Health, the API's description of itself, what waits for each person, and what staff watch. */
+
 import { Module } from '@nestjs/common';
+import { ClearanceRecordsModule } from '../clearances/clearance-records.module.js';
 import { JobsModule } from '../jobs/jobs.module.js';
 import { OutboxModule } from '../outbox/outbox.module.js';
 import { SpacecraftModule } from '../spacecraft/spacecraft.module.js';
@@ -14,7 +16,7 @@ import { SystemRepository } from './system.repository.js';
 import { SystemService } from './system.service.js';
 
 @Module({
-  imports: [JobsModule, OutboxModule, SpacecraftModule],
+  imports: [ClearanceRecordsModule, JobsModule, OutboxModule, SpacecraftModule],
   controllers: [SystemController],
   providers: [
     Housekeeping,

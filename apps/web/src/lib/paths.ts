@@ -7,6 +7,8 @@ export const paths = {
   setPassword: '/set-password',
   verifyEmail: '/verify-email',
   findTime: '/find-time',
+  plans: '/plan',
+  plan: (id: string) => `/plan/${id}`,
   bookings: '/bookings',
   booking: (id: string) => `/bookings/${id}`,
   spacecraft: '/spacecraft',
@@ -31,8 +33,8 @@ export const paths = {
   clearances: '/clearances',
   newClearance: '/clearances/new',
   renewClearance: (id: string) => `/clearances/new?renews=${id}`,
-  clearanceFor: (spacecraftId: string, stationId: string) =>
-    `/clearances/new?spacecraft=${spacecraftId}&station=${stationId}`,
+  clearanceFor: (spacecraftId: string, antennaId: string) =>
+    `/clearances/new?spacecraft=${spacecraftId}&antenna=${antennaId}`,
   clearance: (id: string) => `/clearances/${id}`,
   approvals: '/approvals',
   approval: (stationId: string) => `/approvals/${stationId}`,

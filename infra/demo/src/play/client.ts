@@ -72,13 +72,13 @@ async function send(
   const search = new URLSearchParams();
   for (const [name, value] of Object.entries(query)) if (value !== undefined) search.set(name, String(value));
   const headers: Record<string, string> = {};
-  if (body !== undefined) headers['Content-Type'] = 'application/json';
+  if (body !== undefined) headers['Content-Type'] = route.consumes ?? 'application/json';
   if (needsIdempotencyKey(route)) headers[IDEMPOTENCY_HEADER] = randomUUID();
   if (who) headers['Cookie'] = [...who.cookies].map(([name, value]) => `${name}=${value}`).join('; ');
   const response = await fetch(`${url}${fillPath(route.path, params)}${search.size > 0 ? `?${search}` : ''}`, {
     method: route.method,
     headers,
-    ...(body === undefined ? {} : { body: JSON.stringify(body) }),
+    ...(body === undefined ? {} : { body: route.consumes ? (body as Uint8Array<ArrayBuffer>) : JSON.stringify(body) }),
   });
   for (const line of response.headers.getSetCookie()) {
     const pair = line.split(';')[0] ?? '';

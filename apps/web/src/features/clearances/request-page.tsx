@@ -43,7 +43,7 @@ export function RequestClearancePage() {
         {renews !== null && earlier.isPending ? (
           <Skeleton height={320} />
         ) : (
-          <RequestForm first={firstDraft(search, earlier.data)} />
+          <RequestForm first={firstDraft(search, earlier.data)} antennaId={search.get('antenna')} />
         )}
         <TransmitCaution />
       </div>
@@ -51,13 +51,13 @@ export function RequestClearancePage() {
   );
 }
 
-/** A renewal begins where the earlier clearance ends; a link from a pass names spacecraft and station. */
+/** A renewal begins where the earlier clearance ends; a link from a pass names the spacecraft and its antenna. */
 function firstDraft(search: URLSearchParams, earlier: Clearance | undefined): Draft {
   const nowMs = serverNowMs();
   const fromMs = earlier?.state === 'in force' ? Date.parse(earlier.validToUtc) : nowMs;
   return {
     spacecraftId: earlier?.spacecraftId ?? search.get('spacecraft') ?? '',
-    stationId: earlier?.stationId ?? search.get('station') ?? '',
+    stationId: earlier?.stationId ?? '',
     band: earlier?.band ?? '',
     from: dayOf(fromMs),
     to: dayOf(fromMs + YEAR_MS),
@@ -65,7 +65,13 @@ function firstDraft(search: URLSearchParams, earlier: Clearance | undefined): Dr
   };
 }
 
-function RequestForm({ first }: { readonly first: Draft }) {
+interface RequestFormProps {
+  readonly first: Draft;
+  /** Of the pass that needs the clearance; its station is proposed. */
+  readonly antennaId: string | null;
+}
+
+function RequestForm({ first, antennaId }: RequestFormProps) {
   const [draft, setDraft] = useState(first);
   const [files, setFiles] = useState<readonly AttachedFile[]>([]);
   const fleet = useQuery(spacecraftQueries.list());
@@ -73,12 +79,14 @@ function RequestForm({ first }: { readonly first: Draft }) {
   const ask = useAsk();
   const change = (part: Partial<Draft>) => setDraft({ ...draft, ...part });
   const stations = choices.data?.stations ?? [];
-  const bands = stations.find((station) => station.id === draft.stationId)?.bands ?? [];
+  const linked = stations.find(({ antennaIds }) => antennaIds.includes(antennaId ?? ''))?.id ?? '';
+  const stationId = draft.stationId || linked;
+  const bands = stations.find((station) => station.id === stationId)?.bands ?? [];
   const band = bands.find((each) => each === draft.band) ?? bands[0];
   const problem = ask.error instanceof ProblemError ? ask.error : null;
   const submit = (event: FormEvent) => {
     event.preventDefault();
-    if (band) ask.mutate({ draft, band, fileIds: files.map((file) => file.id) });
+    if (band) ask.mutate({ draft: { ...draft, stationId }, band, fileIds: files.map((file) => file.id) });
   };
   const unread = fleet.error ?? choices.error;
   if (unread) return <ProblemNotice title="The form could not be prepared">{sentenceOf(unread)}</ProblemNotice>;
@@ -99,7 +107,7 @@ function RequestForm({ first }: { readonly first: Draft }) {
         label="Station"
         description="Stations on the market that transmit."
         required
-        value={draft.stationId}
+        value={stationId}
         data={[{ value: '', label: 'Choose one' }, ...stations.map(({ id, name }) => ({ value: id, label: name }))]}
         onChange={(event) => change({ stationId: event.currentTarget.value })}
       />

@@ -77,7 +77,7 @@ function CardBody(props: PassCardProps & { readonly detail: PassDetail; readonly
       <PassFigures detail={detail} />
       {reasons.length > 0 && (
         <section className={classes.part} aria-label="Why it is not for sale">
-          <ReasonSentences pass={{ reasons }} />
+          <ReasonSentences pass={{ ...pass, reasons }} />
           {offersPart && <PartLinks pass={pass} onPart={(part) => onChange({ part })} />}
         </section>
       )}

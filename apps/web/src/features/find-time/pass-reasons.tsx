@@ -1,4 +1,7 @@
+import { Anchor } from '@mantine/core';
 import type { FoundPass, SearchResult } from '@skyberth/shared';
+import { Link } from 'react-router-dom';
+import { paths } from '../../lib/paths.js';
 import { formatDuration, formatMoney, formatTime } from '../../ui/format.js';
 import { ReasonBubble } from '../../ui/reason-bubble.js';
 import classes from './find-time.module.css';
@@ -23,11 +26,24 @@ export function PassReasons({ pass, names, onPart }: PassReasonsProps) {
   );
 }
 
-export function ReasonSentences({ pass }: { readonly pass: Pick<FoundPass, 'reasons'> }) {
+export function ReasonSentences({
+  pass,
+}: {
+  readonly pass: Pick<FoundPass, 'reasons' | 'antennaId' | 'spacecraftId'>;
+}) {
   return pass.reasons.map((reason) => (
     <p key={reason.code + reason.sentence} className={classes.reason}>
       {reason.sentence}
-      {reason.remedy && <span className={classes.remedy}> {reason.remedy}</span>}
+      {reason.remedy && <span className={classes.remedy}> {reason.remedy}</span>}{' '}
+      {reason.code === 'clearance' && (
+        <Anchor
+          component={Link}
+          to={paths.clearanceFor(pass.spacecraftId, pass.antennaId)}
+          onClick={(event) => event.stopPropagation()}
+        >
+          Ask for a clearance
+        </Anchor>
+      )}
     </p>
   ));
 }
