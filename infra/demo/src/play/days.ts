@@ -3,6 +3,7 @@ import { type FoundPass, routes } from '@skyberth/shared';
 import { tleAt } from '../cast/elements.js';
 import type { Chance } from './chance.js';
 import { type Actor, Refused } from './client.js';
+import { flyLive } from './live.js';
 import type { Company, PlayOperator } from './settle-in.js';
 import type { Stage } from './stage.js';
 
@@ -18,6 +19,8 @@ interface Bought {
 }
 
 export class Season {
+  /** Contacts from here on are reported live as well, which takes the play longer. */
+  liveFromMs = Number.POSITIVE_INFINITY;
   private bought: Bought[] = [];
   private setNumber = 1;
 
@@ -162,6 +165,7 @@ export class Season {
     const due = this.bought.filter((one) => one.losMs < untilMs).sort((a, b) => a.losMs - b.losMs);
     this.bought = this.bought.filter((one) => one.losMs >= untilMs);
     for (const one of due) {
+      if (one.losMs > this.liveFromMs) await flyLive(this.stage, this.chance, one);
       await this.stage.moveTo(one.losMs + 6 * 60_000);
       await this.report(one);
     }
