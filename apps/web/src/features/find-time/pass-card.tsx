@@ -12,6 +12,7 @@ import { ProblemNotice } from '../../ui/problem-notice.js';
 import classes from './find-time.module.css';
 import { findTimeQueries, type PassRequest } from './find-time-queries.js';
 import { HoldButton } from './hold-button.js';
+import { JoinLine } from './join-line.js';
 import { PassFigures, SkyAndTimes } from './pass-figures.js';
 import { PartLinks, ReasonSentences } from './pass-reasons.js';
 import { refundSteps, standing } from './pass-words.js';
@@ -70,6 +71,8 @@ function CardBody(props: PassCardProps & { readonly detail: PassDetail; readonly
   const offersPart = pass.state === 'part for sale' && filter.part === null;
   const reasons = pass.bookingId ? [] : offersPart ? pass.reasons : detail.reasons;
   const { quote } = detail;
+  const isTaken =
+    !pass.bookingId && reasons.length > 0 && reasons.every(({ code }) => code === 'taken' || code === 'turn');
   const isForSale = quote !== null && !pass.bookingId && !offersPart && reasons.length === 0;
   return (
     <>
@@ -98,6 +101,9 @@ function CardBody(props: PassCardProps & { readonly detail: PassDetail; readonly
         </Caution>
       ))}
       {isForSale && <HoldButton detail={detail} quote={quote} request={request} onHeld={onHeld} />}
+      {isTaken && !offersPart && (
+        <JoinLine key={`${request.antennaId} ${request.spacecraftId} ${request.aosUtc}`} request={request} />
+      )}
       {booking && (
         <Anchor component={Link} to={paths.booking(booking.id)}>
           Open berth {booking.number}

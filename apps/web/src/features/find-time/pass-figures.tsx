@@ -53,20 +53,14 @@ export function SkyAndTimes({ detail }: { readonly detail: PassDetail }) {
 
 /** Range, link, volume, light and how far to trust the times. */
 export function PassFigures({ detail }: { readonly detail: PassDetail }) {
-  const { elements, links } = detail;
+  const { links } = detail;
   const range = spanWords(detail.track.map((one) => one.rangeKm));
   return (
     <section className={classes.part} aria-label="Figures of the pass">
       <Figures columns={2}>
         {range && <Figure label="Range" value={range} unit="km" />}
         <Figure label="Spacecraft" value={detail.illumination} />
-        <Figure
-          label={sourceLabel(detail)}
-          value={elements.timingErrorS === null ? 'Ephemeris' : `±${formatNumber(elements.timingErrorS, 1)}`}
-          {...(elements.timingErrorS === null ? {} : { unit: 's' })}
-          tone={elements.freshness === 'stale' ? 'bad' : 'plain'}
-          {...(elements.freshness === 'fresh' ? {} : { note: elements.freshness })}
-        />
+        <SourceFigure detail={detail} />
         {detail.mountGaps.length > 0 && (
           <Figure label="Mount follows" value={formatDuration(followedMs(detail))} note={gapWords(detail)} />
         )}
@@ -84,10 +78,21 @@ export function PassFigures({ detail }: { readonly detail: PassDetail }) {
   );
 }
 
-/** What the pass was computed from, and how old that is. */
-function sourceLabel({ source, ephemeris, elements }: PassDetail): string {
-  if (source === 'element set' || ephemeris === null) return `Element set, ${ageWords(elements.ageH)}`;
-  return source === 'both' ? `Ephemeris and element set, ${ageWords(elements.ageH)}` : `Own: ${ephemeris.source}`;
+/** What the pass was computed from, how old that is, and how well AOS and LOS are known by it. */
+function SourceFigure({ detail }: { readonly detail: PassDetail }) {
+  const { source, ephemeris, elements } = detail;
+  if (elements.timingErrorS === null)
+    return <Figure label="Computed from" value="Own ephemeris" note={ephemeris?.source} />;
+  const name = source === 'both' ? 'Ephemeris and element set' : 'Element set';
+  return (
+    <Figure
+      label={`${name}, ${ageWords(elements.ageH)}`}
+      value={`±${formatNumber(elements.timingErrorS, 1)}`}
+      unit="s"
+      tone={elements.freshness === 'stale' ? 'bad' : 'plain'}
+      {...(elements.freshness === 'fresh' ? {} : { note: elements.freshness })}
+    />
+  );
 }
 
 function LinkFigures({ link, named }: { readonly link: PassDetail['links'][number]; readonly named: boolean }) {
