@@ -15,7 +15,9 @@ const HOME: Page = { label: 'Home', to: paths.home };
 const OPERATOR: readonly Page[] = [
   HOME,
   { label: 'Find time', to: paths.findTime },
+  { label: 'Plan', to: paths.plans },
   { label: 'Bookings', to: paths.bookings },
+  { label: 'Standby', to: paths.standby },
   { label: 'Spacecraft', to: paths.spacecraft },
   { label: 'Clearances', to: paths.clearances },
   { label: 'Invoices', to: paths.invoices },

@@ -40,6 +40,14 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('../features/find-time/find-time-page.js')).FindTimePage }),
   },
   {
+    path: paths.plans,
+    lazy: async () => ({ Component: (await import('../features/plan/plan-page.js')).PlanPage }),
+  },
+  {
+    path: paths.plan(':id'),
+    lazy: async () => ({ Component: (await import('../features/plan/one-plan-page.js')).OnePlanPage }),
+  },
+  {
     path: paths.bookings,
     lazy: async () => ({ Component: (await import('../features/bookings/bookings-page.js')).BookingsPage }),
   },
@@ -72,6 +80,10 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({
       Component: (await import('../features/spacecraft/spacecraft-edit-page.js')).EditSpacecraftPage,
     }),
+  },
+  {
+    path: paths.standby,
+    lazy: async () => ({ Component: (await import('../features/standby/standby-page.js')).StandbyPage }),
   },
   {
     path: paths.invoices,

@@ -16,6 +16,7 @@ export const paths = {
   oneSpacecraft: (id: string) => `/spacecraft/${id}`,
   editSpacecraft: (id: string) => `/spacecraft/${id}/edit`,
   addElements: '/spacecraft/elements',
+  standby: '/standby',
   invoices: '/invoices',
   invoice: (id: string) => `/invoices/${id}`,
   stations: '/stations',
