@@ -16,6 +16,7 @@ import { formatCountdown, formatDegrees, formatDuration, formatLocalTime, format
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import { Figure, Figures } from '../../ui/values.js';
 import { deadlineMs, pressureOf } from './deadline.js';
+import { RequestConflicts } from './request-conflicts.js';
 import classes from './requests.module.css';
 import { useNow } from './use-now.js';
 
@@ -57,6 +58,7 @@ export function RequestCard({ summary, mayDecide }: RequestCardProps) {
           <Figure label="Length" value={formatDuration(losMs - aosMs)} />
           <Figure label="Highest" value={formatDegrees(summary.maxElevationDeg)} />
         </Figures>
+        <RequestConflicts summary={summary} />
       </div>
       <Earns booking={booking.data} failed={booking.isError} />
       <div className={classes.answer}>
