@@ -14,6 +14,9 @@ const HOUR_MS = 3_600_000;
 /** Elements of this long after the contact still know more about it than older ones. Common practice, no source. */
 const LATER_WITHIN_MS = 12 * HOUR_MS;
 
+/** A receiver takes some seconds to lock; less is no gap. Common practice, no source. */
+const LEAST_GAP_MS = 10_000;
+
 export interface Gap {
   readonly fromMs: number;
   readonly toMs: number;
@@ -139,6 +142,8 @@ export function gapOf(booking: { aosMs: number; losMs: number }, log: readonly L
     const toMs = Math.min(again?.atMs ?? booking.losMs, booking.losMs);
     if (toMs > mark.atMs) gaps.push({ fromMs: mark.atMs, toMs, from });
   });
-  const longest = gaps.toSorted((a, b) => b.toMs - b.fromMs - (a.toMs - a.fromMs))[0];
+  const longest = gaps
+    .filter(({ fromMs, toMs }) => toMs - fromMs >= LEAST_GAP_MS)
+    .toSorted((a, b) => b.toMs - b.fromMs - (a.toMs - a.fromMs))[0];
   return longest ?? null;
 }
