@@ -53,6 +53,8 @@ export class LiveHub implements BeforeApplicationShutdown {
       'Content-Type': 'text/event-stream; charset=utf-8',
       'Cache-Control': 'no-store, no-transform',
       'X-Accel-Buffering': 'no',
+      // A stream that was ended must not keep its line, or the server would wait for it when it closes.
+      Connection: 'close',
     });
     response.flushHeaders();
     if (this.listeners.size === 0) this.begin();

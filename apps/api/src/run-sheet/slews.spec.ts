@@ -7,7 +7,14 @@ const pass = (azimuthDeg: [number, number, number]) =>
   ({ azimuthDeg, elevationDeg: [5, 60, 5] }) as unknown as PassGeometry;
 const antenna = { mount: 'az-el', tiltDeg: 0, slewAzimuthDegPerS: 3, slewElevationDegPerS: 3 } as const;
 const before = { aosMs: 0, losMs: 10 * MINUTE_MS, pass: pass([10, 90, 180]) };
-const booking = { id: 'b', antennaId: 'a', number: 4127, guardFromMs: 20 * MINUTE_MS, guardToMs: 32 * MINUTE_MS };
+const booking = {
+  id: 'b',
+  antennaId: 'a',
+  number: 4127,
+  state: 'confirmed' as const,
+  guardFromMs: 20 * MINUTE_MS,
+  guardToMs: 32 * MINUTE_MS,
+};
 const quiet = { slew: null, closed: [], stop: null, nowMs: 0, antennaName: 'Tarnwick East' };
 
 describe('a slew between two contacts', () => {
@@ -44,6 +51,8 @@ describe('conflicts', () => {
     const stop = { people: ['Priya Nair'], reason: null };
     expect(conflictsOf(booking, { ...quiet, stop })).toMatchObject([{ kind: 'people' }]);
     expect(conflictsOf(booking, { ...quiet, stop, nowMs: -60 * MINUTE_MS })).toEqual([]);
+    const [running] = conflictsOf({ ...booking, state: 'under way' }, { ...quiet, stop });
+    expect(running?.sentence).toContain('the dish moves');
     const kept = { people: [], reason: 'ice' };
     expect(conflictsOf(booking, { ...quiet, stop: kept })).toMatchObject([{ kind: 'stop' }]);
   });

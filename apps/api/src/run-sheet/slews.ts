@@ -35,7 +35,7 @@ interface Closed {
   readonly toMs: number;
   readonly reason: string;
 }
-type Guarded = Pick<BookingRow, 'id' | 'antennaId' | 'number' | 'guardFromMs' | 'guardToMs'>;
+type Guarded = Pick<BookingRow, 'id' | 'antennaId' | 'number' | 'state' | 'guardFromMs' | 'guardToMs'>;
 
 /** What is wrong with one contact, in sentences. `stop` is null where the dish may move. */
 export function conflictsOf(
@@ -71,17 +71,14 @@ export function conflictsOf(
     );
   }
   if (stop && booking.guardFromMs - nowMs < SOON_MS && nowMs < booking.guardToMs) {
+    const means =
+      booking.state === 'under way'
+        ? `berth ${booking.number} runs and the dish moves. Get them out; the emergency stop comes before the contact.`
+        : `berth ${booking.number} cannot begin.`;
     if (stop.people.length > 0)
-      found.push(
-        conflict(
-          'people',
-          `${stop.people.join(', ')} signed in at ${antennaName}: berth ${booking.number} cannot begin.`,
-        ),
-      );
+      found.push(conflict('people', `${stop.people.join(', ')} signed in at ${antennaName}: ${means}`));
     if (stop.reason !== null)
-      found.push(
-        conflict('stop', `${antennaName} is to stay still (${stop.reason}): berth ${booking.number} cannot begin.`),
-      );
+      found.push(conflict('stop', `${antennaName} is to stay still (${stop.reason}): ${means}`));
   }
   return found;
 }

@@ -32,12 +32,18 @@ export async function moveSomePasses(stage: Stage, company: Company): Promise<vo
 async function bookedPasses(stage: Stage, company: Company): Promise<Booked[]> {
   const found = new Map<string, Booked>();
   for (const operator of company.operators) {
+    const soon = await stage.call(operator.manager, routes.listBookings, {
+      query: { fromUtc: utc(stage.nowMs() - HOUR_MS), toUtc: utc(stage.nowMs() + 3 * HOUR_MS), pageSize: 50 },
+    });
+    // What runs while the visitor comes stays where it is.
+    const running = new Set(soon.items.map((booking) => booking.spacecraftName));
     const { items } = await stage.call(operator.manager, routes.listBookings, {
       query: { state: 'confirmed', fromUtc: utc(stage.nowMs() + 3 * HOUR_MS), pageSize: 50 },
     });
     for (const booking of items) {
       const craft = operator.spacecraft.find(({ cast }) => cast.name === booking.spacecraftName);
-      if (craft && !found.has(craft.id)) found.set(craft.id, { operator, craft, booking });
+      if (craft && !running.has(craft.cast.name) && !found.has(craft.id))
+        found.set(craft.id, { operator, craft, booking });
     }
   }
   return [...found.values()].slice(0, 2);

@@ -1,5 +1,5 @@
 /** Who is at a dish when the visitor comes, and what the watch before wrote. */
-import { routes } from '@skyberth/shared';
+import { type RunSheet, routes } from '@skyberth/shared';
 import type { Company } from './settle-in.js';
 import type { Stage } from './stage.js';
 
@@ -8,18 +8,27 @@ const NOTES = [
   'New feed cover since noon. Watch the first low pass in the north and write down the Eb/N0.',
 ];
 
+const HOUR_MS = 3_600_000;
+/** A dish that moves no sooner than this is one to work at. */
+const QUIET_MS = 3 * HOUR_MS;
+
 export async function manTheStations(stage: Stage, company: Company): Promise<void> {
+  let isAnybodyOut = false;
   for (const [index, { manager }] of company.owners.entries()) {
-    const sheet = await stage.call(manager, routes.runSheet, { query: {} });
-    const text = NOTES[index % NOTES.length] ?? '';
-    await stage.call(manager, routes.writeHandOver, { params: { id: sheet.station.id }, body: { text } });
-    // At the dish that moves last, so that nothing sold is kept waiting for long.
-    const firstMs = (antennaId: string) => {
-      const [next] = sheet.contacts.filter((contact) => contact.antennaId === antennaId);
-      return next ? Date.parse(next.setupStartsUtc) : Number.POSITIVE_INFINITY;
-    };
-    const [quiet] = sheet.antennas.toSorted((a, b) => firstMs(b.id) - firstMs(a.id));
-    if (!quiet || index > 1) continue;
-    await stage.call(manager, routes.enterDish, { params: { id: quiet.id }, body: { name: 'Tom Askew' } });
+    const { stations } = await stage.call(manager, routes.runSheet, { query: {} });
+    for (const { id } of stations) {
+      const sheet = await stage.call(manager, routes.runSheet, { query: { stationId: id } });
+      const text = NOTES[index % NOTES.length] ?? '';
+      await stage.call(manager, routes.writeHandOver, { params: { id }, body: { text } });
+      const quiet = sheet.antennas.find((antenna) => firstMs(sheet, antenna.id) > stage.nowMs() + QUIET_MS);
+      if (isAnybodyOut || !quiet) continue;
+      await stage.call(manager, routes.enterDish, { params: { id: quiet.id }, body: { name: 'Tom Askew' } });
+      isAnybodyOut = true;
+    }
   }
+}
+
+function firstMs(sheet: RunSheet, antennaId: string): number {
+  const next = sheet.contacts.find((contact) => contact.antennaId === antennaId);
+  return next ? Date.parse(next.setupStartsUtc) : Number.POSITIVE_INFINITY;
 }

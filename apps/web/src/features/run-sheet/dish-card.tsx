@@ -21,6 +21,9 @@ import classes from './run-sheet.module.css';
 import { useEnter, useLeave, useRelease, useStop } from './run-sheet-queries.js';
 import { type DishNow, NEED_WORDS, slewWords } from './sheet-view.js';
 
+/** The next contact is near enough to say what it waits for. */
+const SOON_MS = 3_600_000;
+
 interface DishProps {
   readonly dish: DishNow;
   readonly nowMs: number;
@@ -142,6 +145,7 @@ function AtTheDish({ dish, nowMs }: DishProps) {
   const error = enter.error ?? stop.error ?? leave.error ?? release.error;
   const people = antenna.visits.map((visit) => visit.name).join(', ');
   const moves = now[0] ?? next;
+  const isMoving = now.some((contact) => contact.state === 'under way');
   const done = () => setAsking(null);
   return (
     <>
@@ -154,7 +158,8 @@ function AtTheDish({ dish, nowMs }: DishProps) {
             </>
           )}
           {people && <>Signed in: {people}. </>}
-          {moves && Date.parse(moves.setupStartsUtc) - nowMs < 3_600_000 && (
+          {isMoving && <strong>The dish moves now: get them out, the emergency stop comes before the contact. </strong>}
+          {!isMoving && moves && Date.parse(moves.setupStartsUtc) - nowMs < SOON_MS && (
             <strong>Nothing begins here until {people ? 'they are signed out' : 'it is released'}. </strong>
           )}
           This list stops no motor: lock the drive out by local rules before anybody goes in.

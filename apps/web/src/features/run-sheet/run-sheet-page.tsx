@@ -107,7 +107,7 @@ function Sheet({ sheet, isOld, onStation }: SheetProps) {
           <LaterTable sheet={sheet} contacts={view.later} />
           {view.next.length === 0 && (
             <p className={classes.quiet}>
-              Nothing is booked for the next 24 hours.{' '}
+              Nothing else is booked for the next 24 hours.{' '}
               <Anchor component={Link} to={paths.availability}>
                 Open more time
               </Anchor>{' '}
