@@ -1,5 +1,5 @@
 /** The three months: elements renewed, contacts bought, flown and reported, some of it going wrong. */
-import { type FoundPass, routes } from '@skyberth/shared';
+import { type Booking, type FoundPass, routes } from '@skyberth/shared';
 import { tleAt } from '../cast/elements.js';
 import type { Chance } from './chance.js';
 import { type Actor, Refused } from './client.js';
@@ -10,6 +10,7 @@ import type { Stage } from './stage.js';
 const HOUR_MS = 3_600_000;
 const DAY_MS = 24 * HOUR_MS;
 const ELEMENTS_EVERY_DAYS = 4;
+const USUAL_BYTES_PER_S = 110_000;
 
 /** A contact that was bought and waits to be flown and reported. */
 interface Bought {
@@ -21,6 +22,9 @@ interface Bought {
 export class Season {
   /** Contacts from here on are reported live as well, which takes the play longer. */
   liveFromMs = Number.POSITIVE_INFINITY;
+  /** Reports from here on name the volume that the link predicts; before, one rate serves all, which is faster to play. */
+  predictFromMs = Number.POSITIVE_INFINITY;
+  private readonly bytesPerS = new Map<string, number>();
   private bought: Bought[] = [];
   private setNumber = 1;
 
@@ -171,6 +175,23 @@ export class Season {
     }
   }
 
+  /** Bytes a second that the link of this spacecraft to this antenna lets through. */
+  private async rateOf(owner: Actor, booking: Booking): Promise<number> {
+    const [aosMs, losMs] = [Date.parse(booking.aosUtc), Date.parse(booking.losUtc)];
+    if (losMs < this.predictFromMs) return USUAL_BYTES_PER_S;
+    const pair = `${booking.spacecraftName} ${booking.antennaName}`;
+    const known = this.bytesPerS.get(pair);
+    if (known !== undefined) return known;
+    const { links } = await this.stage.call(owner, routes.bookingGeometry, { params: { id: booking.id } });
+    const bits = links.reduce(
+      (sum, { direction, volumeBits }) => sum + (direction === 'downlink' ? (volumeBits ?? 0) : 0),
+      0,
+    );
+    const rate = (bits / 8 / (losMs - aosMs)) * 1000;
+    this.bytesPerS.set(pair, rate);
+    return rate;
+  }
+
   private async report({ bookingId, owner }: Bought): Promise<void> {
     const params = { id: bookingId };
     const booking = await this.stage.call(owner, routes.getBooking, { params });
@@ -186,6 +207,7 @@ export class Season {
               : (['weather', 'interference'] as const),
           );
     const seconds = (Date.parse(booking.losUtc) - Date.parse(booking.aosUtc)) / 1000;
+    const bytesPerS = await this.rateOf(owner, booking);
     await this.stage.call(owner, routes.reportContact, {
       params,
       body: {
@@ -196,7 +218,7 @@ export class Season {
             ? null
             : utc(Date.parse(booking.aosUtc) + 3_000 + Math.round(this.chance.next() * 4_000)),
         lostUtc: outcome === 'failed' ? null : utc(Date.parse(booking.losUtc) - Math.round(this.chance.next() * 5_000)),
-        receivedBytes: outcome === 'failed' ? 0 : Math.round(seconds * 110_000 * (outcome === 'good' ? 1 : 0.6)),
+        receivedBytes: outcome === 'failed' ? 0 : Math.round(seconds * bytesPerS * (outcome === 'good' ? 0.96 : 0.6)),
         ebN0Db: outcome === 'failed' ? null : Math.round((8 + this.chance.next() * 5) * 10) / 10,
         note: outcome === 'good' ? '' : 'See the station log.',
       },

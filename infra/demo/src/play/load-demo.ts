@@ -16,6 +16,7 @@ import { buyForToday, leaveThingsOpen } from './today.js';
 const HOUR_MS = 3_600_000;
 const DAY_MS = 24 * HOUR_MS;
 const DISPUTE_EVERY_DAYS = 11;
+const PREDICTED_DAYS = 16;
 
 export interface DemoSettings {
   readonly environment: Readonly<Record<string, string | undefined>>;
@@ -38,6 +39,7 @@ export async function loadDemo({ environment, days, say }: DemoSettings): Promis
     const company = await settleIn(stage, say);
     await clearFleet(stage, company);
     const season = new Season(stage, company, new Chance(335));
+    season.predictFromMs = Date.now() - PREDICTED_DAYS * DAY_MS;
     for (let day = 0; day < days - 1; day += 1) {
       if (day % 10 === 0) say(`day ${day + 1} of ${days}`);
       await season.day(firstDayMs + day * DAY_MS, day);
