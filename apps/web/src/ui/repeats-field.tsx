@@ -32,10 +32,10 @@ export interface Repeats {
 export const asRrule = ({ kind, text }: Repeats): string | null =>
   kind === 'rule' ? text.trim().replace(/^RRULE:/i, '') : RULES[kind];
 
-/** The beginning of a sentence: `Every week`. */
+/** Within a sentence: `every week`. */
 export function repeatsWords(rrule: string | null): string {
   const known = (Object.keys(RULES) as Named[]).find((kind) => RULES[kind] === rrule);
-  return known === undefined ? `By ${rrule},` : LABELS[known].toLowerCase();
+  return known === undefined ? `by the rule ${rrule},` : LABELS[known].toLowerCase();
 }
 
 export interface RepeatsFieldProps {

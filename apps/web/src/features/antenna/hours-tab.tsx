@@ -48,68 +48,77 @@ export function HoursTab({ antenna, station, mayWrite }: TabProps) {
   });
   return (
     <div className={classes.columns}>
-      <form onSubmit={submit} noValidate className={classes.form}>
-        {form.errors[''] && <ProblemNotice title="The hours were not saved">{form.errors['']}</ProblemNotice>}
-        <section className={classes.part} aria-labelledby="weekly-title">
-          <header>
-            <h2 id="weekly-title" className={classes.cardTitle}>
-              Weekly hours
-            </h2>
-            <span className={classes.quiet}>On the station's clock, {station.timeZone.replaceAll('_', ' ')}.</span>
-          </header>
-          {form.values.rules.map((rule, index) => (
-            // biome-ignore lint/suspicious/noArrayIndexKey: rows have no name of their own; their fields are named by place
-            <div key={index} className={classes.listRow}>
-              <WeekdayPicker
-                label={`Days of row ${index + 1}`}
-                value={rule.days}
-                onChange={(days) => form.setFieldValue(`rules.${index}.days`, days)}
-                readOnly={!mayWrite}
-              />
-              <TextInput label="From" w={72} readOnly={!mayWrite} {...form.getInputProps(`rules.${index}.fromLocal`)} />
-              <TextInput label="To" w={72} readOnly={!mayWrite} {...form.getInputProps(`rules.${index}.toLocal`)} />
-              {mayWrite && (
-                <Anchor
-                  component="button"
-                  type="button"
-                  pb={8}
-                  onClick={() => form.removeListItem('rules', index)}
-                  aria-label={`Remove the hours of row ${index + 1}`}
+      <div className={classes.form}>
+        <form onSubmit={submit} noValidate>
+          {form.errors[''] && <ProblemNotice title="The hours were not saved">{form.errors['']}</ProblemNotice>}
+          <section className={classes.part} aria-labelledby="weekly-title">
+            <header>
+              <h2 id="weekly-title" className={classes.cardTitle}>
+                Weekly hours
+              </h2>
+              <span className={classes.quiet}>On the station's clock, {station.timeZone.replaceAll('_', ' ')}.</span>
+            </header>
+            {form.values.rules.map((rule, index) => (
+              // biome-ignore lint/suspicious/noArrayIndexKey: rows have no name of their own; their fields are named by place
+              <div key={index} className={classes.listRow}>
+                <WeekdayPicker
+                  label={`Days of row ${index + 1}`}
+                  value={rule.days}
+                  onChange={(days) => form.setFieldValue(`rules.${index}.days`, days)}
+                  readOnly={!mayWrite}
+                />
+                <TextInput
+                  label="From"
+                  w={72}
+                  readOnly={!mayWrite}
+                  {...form.getInputProps(`rules.${index}.fromLocal`)}
+                />
+                <TextInput label="To" w={72} readOnly={!mayWrite} {...form.getInputProps(`rules.${index}.toLocal`)} />
+                {mayWrite && (
+                  <Anchor
+                    component="button"
+                    type="button"
+                    pb={8}
+                    onClick={() => form.removeListItem('rules', index)}
+                    aria-label={`Remove the hours of row ${index + 1}`}
+                  >
+                    Remove
+                  </Anchor>
+                )}
+                {(form.errors[`rules.${index}`] ?? form.errors[`rules.${index}.days`]) && (
+                  <p className={classes.fieldError} role="alert">
+                    {form.errors[`rules.${index}`] ?? form.errors[`rules.${index}.days`]}
+                  </p>
+                )}
+              </div>
+            ))}
+            <p className={classes.quiet}>
+              24:00 is the end of the day; an end before the beginning runs past midnight. Nothing is sold outside these
+              hours.
+            </p>
+            {mayWrite && (
+              <Group>
+                <Button
+                  variant="default"
+                  onClick={() =>
+                    form.insertListItem('rules', { days: [1, 2, 3, 4, 5], fromLocal: '08:00', toLocal: '18:00' })
+                  }
                 >
-                  Remove
-                </Anchor>
-              )}
-              {(form.errors[`rules.${index}`] ?? form.errors[`rules.${index}.days`]) && (
-                <p className={classes.fieldError} role="alert">
-                  {form.errors[`rules.${index}`] ?? form.errors[`rules.${index}.days`]}
-                </p>
-              )}
-            </div>
-          ))}
-          <p className={classes.quiet}>
-            24:00 is the end of the day; an end before the beginning runs past midnight. Nothing is sold outside these
-            hours.
-          </p>
-          {mayWrite && (
-            <Group>
-              <Button
-                variant="default"
-                onClick={() =>
-                  form.insertListItem('rules', { days: [1, 2, 3, 4, 5], fromLocal: '08:00', toLocal: '18:00' })
-                }
-              >
-                Add hours
-              </Button>
-              <Button variant="default" onClick={() => form.setFieldValue('rules', [ROUND_THE_CLOCK])}>
-                Round the clock
-              </Button>
-              <Button type="submit" loading={form.submitting} disabled={!form.isDirty()}>
-                Save the hours
-              </Button>
-            </Group>
-          )}
-        </section>
-      </form>
+                  Add hours
+                </Button>
+                <Button variant="default" onClick={() => form.setFieldValue('rules', [ROUND_THE_CLOCK])}>
+                  Round the clock
+                </Button>
+                <Button type="submit" loading={form.submitting} disabled={!form.isDirty()}>
+                  Save the hours
+                </Button>
+              </Group>
+            )}
+          </section>
+        </form>
+        <CalendarRules antenna={antenna} station={station} mayWrite={mayWrite} />
+        <Blackouts antenna={antenna} mayWrite={mayWrite} timeZone={station.timeZone} />
+      </div>
       <div className={classes.stack}>
         <Paper component="section" withBorder className={classes.card} aria-labelledby="week-title">
           <h2 id="week-title" className={classes.cardTitle}>
@@ -129,10 +138,6 @@ export function HoursTab({ antenna, station, mayWrite }: TabProps) {
             />
           </Paper>
         )}
-      </div>
-      <div className={classes.form}>
-        <CalendarRules antenna={antenna} station={station} mayWrite={mayWrite} />
-        <Blackouts antenna={antenna} mayWrite={mayWrite} timeZone={station.timeZone} />
       </div>
     </div>
   );

@@ -51,5 +51,8 @@ export function useAddBlackouts(onDone: () => void) {
 
 function addedWords({ ids, touches }: ResponseOf<typeof routes.addBlackouts>): string {
   const what = ids.length === 1 ? 'The time is blocked out.' : `${ids.length} blackouts are in the calendar.`;
-  return touches.length === 0 ? what : `${what} ${touches.length} sold inside stay yours to serve.`;
+  if (touches.length === 0) return what;
+  return touches.length === 1
+    ? `${what} One contact sold inside stays yours to serve.`
+    : `${what} ${touches.length} contacts sold inside stay yours to serve.`;
 }
