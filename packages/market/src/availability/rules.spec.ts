@@ -68,6 +68,19 @@ describe('availability rules', () => {
     expect(expandRules([rule], Date.UTC(2026, 0, 1), Date.UTC(2026, 2, 1))).toHaveLength(2);
   });
 
+  it('leaves out exceptions, which a count counts all the same (RFC 5545 3.8.5.1)', () => {
+    const rule = {
+      id: 'daily',
+      rrule: 'FREQ=DAILY;COUNT=3',
+      startLocal: '2026-12-01T09:00',
+      timeZone: 'Europe/Oslo',
+      durationMin: 60,
+      exceptLocal: ['2026-12-02T09:00'],
+    };
+    const found = ruleInstances(rule, Date.UTC(2026, 10, 1), Date.UTC(2027, 0, 1));
+    expect(found.map((each) => each.fromMs)).toEqual([Date.UTC(2026, 11, 1, 8), Date.UTC(2026, 11, 3, 8)]);
+  });
+
   it('finds the same instances years later as by walking from the start', () => {
     const rules = fc.constantFrom(
       'FREQ=DAILY;INTERVAL=3',
