@@ -4,14 +4,17 @@ import { utc } from './days.js';
 import type { Company } from './settle-in.js';
 import type { Stage } from './stage.js';
 
-const DAY_MS = 86_400_000;
+const HOUR_MS = 3_600_000;
+/** Late enough that a visitor of the same day still finds it in use or to come. */
+const FROM_MS = 8 * HOUR_MS;
+const TO_MS = 72 * HOUR_MS;
 
 /** Takes the states that belong to a bought contact as what flight dynamics computed for it. */
 export async function giveEphemeris(stage: Stage, company: Company): Promise<void> {
   const [operator] = company.operators;
   if (!operator) return;
   const nowMs = stage.nowMs();
-  const query = { state: 'confirmed', fromUtc: utc(nowMs), toUtc: utc(nowMs + 3 * DAY_MS), sort: 'aos' } as const;
+  const query = { state: 'confirmed', fromUtc: utc(nowMs + FROM_MS), toUtc: utc(nowMs + TO_MS), sort: 'aos' } as const;
   const bookings = await stage.call(operator.manager, routes.listBookings, { query });
   const [next] = bookings.items;
   if (!next) return;
