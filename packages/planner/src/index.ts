@@ -1,5 +1,5 @@
 /** From what a fleet needs to the cheapest set of contacts that gives it, computed from arguments alone. */
-export { costOf } from './assemble.js';
+export { costSum } from './assemble.js';
 export { type NeedFault, needFaults } from './check-need.js';
 export { type CraftFigures, clash, shortfalls, sumsOf } from './check-plan.js';
 export { greedyPlan } from './greedy.js';
