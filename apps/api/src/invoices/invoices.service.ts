@@ -9,7 +9,7 @@ import { CONFIG, type Config } from '../platform/config.js';
 import { newId } from '../platform/ids.js';
 import type { Db } from '../platform/transaction.js';
 import { amountsOf, creditOf, creditStepOf, frozenTreatment } from './invoice-amounts.js';
-import { invoicePdf } from './invoice-pdf.js';
+import { InvoicePress } from './invoice-press.js';
 import { InvoiceRepository, type InvoiceRow } from './invoices.repository.js';
 
 /** What an invoice is about: a booking with its frozen price. */
@@ -29,13 +29,14 @@ export class InvoiceService implements OnModuleInit {
   constructor(
     private readonly repository: InvoiceRepository,
     private readonly attachments: MailAttachments,
+    private readonly press: InvoicePress,
     private readonly audit: AuditService,
     @Inject(CLOCK) private readonly clock: ClockPort,
     @Inject(CONFIG) private readonly config: Config,
   ) {}
 
   onModuleInit(): void {
-    this.attachments.register('invoice', (id) => invoicePdf(this.repository.byId(id).document));
+    this.attachments.register('invoice', (id) => this.press.print(this.repository.byId(id).document));
   }
 
   /** The invoice of a booking; the one that there is, where it was issued before. */
@@ -111,7 +112,7 @@ export class InvoiceService implements OnModuleInit {
 
   async pdf(reader: Principal, invoiceId: string): Promise<{ body: Buffer; fileName: string }> {
     const { document } = this.repository.forReader(reader, invoiceId);
-    return { body: await invoicePdf(document), fileName: `${document.number}.pdf` };
+    return { body: await this.press.print(document), fileName: `${document.number}.pdf` };
   }
 
   /** The rate is the one that the buyer saw; words come from the law's rules as long as they lead to the same rate. */

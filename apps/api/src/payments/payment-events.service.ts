@@ -64,7 +64,7 @@ export class PaymentEvents implements OnModuleInit {
     await this.readMissed().catch((error: unknown) => {
       this.log.warn(`events: ${error instanceof Error ? error.message : String(error)}`);
       this.readings.save(READING, {
-        readUntilMs: last?.readUntilMs ?? nowMs,
+        readUntilMs: last?.readUntilMs ?? 0,
         ranMs: nowMs,
         note: 'The provider could not be read.',
       });
@@ -74,7 +74,7 @@ export class PaymentEvents implements OnModuleInit {
   /** Reads events since the last time and carries out those that never came, oldest first; answers how many. */
   async readMissed(): Promise<number> {
     const nowMs = this.clock.nowMs();
-    const readUntilMs = this.readings.find(READING)?.readUntilMs ?? nowMs;
+    const readUntilMs = this.readings.find(READING)?.readUntilMs ?? 0;
     const sinceMs = Math.max(readUntilMs - OVERLAP_MS, nowMs - KEPT_MS);
     const missed: ReadEvent[] = [];
     for await (const page of this.books.events(sinceMs)) {

@@ -2,7 +2,15 @@
 import type { MovementAction } from '@skyberth/shared';
 import type { MovementRow } from './reconciliation.repository.js';
 
-export type MovementKind = 'charge' | 'refund' | 'chargeback' | 'chargeback back' | 'fee' | 'to the bank' | 'other';
+export type MovementKind =
+  | 'charge'
+  | 'refund'
+  | 'chargeback'
+  | 'chargeback back'
+  | 'fee'
+  | 'transfer'
+  | 'to the bank'
+  | 'other';
 
 /** What a movement is, by the provider's own words for it. */
 export function kindOf(movement: Pick<MovementRow, 'type' | 'category' | 'sourceId' | 'amountMinor'>): MovementKind {
@@ -13,6 +21,7 @@ export function kindOf(movement: Pick<MovementRow, 'type' | 'category' | 'source
   if (category === 'dispute') return 'chargeback';
   if (type === 'adjustment' && sourceId?.startsWith('dp_')) return amountMinor < 0 ? 'chargeback' : 'chargeback back';
   if (type === 'stripe_fee' || category === 'fee') return 'fee';
+  if (type === 'transfer') return 'transfer';
   if (type === 'payout') return 'to the bank';
   return 'other';
 }
@@ -32,6 +41,8 @@ export function causeOf(
       return sourceId === null ? null : `chargeback-won:${sourceId}`;
     case 'fee':
       return `provider-fee:${id}`;
+    case 'transfer':
+      return sourceId === null ? null : `transfer:${sourceId}`;
     case 'to the bank':
       return `withdrawal:${id}`;
     case 'other':
@@ -79,6 +90,8 @@ export function differenceOf(
       };
     case 'to the bank':
       return { why: 'Money went to our own bank account and is not written yet.', actions: ['withdrawal', 'suspense'] };
+    case 'transfer':
+      return { why: 'No payout run here ordered this transfer.', actions: ['suspense'] };
     case 'fee':
     case 'other':
       return { why: 'Nothing in the ledger says the same.', actions: ['suspense'] };

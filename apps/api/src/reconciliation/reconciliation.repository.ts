@@ -85,6 +85,22 @@ export class ReconciliationRepository {
       .all();
   }
 
+  /** Refunds of a payment that have no entry yet, oldest first. */
+  openRefunds(tx: Db, intentId: string): MovementRow[] {
+    return tx
+      .select()
+      .from(providerMovements)
+      .where(
+        and(
+          eq(providerMovements.intentId, intentId),
+          eq(providerMovements.state, 'open'),
+          inArray(providerMovements.type, ['refund', 'payment_refund']),
+        ),
+      )
+      .orderBy(asc(providerMovements.atMs), asc(providerMovements.id))
+      .all();
+  }
+
   open(beforeMs = Number.MAX_SAFE_INTEGER): MovementRow[] {
     return this.db
       .select()

@@ -214,21 +214,42 @@ export class ReconciliationService implements OnModuleInit {
 
   private matchOne(tx: Db, movement: MovementRow): boolean {
     const kind = kindOf(movement);
+    if (kind === 'refund') return this.matchRefunds(tx, movement);
     const cause = causeOf(kind, movement);
-    const found =
-      kind === 'refund' && movement.intentId !== null
-        ? this.repository
-            .freeEntriesOfIntent(tx, movement.intentId, 'returned:')
-            .find((entry) => entry.amountMinor === movement.amountMinor)
-        : cause === null
-          ? undefined
-          : this.repository.freeEntry(tx, cause);
+    const found = cause === null ? undefined : this.repository.freeEntry(tx, cause);
     const expectedMinor = kind === 'fee' ? movement.netMinor : movement.amountMinor;
     if (!found || found.amountMinor !== expectedMinor || found.currency !== movement.currency) return false;
-    if (movement.state === 'in suspense') this.clearSuspense(tx, movement);
-    const changedMs = this.clock.nowMs();
-    this.repository.update(tx, movement.id, { state: 'matched', entryCause: found.causeKey, changedMs });
+    this.settle(tx, movement, found.causeKey);
     return true;
+  }
+
+  /**
+   * A refund has the entry of its amount. Where news came in the wrong order one entry stands for several refunds, which the
+   * provider counts one by one: then all that is open of the payment must add up on both sides.
+   */
+  private matchRefunds(tx: Db, movement: MovementRow): boolean {
+    const now = this.repository.byId(movement.id, tx);
+    if (movement.intentId === null || now?.state === 'matched') return false;
+    const entries = this.repository.freeEntriesOfIntent(tx, movement.intentId, 'returned:');
+    const exact = entries.find((entry) => entry.amountMinor === movement.amountMinor);
+    if (exact) {
+      this.settle(tx, movement, exact.causeKey);
+      return true;
+    }
+    const refunds = this.repository.openRefunds(tx, movement.intentId);
+    const sumOf = (rows: readonly { amountMinor: number }[]) => rows.reduce((sum, row) => sum + row.amountMinor, 0);
+    if (entries.length === 0 || entries.length > refunds.length || sumOf(refunds) !== sumOf(entries)) return false;
+    const causes = entries.map((entry) => entry.causeKey);
+    // An entry stands for one movement in the database; the others name the last entry and themselves.
+    refunds.forEach((refund, index) => {
+      this.settle(tx, refund, causes[index] ?? `${causes.at(-1)}+${refund.id}`);
+    });
+    return true;
+  }
+
+  private settle(tx: Db, movement: MovementRow, entryCause: string): void {
+    if (movement.state === 'in suspense') this.clearSuspense(tx, movement);
+    this.repository.update(tx, movement.id, { state: 'matched', entryCause, changedMs: this.clock.nowMs() });
   }
 
   /** The explanation came after all: what stood in suspense is taken back. */
