@@ -52,7 +52,15 @@ function geometryAt(stationId: string): DriftGeometry {
     lowestReceiveDeg: -10,
     lowestTransmitDeg: -10,
   });
-  const craft: CraftInput = { id: 'craft', name: 'Craft', shortName: 'C', spans: [], radios: [], clearances: [], contacts: [] };
+  const craft: CraftInput = {
+    id: 'craft',
+    name: 'Craft',
+    shortName: 'C',
+    spans: [],
+    radios: [],
+    clearances: [],
+    contacts: [],
+  };
   const inputs = { craft: () => [craft], antenna: () => antenna, forEngine: () => [antenna] };
   return new DriftGeometry(inputs as unknown as MarketInputs, new InProcessEngine());
 }

@@ -25,7 +25,7 @@ const EVERY_MS = 20_000;
 /** In one turn; the rest waits for the next, soonest contacts first. */
 const MOST_IN_A_TURN = 500;
 /** Less is under what elements can know and changes no second that anybody reads. */
-export const LEAST_SHIFT_MS = 1_000;
+const LEAST_SHIFT_MS = 1_000;
 
 interface Drifted {
   readonly booking: BookingRow;
@@ -111,7 +111,7 @@ export class DriftWatch implements OnModuleInit {
     if (furthestMs < LEAST_SHIFT_MS) return;
     const why = this.whyNot(tx, { ...drifted, to }, furthestMs);
     if (why === null) return;
-    const words = `By elements of ${newer.epochUtc.slice(0, 19)} the pass moves: ${shiftWords(shift)}`;
+    const words = `By elements of ${utcText(newer.epochMs)} the pass moves: ${shiftWords(shift)}`;
     this.ask(tx, { ...drifted, to }, `${words}, ${why}`);
   }
 
@@ -169,7 +169,7 @@ export class DriftWatch implements OnModuleInit {
   }
 
   private lose(tx: Db, booking: BookingRow, newer: KeptElements): void {
-    const sentence = `By elements of ${newer.epochUtc.slice(0, 19)} the spacecraft does not rise over this antenna’s horizon then; the contact is cancelled and all of the price goes back.`;
+    const sentence = `By elements of ${utcText(newer.epochMs)} the spacecraft does not rise over this antenna’s horizon then; the contact is cancelled and all of the price goes back.`;
     const advice = 'Other passes of the day are on the board: Find time, with this spacecraft.';
     this.ending.passLost(tx, booking, { sentence, advice });
   }

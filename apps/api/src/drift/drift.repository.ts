@@ -42,7 +42,7 @@ export class DriftRepository {
   due(nowMs: number, limit: number): BookingRow[] {
     const since = sql`coalesce(${driftChecks.checkedMs}, ${bookings.createdMs}) - ${WRITING_MS}`;
     return this.db
-      .select({ booking: bookings, elementSetId: driftChecks.elementSetId })
+      .select({ booking: bookings })
       .from(bookings)
       .leftJoin(driftChecks, eq(driftChecks.bookingId, bookings.id))
       .where(

@@ -15,7 +15,7 @@ const BEAT_EVERY_MS = 15_000;
 /** A stream ends after so many beats, ten minutes; the page comes back with a session that is checked anew. */
 const MOST_BEATS = 40;
 const MOST_AT_ONCE = 500;
-export const MOST_STREAMS_OF_ONE = 8;
+const MOST_STREAMS_OF_ONE = 8;
 const MOST_STREAMS = 2_000;
 /** A reader this far behind is cut off and comes back by itself. */
 const MOST_UNREAD_BYTES = 1_000_000;
@@ -69,10 +69,6 @@ export class LiveHub implements BeforeApplicationShutdown {
   /** Looks at once instead of at the next turn; called after something was written. */
   poke(): void {
     if (this.listeners.size > 0) this.look();
-  }
-
-  listening(): number {
-    return this.listeners.size;
   }
 
   beforeApplicationShutdown(): void {
