@@ -14,10 +14,13 @@ import { ledgerRoutes } from './contracts/ledger.js';
 import { liveRoutes } from './contracts/live.js';
 import { marketRoutes } from './contracts/market.js';
 import { maskHistoryRoutes } from './contracts/mask-history.js';
+import { messageRoutes } from './contracts/messages.js';
 import { oversightRoutes } from './contracts/oversight.js';
+import { payoutRoutes } from './contracts/payouts.js';
 import { planningRoutes } from './contracts/planning.js';
 import { reconciliationRoutes } from './contracts/reconciliation.js';
 import { runSheetRoutes } from './contracts/run-sheet.js';
+import { secondFactorRoutes } from './contracts/second-factor.js';
 import { spacecraftRoutes } from './contracts/spacecraft.js';
 import { standbyRoutes } from './contracts/standby.js';
 import { stationRoutes } from './contracts/stations.js';
@@ -47,6 +50,9 @@ export const routes = {
   ...creditRoutes,
   ...taxRoutes,
   ...reconciliationRoutes,
+  ...payoutRoutes,
+  ...secondFactorRoutes,
+  ...messageRoutes,
   ...oversightRoutes,
   ...systemRoutes,
 } as const;

@@ -2,6 +2,7 @@
 import { z } from 'zod';
 import { Currency, Id, IdParams, PageQuery, pageOf, UtcTime } from '../primitives.js';
 import { defineRoute } from '../route.js';
+import { AttachedFile, FileIds } from './files.js';
 
 export const DISPUTE_REASONS = [
   'no signal',
@@ -40,6 +41,7 @@ export const DisputeStatement = z.object({
   atUtc: UtcTime,
   text: z.string(),
   observations: z.array(Observation),
+  files: z.array(AttachedFile),
 });
 export type DisputeStatement = z.infer<typeof DisputeStatement>;
 
@@ -210,6 +212,7 @@ export const disputeRoutes = {
         observations: Observations,
         gapFromUtc: UtcTime.nullable().default(null),
         gapToUtc: UtcTime.nullable().default(null),
+        fileIds: FileIds.default([]),
       })
       .refine(({ gapFromUtc, gapToUtc }) => (gapFromUtc === null) === (gapToUtc === null), {
         path: ['gapToUtc'],
@@ -222,7 +225,7 @@ export const disputeRoutes = {
           message: 'The time without data must end after it begins.',
         },
       ),
-    errors: ['not-found', 'wrong-state', 'already-exists', 'elements-unusable'],
+    errors: ['not-found', 'wrong-state', 'already-exists', 'elements-unusable', 'too-large'],
   }),
   stateInDispute: defineRoute({
     ...one,
@@ -232,8 +235,8 @@ export const disputeRoutes = {
     summary: 'Add to what your side says; nothing said can be changed',
     access: 'disputes.answer',
     data: 'parties',
-    body: z.object({ text: StatementText, observations: Observations }),
-    errors: ['not-found', 'wrong-state'],
+    body: z.object({ text: StatementText, observations: Observations, fileIds: FileIds.default([]) }),
+    errors: ['not-found', 'wrong-state', 'too-large'],
   }),
   askInDispute: defineRoute({
     ...one,

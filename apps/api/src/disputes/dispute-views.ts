@@ -4,11 +4,15 @@ import type { SkyberthDatabase } from '@skyberth/drizzle';
 import { can, type Dispute, type DisputeSide, type DisputeSummary, type Principal } from '@skyberth/shared';
 import { BookingRepository, type BookingRow } from '../bookings/bookings.repository.js';
 import { PartiesRepository } from '../bookings/parties.repository.js';
+import { FilesService } from '../files/files.service.js';
 import { LedgerService } from '../ledger/ledger.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
 import { DisputeMoney } from './dispute-money.js';
 import { DisputeRepository, type DisputeRow } from './disputes.repository.js';
+
+/** What files of statements are attached to. */
+export const STATEMENT_FILES = 'dispute statement';
 
 const utc = (timeMs: number): string => new Date(timeMs).toISOString();
 const utcOrNull = (timeMs: number | null): string | null => (timeMs === null ? null : utc(timeMs));
@@ -30,6 +34,7 @@ export class DisputeViews {
     private readonly parties: PartiesRepository,
     private readonly ledger: LedgerService,
     private readonly money: DisputeMoney,
+    private readonly files: FilesService,
   ) {}
 
   summary(row: DisputeRow): DisputeSummary {
@@ -39,18 +44,24 @@ export class DisputeViews {
   full(caller: Principal, row: DisputeRow): Dispute {
     const booking = this.bookingOf(row);
     const { evidence } = this.repository.evidence(row.id);
+    const statements = this.repository.statements(row.id);
+    const files = this.files.of(
+      STATEMENT_FILES,
+      statements.map(({ row: said }) => said.id),
+    );
     const gapS = gapSeconds(evidence.gap);
     const lengthS = (booking.losMs - booking.aosMs) / 1000;
     return {
       ...this.summaryOf(row, booking),
       gapS,
-      statements: this.repository.statements(row.id).map(({ row: said, name }) => ({
+      statements: statements.map(({ row: said, name }) => ({
         id: said.id,
         side: said.side,
         byName: name,
         atUtc: utc(said.atMs),
         text: said.text,
         observations: said.observations,
+        files: files.get(said.id) ?? [],
       })),
       evidence,
       // The journal is the marketplace's own; each side has its invoices and statements.

@@ -2,6 +2,7 @@
 import { Module, type OnModuleInit } from '@nestjs/common';
 import { BookingFlowModule } from '../bookings/booking-flow.module.js';
 import { DriftGeometry } from '../drift/drift-geometry.js';
+import { FilesModule } from '../files/files.module.js';
 import { JobsModule } from '../jobs/jobs.module.js';
 import { JobsService } from '../jobs/jobs.service.js';
 import { MarketModule } from '../market/market.module.js';
@@ -17,7 +18,7 @@ import { EvidenceService } from './evidence.service.js';
 const CLOSE_EVERY_MS = 600_000;
 
 @Module({
-  imports: [BookingFlowModule, MarketModule, SpacecraftModule, JobsModule],
+  imports: [BookingFlowModule, FilesModule, MarketModule, SpacecraftModule, JobsModule],
   controllers: [DisputesController],
   providers: [
     DisputeRepository,

@@ -84,6 +84,17 @@ export class DisputeRepository {
     tx.insert(disputeStatements).values(row).run();
   }
 
+  /** Whether the viewer may see the dispute that a statement belongs to. */
+  seesStatement(viewer: Principal, statementId: string): boolean {
+    const row = this.db
+      .select({ id: disputes.id })
+      .from(disputeStatements)
+      .innerJoin(disputes, eq(disputes.id, disputeStatements.disputeId))
+      .where(and(eq(disputeStatements.id, statementId), visibleTo(viewer)))
+      .get();
+    return row !== undefined;
+  }
+
   statements(disputeId: string): { row: StatementRow; name: string }[] {
     return this.db
       .select({ row: disputeStatements, name: people.name })

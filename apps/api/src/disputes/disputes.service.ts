@@ -1,5 +1,5 @@
 /** Opening, answering, deciding and appealing disputes. */
-import { Inject, Injectable } from '@nestjs/common';
+import { Inject, Injectable, type OnModuleInit } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
 import type {
   BodyOf,
@@ -16,6 +16,8 @@ import { BookingTransitions, type Mover } from '../bookings/booking-transitions.
 import { moneyText } from '../bookings/booking-words.js';
 import { BookingRepository, type BookingRow } from '../bookings/bookings.repository.js';
 import { DISPUTE_WITHIN_MS } from '../bookings/report-terms.js';
+import { FileAccess } from '../files/file-access.js';
+import { FilesService } from '../files/files.service.js';
 import { AuditService } from '../platform/audit.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
@@ -25,7 +27,7 @@ import { type Db, write } from '../platform/transaction.js';
 import { DisputeMoney } from './dispute-money.js';
 import { DisputeNotices } from './dispute-notices.js';
 import { APPEAL_WITHIN_MS, DECIDE_WITHIN_MS, STATEMENT_WITHIN_MS } from './dispute-terms.js';
-import { DisputeViews, disputeSideOf } from './dispute-views.js';
+import { DisputeViews, disputeSideOf, STATEMENT_FILES } from './dispute-views.js';
 import { type DecisionRow, DisputeRepository, type DisputeRow } from './disputes.repository.js';
 import { EvidenceService, type Gap } from './evidence.service.js';
 
@@ -34,10 +36,11 @@ const PRECEDENTS_SHOWN = 100;
 interface Said {
   readonly text: string;
   readonly observations?: readonly Observation[];
+  readonly fileIds?: readonly string[];
 }
 
 @Injectable()
-export class DisputesService {
+export class DisputesService implements OnModuleInit {
   constructor(
     @Inject(DATABASE) private readonly db: SkyberthDatabase,
     @Inject(CLOCK) private readonly clock: ClockPort,
@@ -49,7 +52,14 @@ export class DisputesService {
     private readonly notices: DisputeNotices,
     private readonly views: DisputeViews,
     private readonly audit: AuditService,
+    private readonly files: FilesService,
+    private readonly access: FileAccess,
   ) {}
+
+  /** Files of a statement are read by whoever sees its dispute. */
+  onModuleInit(): void {
+    this.access.register(STATEMENT_FILES, (caller, statementId) => this.repository.seesStatement(caller, statementId));
+  }
 
   list(caller: Principal, query: QueryOf<typeof routes.listDisputes>): ResponseOf<typeof routes.listDisputes> {
     const { state, bookingId = null, page, pageSize } = query;
@@ -309,6 +319,7 @@ export class DisputesService {
       text: said.text,
       observations: [...(said.observations ?? [])],
     });
+    this.files.link(tx, { caller, subjectKind: STATEMENT_FILES, subjectId: id, fileIds: said.fileIds ?? [] });
     this.record(tx, caller, 'dispute.state', dispute, { side, statementId: id });
     return id;
   }

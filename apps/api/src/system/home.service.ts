@@ -3,6 +3,7 @@ import { Inject, Injectable } from '@nestjs/common';
 import { can, type HomeView, type Principal } from '@skyberth/shared';
 import { utcText } from '../bookings/booking-words.js';
 import { ClearanceBook } from '../clearances/clearance-book.js';
+import { MessagesRepository } from '../messages/messages.repository.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { StandingService } from '../platform/standing.js';
 import { ElementsService } from '../spacecraft/elements.service.js';
@@ -30,6 +31,7 @@ export class HomeService {
     private readonly elements: ElementsService,
     private readonly clearances: ClearanceBook,
     private readonly standing: StandingService,
+    private readonly messages: MessagesRepository,
     @Inject(CLOCK) private readonly clock: ClockPort,
   ) {}
 
@@ -59,6 +61,12 @@ export class HomeService {
   }
 
   private countsFor(caller: Principal): Record<string, number> {
+    if (!can(caller, 'messages.read')) return this.workFor(caller);
+    const side = caller.organisationKind === 'staff' ? 'admin' : caller.organisationKind;
+    return { messages: this.messages.newFor(caller, side, caller.personId), ...this.workFor(caller) };
+  }
+
+  private workFor(caller: Principal): Record<string, number> {
     if (caller.organisationKind === 'owner') {
       return { requests: this.repository.countBookings('owner', caller.organisationId, ['awaiting owner']) };
     }

@@ -3,6 +3,7 @@
 import { Module } from '@nestjs/common';
 import { ClearanceRecordsModule } from '../clearances/clearance-records.module.js';
 import { JobsModule } from '../jobs/jobs.module.js';
+import { MessagesModule } from '../messages/messages.module.js';
 import { OutboxModule } from '../outbox/outbox.module.js';
 import { SpacecraftModule } from '../spacecraft/spacecraft.module.js';
 import { HomeRepository } from './home.repository.js';
@@ -16,7 +17,7 @@ import { SystemRepository } from './system.repository.js';
 import { SystemService } from './system.service.js';
 
 @Module({
-  imports: [ClearanceRecordsModule, JobsModule, OutboxModule, SpacecraftModule],
+  imports: [MessagesModule, ClearanceRecordsModule, JobsModule, OutboxModule, SpacecraftModule],
   controllers: [SystemController],
   providers: [
     Housekeeping,
