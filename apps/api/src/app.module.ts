@@ -17,9 +17,10 @@ import { MarketModule } from './market/market.module.js';
 import { OutboxModule } from './outbox/outbox.module.js';
 import { OversightModule } from './oversight/oversight.module.js';
 import { PaymentsModule } from './payments/payments.module.js';
+import { PayoutsModule } from './payouts/payouts.module.js';
+import { PlanningModule } from './planning/planning.module.js';
 import type { ClockPort } from './platform/clock.js';
 import type { Config } from './platform/config.js';
-import { PlanningModule } from './planning/planning.module.js';
 import { PlatformModule } from './platform/platform.module.js';
 import { ReconciliationModule } from './reconciliation/reconciliation.module.js';
 import { RunSheetModule } from './run-sheet/run-sheet.module.js';
@@ -51,6 +52,7 @@ export class AppModule {
         PaymentsModule,
         InvoicesModule,
         LedgerModule,
+        PayoutsModule,
         ReconciliationModule,
         CreditModule,
         MarketModule,

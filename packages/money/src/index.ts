@@ -14,6 +14,7 @@ export * from './ledger/months.js';
 export * from './ledger/suspense.js';
 export * from './money-error.js';
 export * from './payout/payout.js';
+export * from './payout/settlement.js';
 export * from './rounding.js';
 export * from './tax/rates.js';
 export * from './tax/treatment.js';

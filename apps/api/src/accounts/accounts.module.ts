@@ -12,6 +12,8 @@ import { OrganisationService } from './organisation.service.js';
 import { OrganisationsRepository } from './organisations.repository.js';
 import { PasswordHasher } from './password-hasher.js';
 import { PeopleRepository } from './people.repository.js';
+import { SecondFactorController } from './second-factor.controller.js';
+import { SecondFactorService } from './second-factor.service.js';
 import { SessionCookies } from './session-cookies.js';
 import { SessionsRepository } from './sessions.repository.js';
 import { SessionsService } from './sessions.service.js';
@@ -19,7 +21,7 @@ import { SignUpService } from './sign-up.service.js';
 
 @Module({
   imports: [MailModule, JwtModule.register({})],
-  controllers: [AuthController, OrganisationController],
+  controllers: [AuthController, OrganisationController, SecondFactorController],
   providers: [
     AccessTokens,
     AccessTokenStrategy,
@@ -29,11 +31,12 @@ import { SignUpService } from './sign-up.service.js';
     OrganisationsRepository,
     PasswordHasher,
     PeopleRepository,
+    SecondFactorService,
     SessionCookies,
     SessionsRepository,
     SessionsService,
     SignUpService,
   ],
-  exports: [OrganisationService],
+  exports: [SecondFactorService, OrganisationService],
 })
 export class AccountsModule {}

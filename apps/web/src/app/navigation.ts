@@ -35,6 +35,7 @@ const OWNER: readonly Page[] = [
 ];
 const FINANCE: readonly Page[] = [
   HOME,
+  { label: 'Payouts', to: paths.payouts },
   { label: 'Ledger', to: paths.ledger },
   { label: 'Reconciliation', to: paths.reconciliation },
   { label: 'Tax and fees', to: paths.taxAndFees },

@@ -208,6 +208,18 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('../features/run-sheet/wall-page.js')).WallPage }),
   },
   {
+    path: paths.payouts,
+    lazy: async () => ({ Component: (await import('../features/payouts/payouts-page.js')).PayoutsPage }),
+  },
+  {
+    path: paths.payoutRun(':id'),
+    lazy: async () => ({ Component: (await import('../features/payouts/payout-run-page.js')).PayoutRunPage }),
+  },
+  {
+    path: paths.security,
+    lazy: async () => ({ Component: (await import('../features/security/security-page.js')).SecurityPage }),
+  },
+  {
     path: paths.ledger,
     lazy: async () => ({ Component: (await import('../features/ledger/ledger-page.js')).LedgerPage }),
   },
