@@ -4,6 +4,7 @@ import { tleAt } from '../cast/elements.js';
 import type { Chance } from './chance.js';
 import { type Actor, Refused } from './client.js';
 import { flyLive } from './live.js';
+import { buyOnAccount } from './money.js';
 import type { Company, PlayOperator } from './settle-in.js';
 import type { Stage } from './stage.js';
 
@@ -130,6 +131,7 @@ export class Season {
 
   /** With the saved card; the first time on the payment page, which keeps the card. */
   async pay(operator: PlayOperator, bookingId: string): Promise<void> {
+    if (await buyOnAccount(this.stage, operator, bookingId)) return;
     const params = { id: bookingId };
     const cards = await this.stage.call(operator.manager, routes.savedCards, {});
     const savedCardId = cards.items[0]?.id ?? null;
@@ -230,7 +232,7 @@ export class Season {
 export const utc = (timeMs: number): string => new Date(timeMs).toISOString();
 
 /** Enters the published test number of a good card on the payment page, as a browser would. */
-async function payOnPage(url: string): Promise<void> {
+export async function payOnPage(url: string): Promise<void> {
   const fields = new URLSearchParams({ number: '4242 4242 4242 4242', expiry: '12/34', cvc: '123', name: 'Demo' });
   const answer = await fetch(url, { method: 'POST', body: fields, redirect: 'manual' });
   if (answer.status !== 303) throw new Error(`The payment page did not take the card: ${await answer.text()}`);

@@ -3,10 +3,11 @@ import { OWNERS } from '../cast/owners.js';
 import { Chance } from './chance.js';
 import { buyUplinks, clearFleet, leaveClearancesOpen, reportUplinks } from './clearances.js';
 import { PASSWORD } from './client.js';
-import { Season } from './days.js';
+import { payOnPage, Season } from './days.js';
 import { disputeAndDecide, leaveDisputesOpen } from './disputes.js';
 import { moveSomePasses } from './drift.js';
 import { buyForThisMinute, reportWhatRuns } from './live.js';
+import { askForAccount, chargeBack, closeMonths, openMonthlyAccount, payBills } from './money.js';
 import { giveEphemeris } from './own-ephemeris.js';
 import { manTheStations } from './run-sheet.js';
 import { settleIn } from './settle-in.js';
@@ -16,6 +17,7 @@ import { buyForToday, leaveThingsOpen } from './today.js';
 const HOUR_MS = 3_600_000;
 const DAY_MS = 24 * HOUR_MS;
 const DISPUTE_EVERY_DAYS = 11;
+const CHARGEBACK_EVERY_DAYS = 21;
 const PREDICTED_DAYS = 16;
 
 export interface DemoSettings {
@@ -38,6 +40,7 @@ export async function loadDemo({ environment, days, say }: DemoSettings): Promis
   try {
     const company = await settleIn(stage, say);
     await clearFleet(stage, company);
+    await openMonthlyAccount(stage, company);
     const season = new Season(stage, company, new Chance(335));
     season.predictFromMs = Date.now() - PREDICTED_DAYS * DAY_MS;
     for (let day = 0; day < days - 1; day += 1) {
@@ -45,6 +48,10 @@ export async function loadDemo({ environment, days, say }: DemoSettings): Promis
       await season.day(firstDayMs + day * DAY_MS, day);
       if (day % DISPUTE_EVERY_DAYS === DISPUTE_EVERY_DAYS - 1)
         await disputeAndDecide(stage, company, Math.floor(day / DISPUTE_EVERY_DAYS));
+      if (day % CHARGEBACK_EVERY_DAYS === CHARGEBACK_EVERY_DAYS - 1) {
+        await chargeBack(stage, company, day % 2 === 0 ? 'won' : 'lost');
+        await payBills(stage, company, payOnPage);
+      }
     }
     const nowMs = Date.now();
     await stage.moveTo(nowMs - 9 * HOUR_MS);
@@ -62,6 +69,9 @@ export async function loadDemo({ environment, days, say }: DemoSettings): Promis
     await giveEphemeris(stage, company);
     await leaveThingsOpen(stage, company, season);
     await leaveDisputesOpen(stage, company);
+    await chargeBack(stage, company, null);
+    await askForAccount(stage, company);
+    await closeMonths(stage, company);
     await moveSomePasses(stage, company);
     await manTheStations(stage, company);
     await reportWhatRuns(stage, company);
