@@ -14,6 +14,7 @@ import { LedgerModule } from './ledger/ledger.module.js';
 import { LiveModule } from './live/live.module.js';
 import { MailModule } from './mail/mail.module.js';
 import { MarketModule } from './market/market.module.js';
+import { MessagesModule } from './messages/messages.module.js';
 import { OutboxModule } from './outbox/outbox.module.js';
 import { OversightModule } from './oversight/oversight.module.js';
 import { PaymentsModule } from './payments/payments.module.js';
@@ -59,6 +60,7 @@ export class AppModule {
         PlanningModule,
         ClearancesModule,
         DisputesModule,
+        MessagesModule,
         OversightModule,
         SystemModule,
       ],
