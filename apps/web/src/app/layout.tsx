@@ -110,6 +110,9 @@ function PersonMenu({ timeMode, onToggleTime, onGoTo }: PersonMenuProps) {
   const schemes = { auto: 'Colours as the device', light: 'Day colours', dark: 'Night watch' } as const;
   return (
     <>
+      <Menu.Item component={Link} to={paths.security}>
+        Security
+      </Menu.Item>
       <Menu.Item component={Link} to={paths.organisation}>
         Organisation and members
       </Menu.Item>

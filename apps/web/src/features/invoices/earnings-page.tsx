@@ -14,6 +14,7 @@ import { PageTitle } from '../../ui/page-title.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import { MoneyText } from '../../ui/values.js';
 import classes from './invoices.module.css';
+import { PayoutSummary } from './payout-summary.js';
 
 const PER_PAGE = 50;
 
@@ -32,6 +33,7 @@ export function EarningsPage() {
         Settled contacts at your antennas, the newest first, at the price with VAT that the operator was shown. Skyberth
         invoices the operator; its fee comes off the price before VAT.
       </PageTitle>
+      <PayoutSummary />
       {settled.error && (
         <ProblemNotice title="The settled contacts could not be read" onRetry={() => void settled.refetch()}>
           {sentenceOf(settled.error)}
