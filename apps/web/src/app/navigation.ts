@@ -11,6 +11,7 @@ export interface Page {
 }
 
 const HOME: Page = { label: 'Home', to: paths.home };
+const MESSAGES: Page = { label: 'Messages', to: paths.messages, count: 'messages', countNoun: 'new messages' };
 
 const OPERATOR: readonly Page[] = [
   HOME,
@@ -20,6 +21,7 @@ const OPERATOR: readonly Page[] = [
   { label: 'Standby', to: paths.standby },
   { label: 'Spacecraft', to: paths.spacecraft },
   { label: 'Clearances', to: paths.clearances },
+  MESSAGES,
   { label: 'Invoices', to: paths.invoices },
   { label: 'Monthly account', to: paths.monthlyAccount },
 ];
@@ -31,6 +33,7 @@ const OWNER: readonly Page[] = [
   { label: 'Run sheet', to: paths.runSheet },
   { label: 'Clearances', to: paths.clearances },
   { label: 'Bookings', to: paths.bookings },
+  MESSAGES,
   { label: 'Earnings', to: paths.invoices },
 ];
 const FINANCE: readonly Page[] = [
@@ -49,6 +52,7 @@ const ADMIN: readonly Page[] = [
   { label: 'Clearances', to: paths.clearances },
   { label: 'Bookings', to: paths.bookings },
   { label: 'Disputes', to: paths.disputes, count: 'disputes', countNoun: 'disputes wait for a decision' },
+  MESSAGES,
   { label: 'Accounts', to: paths.accounts },
   { label: 'Audit', to: paths.audit },
   { label: 'System', to: paths.system },

@@ -150,6 +150,10 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('../features/approvals/approval-page.js')).ApprovalPage }),
   },
   {
+    path: paths.messages,
+    lazy: async () => ({ Component: (await import('../features/messages/messages-page.js')).MessagesPage }),
+  },
+  {
     path: paths.disputes,
     lazy: async () => ({ Component: (await import('../features/disputes/disputes-page.js')).DisputesPage }),
   },

@@ -39,6 +39,7 @@ export const paths = {
   clearance: (id: string) => `/clearances/${id}`,
   approvals: '/approvals',
   approval: (stationId: string) => `/approvals/${stationId}`,
+  messages: '/messages',
   disputes: '/disputes',
   dispute: (id: string) => `/disputes/${id}`,
   openDispute: (bookingId: string) => `/bookings/${bookingId}/dispute`,

@@ -24,6 +24,7 @@ import { DriftSection } from './drift-section.js';
 import { countdown } from './in-order.js';
 import { InOrderList } from './in-order-list.js';
 import { LiveSection, useLiveContact } from './live-section.js';
+import { MessagesSection } from './messages-section.js';
 import { MoneySection } from './money-section.js';
 import { PaymentReturn } from './payment-return.js';
 import { ReportSection } from './report-section.js';
@@ -91,6 +92,7 @@ function Contact({ booking, isBack }: { readonly booking: Booking; readonly isBa
           <div className={classes.below}>
             <ContactFiles booking={booking} />
             <MoneySection booking={booking} />
+            <MessagesSection booking={booking} />
           </div>
         </div>
         <aside className={classes.side} aria-label="What happened and what to do">

@@ -1,6 +1,6 @@
 /** Opening a dispute: what was wrong, when there were no data, and what one's own log has. */
 import { Anchor, Button, Select, Skeleton, Textarea, TextInput } from '@mantine/core';
-import { DISPUTE_REASONS, type DisputeReason, type Observation, routes } from '@skyberth/shared';
+import { type AttachedFile, DISPUTE_REASONS, type DisputeReason, type Observation, routes } from '@skyberth/shared';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Link, useNavigate, useParams } from 'react-router-dom';
@@ -10,6 +10,7 @@ import { paths } from '../../lib/paths.js';
 import { fieldErrors, sentenceOf } from '../../lib/problem-fields.js';
 import { useLeaveGuard } from '../../lib/use-leave-guard.js';
 import { useTitle } from '../../lib/use-title.js';
+import { FileDrop } from '../../ui/file-drop.js';
 import { formatDay, formatTime } from '../../ui/format.js';
 import { PageTitle } from '../../ui/page-title.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
@@ -53,6 +54,7 @@ function Form({
   const [text, setText] = useState('');
   const [gap, setGap] = useState({ from: '', to: '' });
   const [observations, setObservations] = useState<readonly Observation[]>([]);
+  const [files, setFiles] = useState<readonly AttachedFile[]>([]);
   const [isDone, setDone] = useState(false);
   useLeaveGuard(text.trim() !== '' && !isDone, 'the dispute');
   const gapFromUtc = utcOfClock(gap.from, aosUtc);
@@ -69,7 +71,14 @@ function Form({
     mutationFn: () =>
       call(routes.openDispute, {
         params: { id: bookingId },
-        body: { reason: reason ?? 'other', text: text.trim(), observations: [...observations], gapFromUtc, gapToUtc },
+        body: {
+          reason: reason ?? 'other',
+          text: text.trim(),
+          observations: [...observations],
+          gapFromUtc,
+          gapToUtc,
+          fileIds: files.map(({ id }) => id),
+        },
       }),
     onSuccess: (dispute) => {
       setDone(true);
@@ -122,6 +131,7 @@ function Form({
         />
       </div>
       <ObservationRows aosUtc={aosUtc} value={observations} onChange={setObservations} />
+      <FileDrop label="Files: logs, plots, counters" files={files} onChange={setFiles} />
       <p className={classes.quiet}>
         The station's earnings of this contact are set aside at once. The system assembles the evidence: geometry, mask,
         link, live reports and money. The station has three days to answer; a decision is due within seven.

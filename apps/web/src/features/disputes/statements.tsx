@@ -1,12 +1,14 @@
 /** What both sides say in their own words, and the forms to say more. Nothing said can be changed. */
 import { Button, Select, Textarea } from '@mantine/core';
 import { notifications } from '@mantine/notifications';
-import { type Dispute, type Observation, routes } from '@skyberth/shared';
+import { type AttachedFile, type Dispute, type Observation, routes } from '@skyberth/shared';
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { call } from '../../lib/api-client.js';
 import { sentenceOf } from '../../lib/problem-fields.js';
+import { AttachedFiles } from '../../ui/attached-files.js';
 import { DayTime } from '../../ui/day-time.js';
+import { FileDrop } from '../../ui/file-drop.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import { disputeQueries } from './dispute-queries.js';
 import classes from './disputes.module.css';
@@ -27,6 +29,7 @@ export function Statements({ dispute }: { readonly dispute: Dispute }) {
               {said.byName}, <DayTime atMs={Date.parse(said.atUtc)} />
             </span>
             <p>{said.text}</p>
+            <AttachedFiles files={said.files} label={`Files of ${said.byName}`} />
           </li>
         ))}
       </ol>
@@ -45,16 +48,18 @@ function StatementForm({ dispute }: { readonly dispute: Dispute }) {
   const changed = useChanged(dispute);
   const [text, setText] = useState('');
   const [observations, setObservations] = useState<readonly Observation[]>([]);
+  const [files, setFiles] = useState<readonly AttachedFile[]>([]);
   const say = useMutation({
     mutationFn: () =>
       call(routes.stateInDispute, {
         params: { id: dispute.id },
-        body: { text: text.trim(), observations: [...observations] },
+        body: { text: text.trim(), observations: [...observations], fileIds: files.map(({ id }) => id) },
       }),
     onSuccess: (next) => {
       changed(next);
       setText('');
       setObservations([]);
+      setFiles([]);
       notifications.show({ message: 'Your statement is on the record.' });
     },
   });
@@ -78,6 +83,7 @@ function StatementForm({ dispute }: { readonly dispute: Dispute }) {
         onChange={(event) => setText(event.currentTarget.value)}
       />
       <ObservationRows aosUtc={dispute.aosUtc} value={observations} onChange={setObservations} />
+      <FileDrop label="Files: logs, plots" files={files} onChange={setFiles} />
       <div>
         <Button type="submit" disabled={text.trim() === ''} loading={say.isPending}>
           Put it on the record
