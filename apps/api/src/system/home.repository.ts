@@ -4,6 +4,7 @@ import {
   antennas,
   bookings,
   disputes,
+  driftQuestions,
   organisations,
   outbox,
   type SkyberthDatabase,
@@ -123,6 +124,23 @@ export class HomeRepository {
       .innerJoin(bookings, eq(bookings.id, disputes.bookingId))
       .where(and(inArray(disputes.state, ['open', 'appealed']), ofSide ?? undefined))
       .orderBy(asc(disputes.decideByMs))
+      .limit(MOST)
+      .all();
+  }
+
+  /** Open questions about contacts that newer elements moved, the soonest first. */
+  driftQuestions(operatorId: string) {
+    return this.db
+      .select({
+        bookingId: bookings.id,
+        number: bookings.number,
+        aosMs: bookings.aosMs,
+        sentence: driftQuestions.sentence,
+      })
+      .from(driftQuestions)
+      .innerJoin(bookings, eq(bookings.id, driftQuestions.bookingId))
+      .where(and(eq(driftQuestions.state, 'open'), eq(bookings.operatorId, operatorId)))
+      .orderBy(asc(bookings.aosMs))
       .limit(MOST)
       .all();
   }

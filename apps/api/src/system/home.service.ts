@@ -81,11 +81,24 @@ export class HomeService {
     const open = held.filter(({ holdEndsMs }) => holdEndsMs !== null && holdEndsMs > nowMs);
     return [
       ...open.map((each) => booking('hold', `Pay for the held contact ${titleOf(each)}.`, each, true, each.holdEndsMs)),
+      ...this.moved(organisationId, nowMs),
       ...soon.map((each) => this.contact(each, nowMs)),
       ...this.disputes('operator', organisationId),
       ...this.clearancesOf('operator', organisationId),
       ...this.oldElements(organisationId, nowMs),
     ];
+  }
+
+  /** Contacts that newer elements move further than their guard: the operator is asked. */
+  private moved(organisationId: string, nowMs: number): Waiting[] {
+    return this.repository.driftQuestions(organisationId).map(({ bookingId, sentence, number, aosMs }) => ({
+      kind: 'drift',
+      sentence: `Newer elements move berth ${number}: keep it at the new time, or cancel.`,
+      detail: sentence,
+      path: `/bookings/${bookingId}`,
+      urgent: aosMs - nowMs < DAY_MS,
+      dueUtc: utc(aosMs),
+    }));
   }
 
   private oldElements(organisationId: string, nowMs: number): Waiting[] {

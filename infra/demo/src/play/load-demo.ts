@@ -7,8 +7,10 @@ import { payOnPage, Season } from './days.js';
 import { disputeAndDecide, leaveDisputesOpen } from './disputes.js';
 import { moveSomePasses } from './drift.js';
 import { buyForThisMinute, reportWhatRuns } from './live.js';
+import { writeToEachOther } from './messages.js';
 import { askForAccount, chargeBack, closeMonths, openMonthlyAccount, payBills } from './money.js';
 import { giveEphemeris } from './own-ephemeris.js';
+import { makePlans } from './plans.js';
 import { manTheStations } from './run-sheet.js';
 import { settleIn } from './settle-in.js';
 import { STAFF, Stage } from './stage.js';
@@ -69,10 +71,12 @@ export async function loadDemo({ environment, days, say }: DemoSettings): Promis
     await giveEphemeris(stage, company);
     await leaveThingsOpen(stage, company, season);
     await leaveDisputesOpen(stage, company);
+    await writeToEachOther(stage, company);
     await chargeBack(stage, company, null);
     await askForAccount(stage, company);
     await closeMonths(stage, company);
     await moveSomePasses(stage, company);
+    await makePlans(stage, company);
     await manTheStations(stage, company);
     await reportWhatRuns(stage, company);
   } finally {
