@@ -25,7 +25,7 @@ export function CreditAccountsPage() {
     <>
       <PageTitle title="Monthly accounts">
         {items.length > 0 &&
-          `${waiting === 0 ? 'Nobody waits' : `${waiting} wait`} for a decision. An overdue bill blocks an account by itself.`}
+          `${waiting === 0 ? 'Nobody waits' : waiting === 1 ? 'One waits' : `${waiting} wait`} for a decision. An overdue bill blocks an account by itself.`}
       </PageTitle>
       {accounts.error && (
         <ProblemNotice title="The accounts could not be read" onRetry={() => void accounts.refetch()}>

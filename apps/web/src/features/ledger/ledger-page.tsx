@@ -48,7 +48,7 @@ export function LedgerPage() {
           {sentenceOf(balances.error)}
         </ProblemNotice>
       )}
-      <div className={classes.columns}>
+      <div className={classes.columns} data-picked={account !== undefined || undefined}>
         {account && currency ? (
           <AccountLines filter={{ ...filter, account, currency }} onChange={change} />
         ) : (

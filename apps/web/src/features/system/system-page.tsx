@@ -12,6 +12,7 @@ import { PageTitle } from '../../ui/page-title.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import { type BadgeTone, StateBadge } from '../../ui/state-badge.js';
 import { Figure, Figures } from '../../ui/values.js';
+import { LedgerFigure } from './ledger-figure.js';
 import classes from './system.module.css';
 import { faultsOf, servicesAndJobs } from './system-words.js';
 
@@ -72,7 +73,7 @@ function View({ view, faults }: { readonly view: SystemView; readonly faults: re
           What failed for good stays below with its reason.
         </ProblemNotice>
       )}
-      <Figures columns={4} ruled>
+      <Figures columns={5} ruled>
         <Figure
           label="Database"
           value={formatBytes(view.database.sizeBytes)}
@@ -93,6 +94,7 @@ function View({ view, faults }: { readonly view: SystemView; readonly faults: re
           value={formatNumber(view.providerEvents.received)}
           note={`${formatNumber(view.providerEvents.processed)} processed`}
         />
+        <LedgerFigure />
       </Figures>
       <div className={classes.columns}>
         <StateTable title="Services beside the server" rows={services} />

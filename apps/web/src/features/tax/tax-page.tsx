@@ -161,7 +161,7 @@ function Numbers({ table }: { readonly table: TaxTable }) {
             {table.vatNumbers.map((number) => (
               <Table.Tr key={number.prefix}>
                 <Table.Td>{number.form}</Table.Td>
-                <Table.Td>{number.checksDigits ? 'checked' : 'no published rule here'}</Table.Td>
+                <Table.Td>{number.checksDigits ? 'checked' : 'form only'}</Table.Td>
               </Table.Tr>
             ))}
           </Table.Tbody>
