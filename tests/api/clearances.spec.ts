@@ -189,7 +189,7 @@ describe('the database', () => {
     const moves = file.prepare('SELECT from_state || $s || to_state AS move FROM clearance_moves').pluck();
     const expected = CLEARANCE_MOVES.filter((move) => move.from !== null).map(({ from, to }) => `${from} > ${to}`);
     expect((moves.all({ s: ' > ' }) as string[]).sort()).toEqual([...new Set(expected)].sort());
-    const held = await must(shop.skyberth.call(routes.listBookings, { as: shop.operator }));
+    const held = await must(shop.skyberth.call(routes.listBookings, { query: {}, as: shop.operator }));
     const plain = held.items[0]?.id ?? '';
     expect(() => file.prepare(`UPDATE bookings SET need = 'downlink' WHERE need <> 'downlink'`).run()).toThrow('terms');
     expect(() => file.prepare(`INSERT INTO booking_clearances SELECT ?, id FROM clearances`).run(plain)).toThrow(

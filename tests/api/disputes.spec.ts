@@ -141,8 +141,8 @@ describe('a dispute', () => {
 
     const said = {
       text: 'The receiver was restarted.',
-      observations: [{ atUtc: booking.tcaUtc, kind: 'note', words: 'restart' }],
-    } as const;
+      observations: [{ atUtc: booking.tcaUtc, kind: 'note' as const, words: 'restart' }],
+    };
     const answered = await must(call(routes.stateInDispute, { params, body: said, as: await again(shop.owner) }));
     expect(answered.statements.map(({ side }) => side)).toEqual(['operator', 'owner']);
     const asked = await must(

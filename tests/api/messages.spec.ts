@@ -61,7 +61,7 @@ describe('messages', () => {
     // An earlier message does not make a later one new again.
     await must(skyberth.call(routes.readMessages, { params, body, as: operator }));
     expect(await newFor(operator)).toBe(0);
-    const threads = await must(skyberth.call(routes.listThreads, { as: owner }));
+    const threads = await must(skyberth.call(routes.listThreads, { query: {}, as: owner }));
     expect(threads.items).toMatchObject([{ bookingId, lastText: 'Right-hand.', newCount: 0 }]);
     const onlyNew = await must(skyberth.call(routes.listThreads, { query: { only: 'new' }, as: owner }));
     expect(onlyNew).toMatchObject({ items: [], total: 0 });

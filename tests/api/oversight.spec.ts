@@ -34,7 +34,7 @@ describe('a suspension', () => {
     const refused = await skyberth.call(routes.createSpacecraft, { body, as: operator });
     expect(refused.problem).toMatchObject({ status: 403, code: 'not-allowed' });
     expect(refused.problem?.detail).toContain('Unpaid invoices.');
-    expect((await must(skyberth.call(routes.listSpacecraft, { as: operator }))).items).toEqual([]);
+    expect((await must(skyberth.call(routes.listSpacecraft, { query: {}, as: operator }))).items).toEqual([]);
     const home = await must(skyberth.call(routes.home, { as: operator }));
     expect(home.waiting[0]).toMatchObject({ kind: 'suspended', urgent: true });
     await skyberth.drain();

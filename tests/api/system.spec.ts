@@ -117,7 +117,7 @@ describe('home', () => {
     expect(empty.firstSteps.map(({ done }) => done)).toEqual([false, false, false, false, false]);
 
     const secured = forOperator.money.find(({ label }) => label === 'Secured for contacts to come')?.amounts ?? [];
-    const bought = await must(skyberth.call(routes.listBookings, { as: operator }));
+    const bought = await must(skyberth.call(routes.listBookings, { query: {}, as: operator }));
     expect(secured).toEqual([
       {
         currency: bought.items[0]?.currency,
