@@ -31,7 +31,8 @@ const utc = (timeMs: number) => new Date(timeMs).toISOString();
 const block = (entries: Entry[], antennaIds = [shop.antennaId], as = shop.owner) =>
   call(routes.addBlackouts, { body: { antennaIds, entries }, as });
 const remove = (ids: string[], as = shop.owner) => call(routes.removeCalendarEntries, { body: { ids }, as });
-const calendar = (id = shop.antennaId, as = shop.owner) => must(call(routes.antennaCalendar, { params: { id }, query: {}, as }));
+const calendar = (id = shop.antennaId, as = shop.owner) =>
+  must(call(routes.antennaCalendar, { params: { id }, query: {}, as }));
 const search = async (): Promise<FoundPass[]> => {
   const nowMs = shop.skyberth.clock.nowMs();
   const body = { spacecraftIds: [shop.spacecraftId], fromUtc: utc(nowMs + 3_600_000), toUtc: utc(nowMs + 2 * DAY_MS) };
