@@ -37,7 +37,11 @@ const DAYS = 365;
 /** Days at the end in which nothing is sold and everything comes to rest; a late event may take two. */
 const REST_DAYS = 8;
 const START_MS = Date.UTC(2026, 0, 1);
-const SLOT_MS = 600_000;
+/**
+ * Further apart than the longest guarded interval, so that the database's search for overlaps meets no neighbours; with all
+ * contacts of a year on a few antennas it would look at a thousand each time. When they fly does not matter to money.
+ */
+const SLOT_MS = 701_000_000;
 
 /** A clock that stands still between the steps of the play. */
 class SteppedClock extends AdjustableClock {
@@ -243,7 +247,7 @@ class Year {
     const slot = Math.max(this.#slots.get(owner.antennaId) ?? 0, this.#slots.get(operator.spacecraftId) ?? 0) + SLOT_MS;
     this.#slots.set(owner.antennaId, slot).set(operator.spacecraftId, slot);
     this.#number += 1;
-    const aosMs = START_MS - 5 * 365 * DAY_MS + slot;
+    const aosMs = START_MS + slot;
     const times = { aosMs, nowMs: this.clock.nowMs() };
     return bookingRow({
       operator,
