@@ -38,6 +38,8 @@ const LOOK_MS = 900_000;
 const heading = (name: string | RegExp) => (page: Page) => page.getByRole('heading', { level: 1, name });
 
 const HOME: Screen = { name: 'home', path: paths.home, shows: heading(/^Good to see you/) };
+/** A page that is judged by what stands there without any work done on it, empty states included. */
+const plain = (title: string | RegExp, path: string): Screen => ({ name: path, path, shows: heading(title) });
 const SIGN_IN: Screen = { name: 'sign-in', path: paths.signIn, shows: heading('Sign in') };
 
 describe('for everybody', () => {
@@ -103,6 +105,13 @@ describe('for everybody', () => {
         shows: (page) => page.getByRole('heading', { name: 'Files' }),
       },
       { name: 'spacecraft', path: paths.spacecraft, shows: (page) => page.getByText('Pipit 99601') },
+      plain('Plan', paths.plans),
+      plain('Standby', paths.standby),
+      plain('Clearances', paths.clearances),
+      plain('Messages', paths.messages),
+      plain('Monthly account', paths.monthlyAccount),
+      plain('Security', paths.security),
+      plain('Help', paths.help),
     ],
     owner: [
       { name: 'stations', path: paths.stations, shows: (page) => page.getByText('Skerry') },
@@ -112,9 +121,23 @@ describe('for everybody', () => {
         shows: heading(market.antenna.name),
       })),
       { name: 'requests', path: paths.requests, shows: heading('Requests') },
+      plain(/run sheet/i, paths.runSheet),
+      plain('Earnings', paths.invoices),
     ],
-    admin: [{ name: 'approvals', path: paths.approvals, shows: (page) => page.getByText('Skerry') }],
-    finance: [{ name: 'ledger', path: paths.ledger, shows: (page) => page.getByText('Every account is empty.') }],
+    admin: [
+      { name: 'approvals', path: paths.approvals, shows: (page) => page.getByText('Skerry') },
+      plain('Disputes', paths.disputes),
+      plain('Accounts', paths.accounts),
+      plain('Audit', paths.audit),
+      plain('System', paths.system),
+    ],
+    finance: [
+      { name: 'ledger', path: paths.ledger, shows: (page) => page.getByText('Every account is empty.') },
+      plain('Payouts', paths.payouts),
+      plain('Reconciliation', paths.reconciliation),
+      plain('Tax and fees', paths.taxAndFees),
+      plain('Monthly accounts', paths.creditAccounts),
+    ],
   });
 
   it.each(ROLES)(
