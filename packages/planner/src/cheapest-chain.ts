@@ -23,13 +23,16 @@ export interface ChainQuestion {
   /** How much more than the fractional bound a plan may cost. */
   readonly room: number;
   readonly mostLabels: number;
+  /** Asked before each candidate; once false, the looking ends without an answer. */
+  readonly hasTime: () => boolean;
 }
 
 export type ChainAnswer =
   | { readonly kind: 'found'; readonly chosen: readonly Candidate[]; readonly cost: number }
   /** There is none within the room. */
   | { readonly kind: 'none' }
-  | { readonly kind: 'too many' };
+  /** Too many labels, or no time left: there may be one. */
+  | { readonly kind: 'given up' };
 
 interface Step {
   readonly candidate: Candidate;
@@ -59,7 +62,7 @@ interface Label {
 const ROUNDING = 1e-6;
 
 export function cheapestChain(question: ChainQuestion): ChainAnswer {
-  const { need, craft, mostLabels } = question;
+  const { need, craft, mostLabels, hasTime } = question;
   const days = daysOf(need).length;
   const start = {
     cost: 0,
@@ -72,6 +75,7 @@ export function cheapestChain(question: ChainQuestion): ChainAnswer {
   };
   let labels: Label[] = [{ ...start, last: null, before: null }];
   for (const step of stepsOf(question)) {
+    if (!hasTime()) return { kind: 'given up' };
     const next: Label[] = [];
     for (const old of labels) {
       const label = atDay(craft, old, step.day);
@@ -81,7 +85,7 @@ export function cheapestChain(question: ChainQuestion): ChainAnswer {
       if (taken !== null) next.push(taken);
     }
     labels = undominated(next, step.candidate.aosMs);
-    if (labels.length > mostLabels) return { kind: 'too many' };
+    if (labels.length > mostLabels) return { kind: 'given up' };
   }
   let best: Label | null = null;
   for (const old of labels) {

@@ -6,7 +6,7 @@
  * least the cost of a plan in hand.
  */
 import { craftProgram, elastic } from './assemble.js';
-import type { Candidate, PlanNeed, Solve } from './types.js';
+import type { Candidate, PlanNeed, Solve, SolverAnswer } from './types.js';
 
 export interface Ranked {
   readonly candidate: Candidate;
@@ -32,7 +32,20 @@ export interface FleetBound {
   readonly hopeless: readonly string[];
 }
 
-/** Looks at each spacecraft alone. `ease` lets the need give way, so that all are ranked even where one is hopeless. */
+/** What a look comes to for which there was no time. */
+const UNFINISHED: SolverAnswer = {
+  status: 'stopped',
+  objective: Number.POSITIVE_INFINITY,
+  bound: Number.NEGATIVE_INFINITY,
+  values: [],
+  reducedCosts: [],
+  rowDuals: [],
+};
+
+/**
+ * Looks at each spacecraft alone, for at most an even part of the time that is left. `ease` lets the need give way, so that
+ * all are ranked even where one is hopeless.
+ */
 export function boundOf(
   need: PlanNeed,
   candidates: readonly Candidate[],
@@ -49,7 +62,8 @@ export function boundOf(
     const mine = candidates.filter((each) => each.craftId === craft.craftId);
     const base = craftProgram(need, craft, mine);
     const program = ease === null ? base : elastic(base, ease.dearest);
-    const answer = solve({ program, whole: false, relativeGap: 0, timeLimitS: secondsLeft() });
+    const timeLimitS = secondsLeft() / (need.craft.length - done);
+    const answer = timeLimitS > 0 ? solve({ program, whole: false, relativeGap: 0, timeLimitS }) : UNFINISHED;
     const solved = answer.status === 'solved';
     if (answer.status === 'infeasible') hopeless.push(craft.craftId);
     // An unfinished look proves nothing: then all of its candidates stay in, at no reduced cost.

@@ -33,7 +33,7 @@ const MOST_LABELS = 2_500;
 const FEW = 120;
 /** The share of the time left that an integer program may use which stands in for one spacecraft. */
 const TIME_SHARE = 0.1;
-/** Putting plans together better stops while so many seconds are left for the fleet's own program. */
+/** Planning one by one stops while so many seconds are left for the fleet's own program. */
 const KEEP_S = 5;
 
 interface OwnPlan {
@@ -47,7 +47,7 @@ export function planOneByOne(terms: OneByOneTerms): OneByOne {
   let bound = 0;
   let stuck = false;
   for (const [place, craft] of need.craft.entries()) {
-    const plan = planAlone(terms, craft, () => true);
+    const plan = planAlone(terms, craft, { may: () => true, waiting: need.craft.length - place });
     bound += plan.bound;
     if (plan.chosen === null) stuck = true;
     else alone.set(craft.craftId, { chosen: plan.chosen, cost: costSum(need, plan.chosen) });
@@ -102,9 +102,10 @@ function replan(
 ): Map<string, OwnPlan> | null {
   const together = new Map(settled);
   const must = new Set(terms.need.pinnedIds);
-  for (const craft of some) {
+  for (const [place, craft] of some.entries()) {
     const others = [...chosenOf(together), ...pinnedOfOthers(terms, craft)];
-    const { chosen } = planAlone(terms, craft, (each) => each.booked || must.has(each.id) || isFree(each, others));
+    const may = (each: Candidate): boolean => each.booked || must.has(each.id) || isFree(each, others);
+    const { chosen } = planAlone(terms, craft, { may, waiting: some.length - place });
     if (chosen === null) return null;
     together.set(craft.craftId, { chosen, cost: costSum(terms.need, chosen) });
   }
@@ -161,21 +162,29 @@ function isFree(each: Candidate, settled: readonly Candidate[]): boolean {
   return beside.length < each.beams;
 }
 
+/** True until a spacecraft has used its even part of the time that it shares with those still `waiting`, itself among them. */
+function evenPart(secondsLeft: () => number, waiting: number): () => boolean {
+  const left = secondsLeft();
+  const until = left - Math.max(0, left - KEEP_S) / waiting;
+  return () => secondsLeft() > until;
+}
+
 function planAlone(
   { need, solve, targetGap, alone, secondsLeft }: OneByOneTerms,
   craft: CraftNeed,
-  may: (each: Candidate) => boolean,
+  { may, waiting }: { readonly may: (each: Candidate) => boolean; readonly waiting: number },
 ): { bound: number; chosen: readonly Candidate[] | null } {
   const known = alone.get(craft.craftId);
   if (known === undefined) throw new Error(`There is no bound for ${craft.name}.`);
   const ranked = known.ranked.filter((each) => may(each.candidate));
   const must = new Set(need.pinnedIds);
+  const hasTime = evenPart(secondsLeft, waiting);
   let bound = known.bound;
   for (const share of ROOMS) {
     const room = Math.max(known.bound, 1) * share;
-    const answer = cheapestChain({ ...known, need, craft, ranked, must, room, mostLabels: MOST_LABELS });
+    const answer = cheapestChain({ ...known, need, craft, ranked, must, room, mostLabels: MOST_LABELS, hasTime });
     if (answer.kind === 'found') return { bound: Math.max(bound, answer.cost), chosen: answer.chosen };
-    if (answer.kind === 'too many') break;
+    if (answer.kind === 'given up') break;
     bound = known.bound + room;
   }
   const inside = ranked.flatMap(({ candidate }, place) =>

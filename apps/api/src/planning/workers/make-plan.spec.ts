@@ -41,17 +41,19 @@ function needFor(craft: number, days: number, change: Partial<PlanNeed> = {}): P
   };
 }
 
-const plan = (need: PlanNeed, candidates: readonly Candidate[], targetGap = 0) =>
-  makePlan({
-    need,
-    candidates,
-    solve,
-    baseCurrency: 'EUR',
-    money: (amountMinor, currency) => `${amountMinor / 100} ${currency}`,
-    stationName: (id) => id,
-    targetGap,
-    secondsLeft: () => 10,
-  });
+const questionOf = (need: PlanNeed, candidates: readonly Candidate[], secondsLeft: () => number) => ({
+  need,
+  candidates,
+  solve,
+  baseCurrency: 'EUR',
+  money: (amountMinor: number, currency: string) => `${amountMinor / 100} ${currency}`,
+  stationName: (id: string) => id,
+  targetGap: 0.01,
+  secondsLeft,
+});
+
+const plan = (need: PlanNeed, candidates: readonly Candidate[], targetGap = 0, secondsLeft = () => 10) =>
+  makePlan({ ...questionOf(need, candidates, secondsLeft), targetGap });
 
 /** The least cost over all subsets, or null where none meets the need. */
 function bruteForce(need: PlanNeed, candidates: readonly Candidate[]): number | null {
@@ -92,6 +94,18 @@ const small = fc
     }));
     return { need: { ...base, craft }, candidates };
   });
+
+/** A clock that runs on by `stepS` whenever it is asked, and how often it was asked after the end. */
+function countdown(fromS: number, stepS: number) {
+  let leftS = fromS;
+  let late = 0;
+  const secondsLeft = (): number => {
+    leftS -= stepS;
+    if (leftS < 0) late += 1;
+    return leftS;
+  };
+  return { secondsLeft, late: () => late };
+}
 
 describe('the cheapest plan', () => {
   it('costs what trying every subset finds, and none is claimed where there is none', () => {
@@ -152,5 +166,40 @@ describe('the cheapest plan', () => {
     expect(() => plan(needFor(1, 1, { pinnedIds: [one.id, 'two'] }), [one, two])).toThrow(PlannerError);
     const poor = needFor(1, 1, { pinnedIds: [one.id], budgets: [{ currency: 'EUR', amountMinor: 1 }] });
     expect(() => plan(poor, [one])).toThrow('more than the budget');
+  });
+
+  it('keeps what the spacecraft want alone within the time, and shares it out evenly', () => {
+    const candidates = inventedOffers({ seed: 7, craft: 4, antennas: 12, days: 3, fromMs: FROM_MS });
+    const need = needFor(4, 3);
+    const hungry = { ...need, craft: need.craft.map((each) => ({ ...each, longestGapMs: 8 * HOUR_MS })) };
+    const asked: number[] = [];
+    const clock = countdown(20, 0.05);
+    const result = makePlan({
+      ...questionOf(hungry, candidates, clock.secondsLeft),
+      solve: (question) => {
+        if (!question.whole) asked.push(question.timeLimitS);
+        return solve(question);
+      },
+    });
+    expect(result.status).toBe('met');
+    expect(asked.slice(0, 4).every((limitS) => limitS > 0 && limitS <= 20)).toBe(true);
+    expect(asked[0]).toBeLessThanOrEqual(20 / 4);
+    // Fewer than there are candidates: no spacecraft's looking runs on when the time is over.
+    expect(clock.late()).toBeLessThan(40);
+  });
+
+  it('says that nothing was found where there is no time at all', () => {
+    const candidates = inventedOffers({ seed: 7, craft: 4, antennas: 12, days: 3, fromMs: FROM_MS });
+    const limits: number[] = [];
+    const result = makePlan({
+      ...questionOf(needFor(4, 3), candidates, () => -1),
+      solve: (question) => {
+        limits.push(question.timeLimitS);
+        return { status: 'stopped', objective: 0, bound: 0, values: [], reducedCosts: [], rowDuals: [] };
+      },
+    });
+    expect(result.status).toBe('none');
+    expect(limits.every((limitS) => limitS > 0)).toBe(true);
+    expect(limits.reduce((sum, limitS) => sum + limitS, 0)).toBeLessThan(1);
   });
 });
