@@ -9,7 +9,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { performance } from 'node:perf_hooks';
 import { parseArgs } from 'node:util';
-import { LedgerReading, LedgerRepository, LedgerService } from '@skyberth/api';
+import { LedgerCheckRepository, LedgerReading, LedgerRepository, LedgerService } from '@skyberth/api';
 import { migrateDatabase, openDatabase } from '@skyberth/drizzle';
 
 const { values } = parseArgs({ options: { postings: { type: 'string', default: '1000000' } } });
@@ -27,7 +27,7 @@ try {
   const fillMs = fill(db, Math.ceil(postings / PER_ENTRY));
   const repository = new LedgerRepository(db);
   const reading = new LedgerReading(repository);
-  const ledger = new LedgerService(repository, { nowMs: () => NOW_MS });
+  const ledger = new LedgerService(repository, new LedgerCheckRepository(db), { nowMs: () => NOW_MS });
   const account = { account: 'owner payable', currency: 'EUR', limit: 50 };
   const middle = placeInTheMiddle(db);
   const party = reading.parties(account).items[0].organisationId;

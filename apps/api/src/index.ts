@@ -9,6 +9,7 @@ export { InvoiceService } from './invoices/invoices.service.js';
 export { JobsService } from './jobs/jobs.service.js';
 export { LedgerRepository } from './ledger/ledger.repository.js';
 export { LedgerService } from './ledger/ledger.service.js';
+export { LedgerCheckRepository } from './ledger/ledger-check.repository.js';
 export { LedgerReading } from './ledger/ledger-reading.service.js';
 export { OutboxRepository } from './outbox/outbox.repository.js';
 export { OutboxRunner } from './outbox/outbox.runner.js';

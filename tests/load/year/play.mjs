@@ -4,7 +4,6 @@
  * end every missed event is read, and the books must agree to the last minor unit.
  */
 import {
-  AdjustableClock,
   BookingMoney,
   BookingRepository,
   chargebackFacts,
@@ -21,14 +20,14 @@ import {
   PaymentEvents,
   PROVIDER_BOOKS,
   ReconciliationService,
-  readConfig,
   write,
 } from '@skyberth/api';
 import { bookings, payments } from '@skyberth/drizzle';
 import { payoutArrivedEntry, payoutEntry, percentOf, reverseEntry } from '@skyberth/money';
 import { count, eq } from 'drizzle-orm';
 import { chance } from './chance.mjs';
-import { SimulatedProvider, WEBHOOK_SECRET } from './provider.mjs';
+import { SimulatedProvider } from './provider.mjs';
+import { configOf, keepStatements, START_MS, SteppedClock } from './stage.mjs';
 import { bookingRow, makeWorld, quoteOf } from './world.mjs';
 
 const DAY_MS = 86_400_000;
@@ -36,26 +35,11 @@ const HOUR_MS = 3_600_000;
 const DAYS = 365;
 /** Days at the end in which nothing is sold and everything comes to rest; a late event may take two. */
 const REST_DAYS = 8;
-const START_MS = Date.UTC(2026, 0, 1);
 /**
  * Further apart than the longest guarded interval, so that the database's search for overlaps meets no neighbours; with all
  * contacts of a year on a few antennas it would look at a thousand each time. When they fly does not matter to money.
  */
 const SLOT_MS = 701_000_000;
-
-/** A clock that stands still between the steps of the play. */
-class SteppedClock extends AdjustableClock {
-  #nowMs = START_MS;
-  nowMs() {
-    return this.#nowMs;
-  }
-  set(timeMs) {
-    this.#nowMs = timeMs;
-  }
-  advance(byMs) {
-    this.#nowMs += byMs;
-  }
-}
 
 /** Plays `count` bookings; answers what was played and everything that does not agree (nothing, when all is right). */
 export async function playYear({ bookings: bookingCount, seed }) {
@@ -286,29 +270,3 @@ class Year {
     return faults;
   }
 }
-
-/** Statements are compiled once: over a year of bookings, compiling them anew was a third of the time. */
-function keepStatements(client) {
-  const known = new Map();
-  const prepare = client.prepare.bind(client);
-  client.prepare = (sql) => {
-    const statement = known.get(sql) ?? prepare(sql);
-    known.set(sql, statement);
-    // The way rows come out belongs to the use, not to the statement.
-    return statement.reader ? statement.raw(false) : statement;
-  };
-}
-
-const configOf = () => ({
-  ...readConfig({
-    PORT: '0',
-    SKYBERTH_TOKEN_SECRET: 'a secret for the simulated year, 32 characters',
-    PAYMENTS_URL: 'http://127.0.0.1:9',
-    STRIPE_SECRET_KEY: 'sk_test_simulated',
-    STRIPE_WEBHOOK_SECRET: WEBHOOK_SECRET,
-    SMTP_URL: 'smtp://127.0.0.1:9',
-    JOBS: 'off',
-    PASS_WORKERS: '0',
-  }),
-  databaseFile: ':memory:',
-});

@@ -4,6 +4,7 @@ import { type AccountName, type JournalEntry, type LedgerFault, monthOf, monthSp
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import type { Db } from '../platform/transaction.js';
 import { type AccountSums, LedgerRepository } from './ledger.repository.js';
+import { LedgerCheckRepository } from './ledger-check.repository.js';
 
 /** Accounts that can only stand on one side: the other means that something was paid, refunded or released twice. */
 const NEVER_DEBIT: readonly string[] = ['refunds', 'dispute reserve', 'payout clearing'] satisfies AccountName[];
@@ -12,6 +13,7 @@ const NEVER_DEBIT: readonly string[] = ['refunds', 'dispute reserve', 'payout cl
 export class LedgerService {
   constructor(
     private readonly repository: LedgerRepository,
+    private readonly checks: LedgerCheckRepository,
     @Inject(CLOCK) private readonly clock: ClockPort,
   ) {}
 
@@ -57,24 +59,24 @@ export class LedgerService {
   /** The same in parts of a month each, so that a large journal can be checked between other work. */
   *checkByParts(): Generator<LedgerFault[]> {
     yield this.checkOpen();
-    for (const month of this.repository.monthsWithEntries()) yield this.checkMonth(month);
+    for (const month of this.checks.monthsWithEntries()) yield this.checkMonth(month);
     yield this.checkBalances();
   }
 
   private checkOpen(): LedgerFault[] {
-    const open = this.repository.openEntries();
+    const open = this.checks.openEntries();
     if (open === 0) return [];
     return [{ kind: 'unbalanced entry', sentence: `${open} entries were begun and never sealed.` }];
   }
 
   private checkMonth(month: string): LedgerFault[] {
     const span = monthSpan(month);
-    const faults: LedgerFault[] = this.repository.unbalanced(span).map(({ entryId, minor }) => ({
+    const faults: LedgerFault[] = this.checks.unbalanced(span).map(({ entryId, minor }) => ({
       kind: 'unbalanced entry',
       sentence: `The entry ${entryId} is out of balance by ${minor} minor units.`,
     }));
     const kept = new Map(this.repository.sums({ fromMonth: month, toMonth: month }).map((one) => [keyOf(one), one]));
-    const anew = this.repository.summedAnew(span);
+    const anew = this.checks.summedAnew(span);
     const differs = anew.filter((one) => !sameSums(one, kept.get(keyOf(one))));
     if (differs.length > 0 || kept.size !== anew.length) {
       const accounts = differs.map(keyOf).join(', ') || 'an account without postings';
@@ -107,7 +109,7 @@ export class LedgerService {
       const sentence = `“${account}” of ${organisationId} stands ${minor} minor units of ${currency} beyond what was set aside.`;
       return [{ kind: 'wrong side', sentence }];
     }
-    if (account !== 'owner payable' || this.repository.causedDebtMinor(organisationId, currency) >= minor) return [];
+    if (account !== 'owner payable' || this.checks.causedDebtMinor(organisationId, currency) >= minor) return [];
     const sentence = `The owner ${organisationId} owes ${minor} minor units of ${currency} and no cause is known.`;
     return [{ kind: 'owner owes', sentence }];
   }

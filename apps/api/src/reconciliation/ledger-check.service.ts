@@ -6,6 +6,7 @@ import type { LedgerCheck, ResponseOf, routes } from '@skyberth/shared';
 import { JobsService } from '../jobs/jobs.service.js';
 import { LedgerRepository } from '../ledger/ledger.repository.js';
 import { LedgerService } from '../ledger/ledger.service.js';
+import { LedgerCheckRepository } from '../ledger/ledger-check.repository.js';
 import { PROVIDER_BOOKS, type ProviderBooks } from '../payments/provider-books.port.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { DATABASE } from '../platform/database.module.js';
@@ -25,13 +26,14 @@ export class LedgerCheckService implements OnModuleInit {
     @Inject(PROVIDER_BOOKS) private readonly books: ProviderBooks,
     private readonly ledger: LedgerService,
     private readonly repository: LedgerRepository,
+    private readonly checks: LedgerCheckRepository,
     private readonly reconciliation: ReconciliationService,
     private readonly jobs: JobsService,
   ) {}
 
   onModuleInit(): void {
     this.jobs.every('ledger self-check', LOOK_EVERY_MS, async () => {
-      const last = this.repository.lastCheck();
+      const last = this.checks.lastCheck();
       if (!last || dayOf(last.atMs) < dayOf(this.clock.nowMs())) await this.run();
     });
   }
@@ -51,12 +53,12 @@ export class LedgerCheckService implements OnModuleInit {
     for (const fault of faults) this.log.error(fault.sentence);
     const postings = this.repository.sums({}).reduce((sum, one) => sum + one.postings, 0);
     const check = { atMs: this.clock.nowMs(), postings, providerAsked: provider !== null, faults };
-    write(this.db, (tx) => this.repository.addCheck(tx, check));
+    write(this.db, (tx) => this.checks.addCheck(tx, check));
     return faults;
   }
 
   last(): LedgerCheck {
-    const row = this.repository.lastCheck();
+    const row = this.checks.lastCheck();
     if (!row) return null;
     const { atMs, postings, providerAsked, faults } = row;
     return { atUtc: new Date(atMs).toISOString(), postings, providerAsked, faults };

@@ -4,6 +4,7 @@ import type { SkyberthDatabase } from '@skyberth/drizzle';
 import { monthAfter, monthOf, monthSpan } from '@skyberth/money';
 import type { Principal, ResponseOf, routes } from '@skyberth/shared';
 import { LedgerRepository } from '../ledger/ledger.repository.js';
+import { LedgerCheckRepository } from '../ledger/ledger-check.repository.js';
 import { trialBalance } from '../ledger/trial-balance.js';
 import { ReadingRepository } from '../payments/reading.repository.js';
 import { AuditService } from '../platform/audit.service.js';
@@ -24,6 +25,7 @@ export class MonthService {
     @Inject(CLOCK) private readonly clock: ClockPort,
     private readonly repository: MonthRepository,
     private readonly ledger: LedgerRepository,
+    private readonly checks: LedgerCheckRepository,
     private readonly reconciliation: ReconciliationService,
     private readonly readings: ReadingRepository,
     private readonly audit: AuditService,
@@ -77,7 +79,7 @@ export class MonthService {
   /** Every month from the one after the last closed, or the first with entries, to the running one; oldest first. */
   private openMonths(lastClosed: string | undefined): string[] {
     const running = monthOf(this.clock.nowMs());
-    const first = lastClosed === undefined ? this.ledger.monthsWithEntries()[0] : monthAfter(lastClosed);
+    const first = lastClosed === undefined ? this.checks.monthsWithEntries()[0] : monthAfter(lastClosed);
     const months: string[] = [];
     for (let month = first ?? running; month <= running; month = monthAfter(month)) months.push(month);
     return months;
@@ -102,7 +104,7 @@ export class MonthService {
     const { contacts, payments, orders, chargebacks } = this.repository.unfinished(toMs);
     const reading = this.readings.find(READING);
     const open = this.reconciliation.openBefore(toMs);
-    const check = this.ledger.lastCheck();
+    const check = this.checks.lastCheck();
     const faults = check?.faults.length ?? 0;
     const counted = (rows: number, one: string, many: string) => `${rows} ${rows === 1 ? one : many}`;
     return [

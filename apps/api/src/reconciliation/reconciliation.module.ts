@@ -7,6 +7,7 @@ import { LedgerCheckService } from './ledger-check.service.js';
 import { MissedNews } from './missed-news.js';
 import { MonthRepository } from './months.repository.js';
 import { MonthService } from './months.service.js';
+import { MovementMatcher } from './movement-matcher.js';
 import { ReconciliationController } from './reconciliation.controller.js';
 import { ReconciliationRepository } from './reconciliation.repository.js';
 import { ReconciliationService } from './reconciliation.service.js';
@@ -18,6 +19,7 @@ import { ReconciliationService } from './reconciliation.service.js';
     ReconciliationRepository,
     ReconciliationService,
     MissedNews,
+    MovementMatcher,
     LedgerCheckService,
     MonthRepository,
     MonthService,

@@ -4,11 +4,11 @@
  */
 import { Inject, Injectable, Logger, type OnModuleInit } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
-import { credit, debit, journalEntry, reverseEntry, suspenseEntry, withdrawalEntry } from '@skyberth/money';
+import { credit, debit, journalEntry, suspenseEntry, withdrawalEntry } from '@skyberth/money';
 import type { BodyOf, Movement, Principal, QueryOf, ResponseOf, routes } from '@skyberth/shared';
 import { JobsService } from '../jobs/jobs.service.js';
-import { LedgerRepository } from '../ledger/ledger.repository.js';
 import { LedgerService } from '../ledger/ledger.service.js';
+import { LedgerCheckRepository } from '../ledger/ledger-check.repository.js';
 import { PROVIDER_BOOKS, type ProviderBooks, type ProviderMovement } from '../payments/provider-books.port.js';
 import { ReadingRepository } from '../payments/reading.repository.js';
 import { AuditService } from '../platform/audit.service.js';
@@ -18,13 +18,13 @@ import { DomainError, notFound } from '../platform/domain-error.js';
 import { type Db, write } from '../platform/transaction.js';
 import { ageing, causeOf, differenceOf, kindOf } from './matching.js';
 import { MissedNews } from './missed-news.js';
+import { MovementMatcher } from './movement-matcher.js';
 import { readMovementsCsv } from './movements-csv.js';
 import { type ListedMovement, type MovementRow, ReconciliationRepository } from './reconciliation.repository.js';
 
 const READ_EVERY_MS = 600_000;
 /** Read again each time, since a movement may become visible after a later one. */
 const OVERLAP_MS = 3_600_000;
-const MATCH_LIMIT = 5_000;
 const DAY_MS = 86_400_000;
 const READING = 'movements';
 /** Younger than this, an entry without a movement is only waiting for the next reading. */
@@ -41,7 +41,8 @@ export class ReconciliationService implements OnModuleInit {
     private readonly repository: ReconciliationRepository,
     private readonly readings: ReadingRepository,
     private readonly ledger: LedgerService,
-    private readonly months: LedgerRepository,
+    private readonly months: LedgerCheckRepository,
+    private readonly matcher: MovementMatcher,
     private readonly news: MissedNews,
     private readonly audit: AuditService,
     private readonly jobs: JobsService,
@@ -68,7 +69,7 @@ export class ReconciliationService implements OnModuleInit {
     const sinceMs = Math.max(0, (this.readings.find(READING)?.readUntilMs ?? 0) - OVERLAP_MS);
     let imported = 0;
     for await (const page of this.books.movements(sinceMs)) imported += this.import(page, 'provider');
-    const matched = this.match();
+    const matched = this.matcher.match();
     const note = `${imported} new movements, ${matched} matched`;
     this.readings.save(READING, { readUntilMs: nowMs, ranMs: nowMs, note });
     return { imported, matched };
@@ -82,7 +83,7 @@ export class ReconciliationService implements OnModuleInit {
       throw new DomainError('bad-input', `The file cannot be imported. ${first}`, read.errors.slice(0, 50));
     }
     const imported = this.import(read.movements, 'file');
-    const matched = this.match();
+    const matched = this.matcher.match();
     const known = read.movements.length - imported;
     write(this.db, (tx) =>
       this.audit.record(tx, {
@@ -93,15 +94,6 @@ export class ReconciliationService implements OnModuleInit {
       }),
     );
     return { imported, known, matched };
-  }
-
-  /** Finds the entries of movements that have none yet; answers how many it found. */
-  match(): number {
-    let matched = 0;
-    for (const movement of this.repository.unmatched(MATCH_LIMIT)) {
-      if (write(this.db, (tx) => this.matchOne(tx, movement))) matched += 1;
-    }
-    return matched;
   }
 
   view(): ResponseOf<typeof routes.reconciliation> {
@@ -160,7 +152,7 @@ export class ReconciliationService implements OnModuleInit {
       const data = { action: wish.action, reason: wish.reason };
       this.audit.record(tx, { caller, action: 'reconciliation.resolve', subject: `movement:${id}`, data });
     });
-    this.match();
+    this.matcher.match();
     const after = this.repository.listed(id);
     if (!after) throw notFound('movement');
     return this.shown(after);
@@ -210,55 +202,6 @@ export class ReconciliationService implements OnModuleInit {
     const postings = [debit('provider costs', feeMinor), credit('provider clearing', feeMinor)];
     const bookingId = movement.intentId === null ? null : this.repository.bookingOfIntent(tx, movement.intentId);
     this.ledger.post(tx, journalEntry(head, postings), bookingId);
-  }
-
-  private matchOne(tx: Db, movement: MovementRow): boolean {
-    const kind = kindOf(movement);
-    if (kind === 'refund') return this.matchRefunds(tx, movement);
-    const cause = causeOf(kind, movement);
-    const found = cause === null ? undefined : this.repository.freeEntry(tx, cause);
-    const expectedMinor = kind === 'fee' ? movement.netMinor : movement.amountMinor;
-    if (!found || found.amountMinor !== expectedMinor || found.currency !== movement.currency) return false;
-    this.settle(tx, movement, found.causeKey);
-    return true;
-  }
-
-  /**
-   * A refund has the entry of its amount. Where news came in the wrong order one entry stands for several refunds, which the
-   * provider counts one by one: then all that is open of the payment must add up on both sides.
-   */
-  private matchRefunds(tx: Db, movement: MovementRow): boolean {
-    const now = this.repository.byId(movement.id, tx);
-    if (movement.intentId === null || now?.state === 'matched') return false;
-    const entries = this.repository.freeEntriesOfIntent(tx, movement.intentId, 'returned:');
-    const exact = entries.find((entry) => entry.amountMinor === movement.amountMinor);
-    if (exact) {
-      this.settle(tx, movement, exact.causeKey);
-      return true;
-    }
-    const refunds = this.repository.openRefunds(tx, movement.intentId);
-    const sumOf = (rows: readonly { amountMinor: number }[]) => rows.reduce((sum, row) => sum + row.amountMinor, 0);
-    if (entries.length === 0 || entries.length > refunds.length || sumOf(refunds) !== sumOf(entries)) return false;
-    const causes = entries.map((entry) => entry.causeKey);
-    // An entry stands for one movement in the database; the others name the last entry and themselves.
-    refunds.forEach((refund, index) => {
-      this.settle(tx, refund, causes[index] ?? `${causes.at(-1)}+${refund.id}`);
-    });
-    return true;
-  }
-
-  private settle(tx: Db, movement: MovementRow, entryCause: string): void {
-    if (movement.state === 'in suspense') this.clearSuspense(tx, movement);
-    this.repository.update(tx, movement.id, { state: 'matched', entryCause, changedMs: this.clock.nowMs() });
-  }
-
-  /** The explanation came after all: what stood in suspense is taken back. */
-  private clearSuspense(tx: Db, movement: MovementRow): void {
-    const { id, amountMinor, currency } = movement;
-    const cause = `Movement ${id} in suspense`;
-    const entry = suspenseEntry({ causeKey: `suspense:${id}`, cause, currency }, { amountMinor });
-    const head = { causeKey: `suspense-cleared:${id}`, cause: `${cause}, explained` };
-    this.ledger.post(tx, reverseEntry(entry, head), null);
   }
 
   private book(tx: Db, movement: MovementRow, wish: BodyOf<typeof routes.resolveMovement>): void {
