@@ -12,6 +12,7 @@ import { useTitle } from '../../lib/use-title.js';
 import { DayTime } from '../../ui/day-time.js';
 import { EmptyState } from '../../ui/empty-state.js';
 import { formatMoney } from '../../ui/format.js';
+import { MoneyInput } from '../../ui/money-input.js';
 import { PageTitle } from '../../ui/page-title.js';
 import { Pager } from '../../ui/pager.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
@@ -88,8 +89,10 @@ function Begin() {
   const client = useQueryClient();
   const navigate = useNavigate();
   const [currency, setCurrency] = useState('EUR');
+  const [minimumMinor, setMinimumMinor] = useState<number | ''>(0);
+  const code = currency.trim().toUpperCase();
   const prepare = useMutation({
-    mutationFn: () => call(routes.preparePayoutRun, { body: { currency: currency.trim().toUpperCase() } }),
+    mutationFn: () => call(routes.preparePayoutRun, { body: { currency: code, minimumMinor: Number(minimumMinor) } }),
     onSuccess: (run) => {
       void client.invalidateQueries({ queryKey: payoutQueries.all });
       navigate(paths.payoutRun(run.id));
@@ -110,6 +113,13 @@ function Begin() {
           value={currency}
           onChange={(event) => setCurrency(event.currentTarget.value)}
           error={prepare.error ? sentenceOf(prepare.error) : undefined}
+        />
+        <MoneyInput
+          label="Least to send"
+          w={140}
+          currency={/^[A-Z]{3}$/.test(code) ? code : 'EUR'}
+          value={minimumMinor}
+          onChange={setMinimumMinor}
         />
         <Button type="submit" loading={prepare.isPending}>
           Prepare a run
