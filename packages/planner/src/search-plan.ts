@@ -2,6 +2,7 @@
 import { costSum, dearestOf, elastic, fleetProgram, loweredTo } from './assemble.js';
 import { shortfalls, sumsOf } from './check-plan.js';
 import { boundOf, couldBeat, type FleetBound, mostPromising, type Selection } from './columns.js';
+import { greedyPlan } from './greedy.js';
 import { planOneByOne } from './one-by-one.js';
 import { PlannerError } from './planner-error.js';
 import { stretchOf } from './rows.js';
@@ -53,10 +54,10 @@ export function strictPlan(terms: SearchTerms): Found | 'infeasible' | 'no time'
   const fleet = boundOf(need, candidates, terms.solve, null, secondsLeft, craftTold(terms));
   if (fleet.hopeless.length > 0) return 'infeasible';
   const quick = planOneByOne({ ...terms, alone: fleet.alone, onCraft: craftTold(terms, 'fleet') });
+  // A plan as made by hand is better than none where the time ends before the spacecraft's own plans fit together.
+  const plain = quick.chosen ?? greedyPlan(need, candidates);
   let best =
-    quick.chosen === null || !affordable(need, quick.chosen)
-      ? null
-      : settledBy(need, quick.chosen, Math.max(fleet.bound, quick.bound));
+    plain === null || !affordable(need, plain) ? null : settledBy(need, plain, Math.max(fleet.bound, quick.bound));
   let bestCost = best === null ? Number.POSITIVE_INFINITY : costSum(need, best.chosen);
   if (best !== null && (bestCost - best.bound <= targetGap * bestCost || secondsLeft() <= 0)) return best;
   let perCraft = FIRST_PER_CRAFT;
@@ -96,7 +97,7 @@ const boundWith = (fleet: FleetBound, floor: number, selection: Selection, answe
 
 /** A plan that was put together without a program of the fleet; the one given explains it. */
 function settledBy(need: PlanNeed, chosen: readonly Candidate[], bound: number): Found {
-  return { chosen, bound, proven: true, program: fleetProgram(need, chosen), inside: chosen, unmet: [] };
+  return { chosen, bound, proven: bound > 0, program: fleetProgram(need, chosen), inside: chosen, unmet: [] };
 }
 
 const affordable = (need: PlanNeed, chosen: readonly Candidate[]): boolean => {
