@@ -9,6 +9,7 @@ export const ERROR_CODES = {
   'bad-signature': { status: 400, title: 'The signature does not match' },
   'not-signed-in': { status: 401, title: 'Sign in first' },
   'wrong-credentials': { status: 401, title: 'E-mail and password do not match' },
+  'api-key-refused': { status: 401, title: 'The API key opens nothing' },
   'session-ended': { status: 401, title: 'The session has ended' },
   'card-declined': { status: 402, title: 'The card was declined' },
   'not-allowed': { status: 403, title: 'Your role does not allow this' },

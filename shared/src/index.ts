@@ -2,6 +2,7 @@
 
 export * from './booking-states.js';
 export * from './contracts/accounts.js';
+export * from './contracts/api-keys.js';
 export * from './contracts/availability.js';
 export * from './contracts/bookings.js';
 export * from './contracts/clearances.js';

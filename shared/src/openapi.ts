@@ -1,5 +1,6 @@
 /** OpenAPI 3.1 made from the route contracts; nothing is described twice. */
 import { z } from 'zod';
+import { API_KEY_PREFIX, scopeOf } from './contracts/api-keys.js';
 import { ERROR_CODES, PROBLEM_MEDIA_TYPE, Problem } from './errors.js';
 import { IDEMPOTENCY_HEADER, needsIdempotencyKey, type RouteContract } from './route.js';
 
@@ -59,6 +60,13 @@ function answersOf(route: RouteContract): Json {
   return answers;
 }
 
+/** Without anything, by a session, or also by an API key with the scope of that name. */
+function securityOf(route: RouteContract): Json[] {
+  if (route.access === 'public') return [];
+  const scope = scopeOf(route);
+  return [{ session: [] }, ...(scope === null ? [] : [{ key: [scope] }])];
+}
+
 /** The whole document. `version` is the application's. */
 export function openApiDocument(routes: Readonly<Record<string, RouteContract>>, version: string): Json {
   const paths: Record<string, Json> = {};
@@ -72,7 +80,7 @@ export function openApiDocument(routes: Readonly<Record<string, RouteContract>>,
       'x-data': route.data,
       parameters: parametersOf(route),
       responses: answersOf(route),
-      ...(route.access === 'public' ? { security: [] } : {}),
+      security: securityOf(route),
     };
     if (route.body) {
       operation['requestBody'] = {
@@ -89,10 +97,12 @@ export function openApiDocument(routes: Readonly<Record<string, RouteContract>>,
       version,
       description: 'Contact time on ground-station antennas: find, hold, pay, fly, settle.',
     },
-    security: [{ session: [] }],
     paths,
     components: {
-      securitySchemes: { session: { type: 'apiKey', in: 'cookie', name: 'skyberth_access' } },
+      securitySchemes: {
+        session: { type: 'apiKey', in: 'cookie', name: 'skyberth_access' },
+        key: { type: 'http', scheme: 'bearer', description: `An API key; it begins with ${API_KEY_PREFIX}.` },
+      },
       schemas: { Problem: schemaOf(Problem, 'output') },
     },
   };

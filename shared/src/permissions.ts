@@ -28,6 +28,8 @@ const MANAGERS: readonly Role[] = ['manager'];
 export const PERMISSIONS = {
   'organisation.read': { operator: ALL, owner: ALL, staff: ['finance', 'admin'] },
   'organisation.manage': { operator: MANAGERS, owner: MANAGERS },
+  'api-keys.make': { operator: MANAGERS, owner: MANAGERS },
+  'api-keys.revoke': { operator: MANAGERS, owner: MANAGERS },
   'members.manage': { operator: MANAGERS, owner: MANAGERS, staff: ['admin'] },
   'spacecraft.read': { operator: ALL },
   'spacecraft.write': { operator: WORKERS },

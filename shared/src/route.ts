@@ -37,6 +37,8 @@ export interface RouteContract {
   readonly status?: number | undefined;
   /** Writes take an Idempotency-Key header unless they say why not. */
   readonly idempotencyKey?: 'required' | 'none' | undefined;
+  /** A person must do it, with a session: no API key is taken, whatever its scopes. */
+  readonly inPerson?: true | undefined;
   readonly errors?: readonly ErrorCode[] | undefined;
 }
 

@@ -1,5 +1,6 @@
 /** Every route of the API, by name. */
 import { accountRoutes } from './contracts/accounts.js';
+import { apiKeyRoutes } from './contracts/api-keys.js';
 import { availabilityRoutes } from './contracts/availability.js';
 import { bookingRoutes } from './contracts/bookings.js';
 import { clearanceRoutes } from './contracts/clearances.js';
@@ -55,5 +56,6 @@ export const routes = {
   ...messageRoutes,
   ...oversightRoutes,
   ...systemRoutes,
+  ...apiKeyRoutes,
 } as const;
 export type RouteName = keyof typeof routes;

@@ -42,8 +42,11 @@ export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
   };
   const plan = await must(call(routes.createPlan, { body: need, as: operator }));
   const line = addGroupAndPlace(skyberth, { operator, antennaId: antenna.id, spacecraftId: spacecraft });
+  const keyBody = { name: 'Console', scopes: ['bookings.read' as const] };
+  const { apiKey } = await must(call(routes.makeApiKey, { body: keyBody, as: operator }));
   return {
     ...line,
+    apiKey: apiKey.id,
     dispute,
     plan: plan.id,
     spacecraft,

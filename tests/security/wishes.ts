@@ -26,6 +26,7 @@ export interface Targets {
   readonly group: string;
   readonly place: string;
   readonly plan: string;
+  readonly apiKey: string;
 }
 
 /** Targets that do not exist. */
@@ -45,6 +46,7 @@ export const nowhere = (): Targets => ({
   group: randomUUID(),
   place: randomUUID(),
   plan: randomUUID(),
+  apiKey: randomUUID(),
 });
 
 const ADDRESS = { line1: 'Quay 1', postalCode: '1', city: 'Porto Novo', country: 'DE' };
@@ -227,6 +229,8 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     suspendAccount: { params: { id: to.organisation }, body: { reason: 'look' } },
     reinstateAccount: { params: { id: to.organisation }, body: { reason: 'look' } },
     listAudit: {},
+    makeApiKey: { body: { name: 'Console', scopes: ['bookings.read'] } },
+    revokeApiKey: { params: { id: to.apiKey } },
     listPayoutRuns: {},
     getPayoutRun: { params: { id: randomUUID() } },
     preparePayoutRun: { body: { currency: 'XAF' } },

@@ -1,6 +1,7 @@
 /** The application: the platform and one module for each feature. */
 import { type DynamicModule, Module } from '@nestjs/common';
 import { AccountsModule } from './accounts/accounts.module.js';
+import { ApiKeysModule } from './api-keys/api-keys.module.js';
 import { AvailabilityModule } from './availability/availability.module.js';
 import { BookingsModule } from './bookings/bookings.module.js';
 import { ClearancesModule } from './clearances/clearances.module.js';
@@ -42,6 +43,7 @@ export class AppModule {
         MailModule,
         FilesModule,
         AccountsModule,
+        ApiKeysModule,
         SpacecraftModule,
         StationsModule,
         AvailabilityModule,

@@ -1,4 +1,5 @@
 export * from './accounts.js';
+export * from './api-keys.js';
 export * from './availability.js';
 export * from './bookings.js';
 export * from './clearances.js';

@@ -170,13 +170,14 @@ export class SessionsService implements OnModuleInit {
   }
 
   /** Throws `not-found` for an organisation of which the caller is no member. */
-  switchTo(caller: Caller, organisationId: string): OpenSession {
+  switchTo({ personId, familyId }: Caller, organisationId: string): OpenSession {
+    if (familyId === null) throw new Error('Only a session acts for another organisation.');
     return write(this.db, (tx) => {
-      const memberships = this.people.membershipsOf(tx, caller.personId);
+      const memberships = this.people.membershipsOf(tx, personId);
       if (!memberships.some((each) => each.organisationId === organisationId)) throw notFound('organisation');
-      this.sessions.touchFamily(tx, caller.familyId, { lastUsedMs: this.clock.nowMs(), organisationId });
-      return this.answer(tx, caller.personId, organisationId, {
-        access: this.accessTokens.issue(caller.personId, caller.familyId),
+      this.sessions.touchFamily(tx, familyId, { lastUsedMs: this.clock.nowMs(), organisationId });
+      return this.answer(tx, personId, organisationId, {
+        access: this.accessTokens.issue(personId, familyId),
         refresh: null,
       });
     });

@@ -1,7 +1,8 @@
 /** Nobody gets in unless the route's contract says so: deny by default. */
 import { type CanActivate, type ExecutionContext, Inject, Injectable } from '@nestjs/common';
 import { Reflector } from '@nestjs/core';
-import { can, type Permission, type RouteContract } from '@skyberth/shared';
+import { API_KEY_PREFIX, can, type Permission, type RouteContract, scopeOf } from '@skyberth/shared';
+import type { Request } from 'express';
 import type { Authenticator } from 'passport';
 import { CONFIG, type Config } from './config.js';
 import { type Caller, CONTRACT, type SkyberthRequest } from './contract.js';
@@ -29,6 +30,7 @@ export class AccessGuard implements CanActivate {
     this.refuseOtherSites(request);
     const principal = await this.authenticate(request);
     if (principal) request.principal = principal;
+    if (principal?.apiKey) refuseBeyondScopes(principal.apiKey.scopes, contract);
     if (contract.access === 'public') return true;
     if (!principal) throw new DomainError('not-signed-in', 'Sign in to go on.');
     if (contract.access === 'signed-in') return true;
@@ -68,17 +70,30 @@ export class AccessGuard implements CanActivate {
     if (!own) throw new DomainError('cross-site', 'This action can only be started from Skyberth itself.');
   }
 
-  /** Runs the passport strategy; resolves to null where there is no valid access token. */
+  /** Runs the passport strategy; resolves to null where there is no valid access token, rejects for a key that is not good. */
   private authenticate(request: SkyberthRequest): Promise<Caller | null> {
     return new Promise((resolve, reject) => {
       const done = (error: unknown, user: Caller | false | null | undefined) =>
         error ? reject(error) : resolve(user || null);
-      const handler = this.authenticator.authenticate('jwt', { session: false }, done) as (
-        req: unknown,
-        res: unknown,
-        next: (error?: unknown) => void,
-      ) => void;
+      const handler = this.authenticator.authenticate(
+        keyOf(request) === null ? 'jwt' : 'api-key',
+        { session: false },
+        done,
+      ) as (req: unknown, res: unknown, next: (error?: unknown) => void) => void;
       handler(request, undefined, (error) => (error ? reject(error) : resolve(null)));
     });
   }
+}
+
+/** The API key of a request, in the Authorization header (RFC 6750, section 2.1); null where it carries none. */
+export function keyOf(request: Request): string | null {
+  const [scheme = '', token = ''] = (request.headers.authorization ?? '').split(' ');
+  return scheme.toLowerCase() === 'bearer' && token.startsWith(API_KEY_PREFIX) ? token : null;
+}
+
+/** A key opens what its scopes name and nothing else, not even what is open to everybody. */
+function refuseBeyondScopes(scopes: readonly Permission[], contract: RouteContract): void {
+  const scope = scopeOf(contract);
+  if (scope === null) throw new DomainError('not-allowed', 'No API key is taken here. A person must sign in for this.');
+  if (!scopes.includes(scope)) throw new DomainError('not-allowed', `This API key lacks the scope ${scope}.`);
 }

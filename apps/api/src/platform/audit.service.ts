@@ -4,11 +4,12 @@ import { auditLog } from '@skyberth/drizzle';
 import type { Principal } from '@skyberth/shared';
 import { desc } from 'drizzle-orm';
 import { CLOCK, type ClockPort } from './clock.js';
+import type { Caller } from './contract.js';
 import { sha256 } from './ids.js';
 import type { Db } from './transaction.js';
 
 export interface AuditEntry {
-  readonly caller: Pick<Principal, 'personId' | 'organisationId'> | null;
+  readonly caller: (Pick<Principal, 'personId' | 'organisationId'> & Pick<Caller, 'apiKey'>) | null;
   /** A verb and its object, such as `station.approve`. */
   readonly action: string;
   /** What it was done to, such as `station:<id>`. */
@@ -28,6 +29,7 @@ export class AuditService {
       .orderBy(desc(auditLog.seq))
       .limit(1)
       .get();
+    const apiKey = entry.caller?.apiKey;
     const row = {
       seq: (last?.seq ?? 0) + 1,
       atMs: this.clock.nowMs(),
@@ -35,7 +37,7 @@ export class AuditService {
       organisationId: entry.caller?.organisationId ?? null,
       action: entry.action,
       subject: entry.subject,
-      data: JSON.stringify(entry.data ?? {}),
+      data: JSON.stringify({ ...entry.data, ...(apiKey ? { apiKeyId: apiKey.id } : {}) }),
       previousHash: last?.hash ?? '',
     };
     tx.insert(auditLog)

@@ -50,7 +50,7 @@ export class ContractInterceptor implements NestInterceptor {
       );
     }
     const claim = this.store.claim({
-      caller: request.principal?.personId ?? `public:${request.ip}`,
+      caller: callerOf(request),
       key,
       route: `${contract.method} ${request.originalUrl}`,
       organisationId: request.principal?.organisationId ?? '',
@@ -72,6 +72,12 @@ export class ContractInterceptor implements NestInterceptor {
       }),
     );
   }
+}
+
+/** Whose idempotency key it is: each API key has its own, apart from the person who made it. */
+function callerOf({ principal, ip }: SkyberthRequest): string {
+  if (principal?.apiKey) return `api-key:${principal.apiKey.id}`;
+  return principal?.personId ?? `public:${ip}`;
 }
 
 function parse(schema: z.ZodType | undefined, value: unknown, place: string): unknown {

@@ -9,7 +9,14 @@ import {
   RequestMethod,
   SetMetadata,
 } from '@nestjs/common';
-import { type BodyOf, type ParamsOf, type Principal, type QueryOf, type RouteContract } from '@skyberth/shared';
+import {
+  type ApiKeyScope,
+  type BodyOf,
+  type ParamsOf,
+  type Principal,
+  type QueryOf,
+  type RouteContract,
+} from '@skyberth/shared';
 import type { Request } from 'express';
 
 export const CONTRACT = 'skyberth:contract';
@@ -31,8 +38,11 @@ export const Handles = (contract: RouteContract): MethodDecorator =>
     ...(contract.produces ? [Header('Content-Type', contract.produces)] : []),
   );
 
-/** The caller, with the session they call in. */
-export type Caller = Principal & { readonly familyId: string };
+/** The caller, with the session they call in, or the API key that calls in their name. */
+export type Caller = Principal & {
+  readonly familyId: string | null;
+  readonly apiKey?: { readonly id: string; readonly scopes: readonly ApiKeyScope[] };
+};
 
 /** What a handler is given: parsed by the contract, with the caller beside it. */
 export interface HandlerInput<C extends RouteContract> {
