@@ -106,7 +106,8 @@ function ChainCheck() {
 
 function Rows({ rows }: { readonly rows: readonly AuditRow[] }) {
   return (
-    <div className={classes.scroll}>
+    // biome-ignore lint/a11y/noNoninteractiveTabindex: nothing inside takes the focus, so that the keyboard scrolls the region itself.
+    <section className={classes.scroll} tabIndex={0} aria-label="Rows of the audit trail">
       <Table>
         <Table.Thead>
           <Table.Tr>
@@ -136,6 +137,6 @@ function Rows({ rows }: { readonly rows: readonly AuditRow[] }) {
           ))}
         </Table.Tbody>
       </Table>
-    </div>
+    </section>
   );
 }
