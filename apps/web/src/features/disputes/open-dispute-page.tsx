@@ -2,7 +2,7 @@
 import { Anchor, Button, Select, Skeleton, Textarea, TextInput } from '@mantine/core';
 import { type AttachedFile, DISPUTE_REASONS, type DisputeReason, type Observation, routes } from '@skyberth/shared';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useEffect, useState } from 'react';
 import { Link, useNavigate, useParams } from 'react-router-dom';
 import { call } from '../../lib/api-client.js';
 import { bookingQueries } from '../../lib/booking-queries.js';
@@ -55,8 +55,12 @@ function Form({
   const [gap, setGap] = useState({ from: '', to: '' });
   const [observations, setObservations] = useState<readonly Observation[]>([]);
   const [files, setFiles] = useState<readonly AttachedFile[]>([]);
-  const [isDone, setDone] = useState(false);
-  useLeaveGuard(text.trim() !== '' && !isDone, 'the dispute');
+  const [openedId, setOpenedId] = useState<string | null>(null);
+  useLeaveGuard(text.trim() !== '' && openedId === null, 'the dispute');
+  // Behind the guard's own effect, so that it has seen that nothing is lost.
+  useEffect(() => {
+    if (openedId !== null) navigate(paths.dispute(openedId));
+  }, [openedId, navigate]);
   const gapFromUtc = utcOfClock(gap.from, aosUtc);
   const gapToUtc = utcOfClock(gap.to, aosUtc);
   const badGap =
@@ -81,11 +85,9 @@ function Form({
         },
       }),
     onSuccess: (dispute) => {
-      setDone(true);
+      setOpenedId(dispute.id);
       void client.invalidateQueries({ queryKey: bookingQueries.all });
       void client.invalidateQueries({ queryKey: ['disputes'] });
-      // After the guard has seen that nothing is lost.
-      window.setTimeout(() => navigate(paths.dispute(dispute.id)), 0);
     },
   });
   const errors = fieldErrors(open.error);
