@@ -8,7 +8,7 @@ import { call } from '../lib/api-client.js';
 import { homeQuery } from '../lib/home-query.js';
 import { paths } from '../lib/paths.js';
 import { serverNowMs } from '../lib/server-clock.js';
-import { useEnterSession, useSession } from '../lib/session.js';
+import { useCan, useEnterSession, useSession } from '../lib/session.js';
 import { Shell } from '../theme/shell/shell.js';
 import type { ShellItem, ShellLink } from '../theme/shell/shell-types.js';
 import { TimeDisplayProvider } from '../ui/time-display.js';
@@ -91,6 +91,7 @@ function PersonMenu({ timeMode, onToggleTime, onGoTo }: PersonMenuProps) {
   const session = useSession();
   const navigate = useNavigate();
   const enter = useEnterSession();
+  const can = useCan();
   const { colorScheme, setColorScheme } = useMantineColorScheme();
   const signOut = useMutation({
     mutationFn: () => call(routes.signOut, {}),
@@ -116,6 +117,11 @@ function PersonMenu({ timeMode, onToggleTime, onGoTo }: PersonMenuProps) {
       <Menu.Item component={Link} to={paths.organisation}>
         Organisation and members
       </Menu.Item>
+      {can('api-keys.make') && (
+        <Menu.Item component={Link} to={paths.keys}>
+          API keys
+        </Menu.Item>
+      )}
       {others.length > 0 && <Menu.Label>Act for</Menu.Label>}
       {others.map((one) => (
         <Menu.Item key={one.organisationId} onClick={() => change.mutate(one.organisationId)}>

@@ -224,6 +224,10 @@ const memberPages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('../features/security/security-page.js')).SecurityPage }),
   },
   {
+    path: paths.keys,
+    lazy: async () => ({ Component: (await import('../features/keys/keys-page.js')).KeysPage }),
+  },
+  {
     path: paths.ledger,
     lazy: async () => ({ Component: (await import('../features/ledger/ledger-page.js')).LedgerPage }),
   },

@@ -50,6 +50,7 @@ export const paths = {
   payouts: '/payouts',
   payoutRun: (id: string) => `/payouts/${id}`,
   security: '/security',
+  keys: '/keys',
   ledger: '/ledger',
   reconciliation: '/reconciliation',
   monthlyAccount: '/monthly-account',
