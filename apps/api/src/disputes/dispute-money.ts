@@ -52,8 +52,13 @@ export class DisputeMoney {
     private readonly parties: PartiesRepository,
   ) {}
 
-  /** Throws `wrong-state` where nothing was or will be charged, so that there is nothing to dispute. */
+  /** Throws `wrong-state` where nothing was or will be charged, or all of it is given back, so that there is nothing to dispute. */
   checkCharged(tx: Db, booking: BookingRow): void {
+    const invoice = this.invoices.ofBooking(booking.id);
+    const credit = this.invoices.creditOfBooking(tx, booking.id);
+    if (invoice && credit && invoice.grossMinor + credit.grossMinor <= 0) {
+      throw new DomainError('wrong-state', `All that was charged for berth ${booking.number} is given back already.`);
+    }
     if (booking.state === 'reporting' || this.ledger.has(tx, `sale:${booking.id}`)) return;
     throw new DomainError(
       'wrong-state',

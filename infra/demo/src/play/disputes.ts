@@ -89,14 +89,17 @@ export async function leaveDisputesOpen(stage: Stage, company: Company): Promise
   await stage.settle();
 }
 
-/** Settled contacts of the last days, newest first, that nobody disputed. */
+/** Settled contacts of the last days, newest first, that nobody disputed and none of which was given back. */
 async function settledOf(stage: Stage, operator: Actor, most: number): Promise<BookingSummary[]> {
   const { items } = await stage.call(operator, routes.listBookings, {
     query: { state: 'settled', sort: '-aos', fromUtc: utc(stage.nowMs() - TEN_DAYS_MS), pageSize: 20 },
   });
+  const invoices = await stage.call(operator, routes.listInvoices, { query: { pageSize: 100 } });
+  const credited = invoices.items.flatMap((one) => (one.kind === 'credit note' ? [one.bookingId] : []));
   const found: BookingSummary[] = [];
   for (const booking of items) {
     if (found.length === most) break;
+    if (credited.includes(booking.id)) continue;
     const { total } = await stage.call(operator, routes.listDisputes, { query: { bookingId: booking.id } });
     if (total === 0) found.push(booking);
   }
