@@ -7,7 +7,10 @@ import type { SQLiteColumn } from 'drizzle-orm/sqlite-core';
 import { DATABASE } from './database.module.js';
 
 /** What a suspended organisation may still change: contacts already sold must be flown and told of, and a lost key ended. */
-export const KEPT_WHEN_SUSPENDED: readonly Permission[] = ['bookings.report', 'api-keys.revoke'];
+export const KEPT_WHEN_SUSPENDED: readonly Permission[] = [
+  'bookings.report',
+  'api-keys.revoke',
+];
 
 @Injectable()
 export class StandingService {

@@ -1,5 +1,6 @@
 import { OPERATORS } from '../cast/operators.js';
 import { OWNERS } from '../cast/owners.js';
+import { makeKeys } from './api-keys.js';
 import { Chance } from './chance.js';
 import { buyUplinks, clearFleet, leaveClearancesOpen, reportUplinks } from './clearances.js';
 import { PASSWORD } from './client.js';
@@ -72,6 +73,7 @@ export async function loadDemo({ environment, days, say }: DemoSettings): Promis
     await leaveThingsOpen(stage, company, season);
     await leaveDisputesOpen(stage, company);
     await writeToEachOther(stage, company);
+    await makeKeys(stage, company);
     await chargeBack(stage, company, null);
     await askForAccount(stage, company);
     await closeMonths(stage, company);
