@@ -129,6 +129,27 @@ describe('a plan', () => {
     expect(outcome?.sums.every((each) => each.amountMinor <= 100)).toBe(true);
   });
 
+  it('can be stopped while it is being made, once, keeps its need, and can be made again', async () => {
+    const { id } = await must(skyberth.call(routes.createPlan, { body: need(), as: operator }));
+    const params = { id };
+    const stopped = await must(skyberth.call(routes.stopPlan, { params, as: operator }));
+    expect(stopped).toMatchObject({ state: 'draft', work: 'stopped', outcome: null, progress: null });
+    const again = await skyberth.call(routes.stopPlan, { params, as: operator });
+    expect(again.ok ? '' : again.problem.code).toBe('wrong-state');
+    const body = { need: stopped.need };
+    await must(skyberth.call(routes.replan, { params, body, as: operator }));
+    expect((await ready(id)).outcome?.status).toBe('met');
+  });
+
+  it('keeps what was found before where making it again is stopped', async () => {
+    const first = await made(need());
+    const params = { id: first.id };
+    await must(skyberth.call(routes.replan, { params, body: { need: need() }, as: operator }));
+    const stopped = await must(skyberth.call(routes.stopPlan, { params, as: operator }));
+    expect(stopped.work).toBe('stopped');
+    expect(stopped.outcome).toEqual(first.outcome);
+  });
+
   it('can be given up, once', async () => {
     const { id } = await made(need());
     const gone = await must(skyberth.call(routes.giveUpPlan, { params: { id }, as: operator }));

@@ -8,6 +8,8 @@ import { type CraftValues, freshCraft, type NeedValues } from './need-values.js'
 import classes from './plan.module.css';
 import { planQueries } from './plan-queries.js';
 
+/** Explanations stand below, so that the fields of a row stand level. */
+const BELOW = ['label', 'input', 'description', 'error'] as const;
 const CURRENCIES = ['EUR', 'USD', 'GBP', 'NOK', 'SEK', 'CHF', 'CAD', 'AUD', 'NZD', 'JPY', 'ZAR'];
 
 interface NeedFormProps {
@@ -30,11 +32,12 @@ export function NeedForm({ initial, fleet, isBusy, action, errors, onSubmit }: N
     change({ craft: values.craft.map((each) => (each.spacecraftId === id ? { ...each, ...part } : each)) });
   const choose = (ids: string[]) =>
     change({ craft: ids.map((id) => values.craft.find((each) => each.spacecraftId === id) ?? freshCraft(id)) });
+  const copyToAll = (one: CraftValues) =>
+    change({ craft: values.craft.map(({ spacecraftId }) => ({ ...one, spacecraftId })) });
   const submit = (event: FormEvent) => {
     event.preventDefault();
     onSubmit(values);
   };
-  const [first] = values.craft;
   return (
     <form onSubmit={submit} className={classes.stack}>
       <div className={classes.fields}>
@@ -66,6 +69,7 @@ export function NeedForm({ initial, fleet, isBusy, action, errors, onSubmit }: N
         <Select
           label="Currency"
           description="Stations that sell in another are left out."
+          inputWrapperOrder={[...BELOW]}
           data={CURRENCIES}
           value={values.currency}
           allowDeselect={false}
@@ -81,6 +85,7 @@ export function NeedForm({ initial, fleet, isBusy, action, errors, onSubmit }: N
         <MultiSelect
           label="Preferred stations"
           description="Kept unless another is 10 % cheaper."
+          inputWrapperOrder={[...BELOW]}
           data={places}
           searchable
           clearable
@@ -112,20 +117,13 @@ export function NeedForm({ initial, fleet, isBusy, action, errors, onSubmit }: N
           values={each}
           errorAt={(field) => errors[`craft.${place}.${field}`]}
           onChange={(part) => changeCraft(each.spacecraftId, part)}
+          {...(place === 0 && values.craft.length > 1 ? { onCopy: () => copyToAll(each) } : {})}
         />
       ))}
       <div className={classes.acts}>
         <Button type="submit" loading={isBusy} disabled={values.craft.length === 0}>
           {action}
         </Button>
-        {first && values.craft.length > 1 && (
-          <Button
-            variant="default"
-            onClick={() => change({ craft: values.craft.map(({ spacecraftId }) => ({ ...first, spacecraftId })) })}
-          >
-            Copy the first line to all
-          </Button>
-        )}
       </div>
     </form>
   );
@@ -136,6 +134,7 @@ interface CraftFieldsProps {
   readonly values: CraftValues;
   readonly errorAt: (field: string) => string | undefined;
   readonly onChange: (part: Partial<CraftValues>) => void;
+  readonly onCopy?: () => void;
 }
 
 const FIELDS: readonly {
@@ -154,7 +153,7 @@ const FIELDS: readonly {
   { key: 'shortestMin', wire: 'shortestS', label: 'At least, min', most: 1_440 },
 ];
 
-function CraftFields({ name, values, errorAt, onChange }: CraftFieldsProps) {
+function CraftFields({ name, values, errorAt, onChange, onCopy }: CraftFieldsProps) {
   return (
     <fieldset className={classes.craft} style={{ border: 'none', margin: 0 }}>
       <legend>{name}</legend>
@@ -172,6 +171,13 @@ function CraftFields({ name, values, errorAt, onChange }: CraftFieldsProps) {
           />
         ))}
       </div>
+      {onCopy && (
+        <div className={classes.acts}>
+          <Button variant="default" size="xs" onClick={onCopy}>
+            Ask the same for all
+          </Button>
+        </div>
+      )}
     </fieldset>
   );
 }

@@ -69,17 +69,19 @@ export function PlanActs({ plan, outcome, isEdited }: PlanActsProps) {
       )}
       {plan.state === 'draft' && fresh.length > 0 && (
         <>
-          <Checkbox
-            mt="sm"
-            label="I know where the elements are old, and buy all the same"
-            checked={knowsAge}
-            onChange={(event) => setKnowsAge(event.currentTarget.checked)}
-          />
+          {(hold.isError || knowsAge) && (
+            <Checkbox
+              mt="sm"
+              label="Hold passes of old elements too; I know that their times are not sure"
+              checked={knowsAge}
+              onChange={(event) => setKnowsAge(event.currentTarget.checked)}
+            />
+          )}
           <div className={classes.acts}>
             <Button size="md" loading={hold.isPending} disabled={isEdited} onClick={() => hold.mutate()}>
               Hold all {fresh.length} for ten minutes, {sum}
             </Button>
-            <Button variant="outline" color="red" loading={giveUp.isPending} onClick={() => giveUp.mutate()}>
+            <Button variant="outline" color="buoy" loading={giveUp.isPending} onClick={() => giveUp.mutate()}>
               Give the plan up
             </Button>
           </div>
@@ -122,12 +124,15 @@ function HeldPlan({
   return (
     <>
       {problem && <ProblemNotice title="That did not work">{sentenceOf(problem)}</ProblemNotice>}
-      <p className={classes.small}>All contacts are held together; the countdown stands in the tray below.</p>
+      <p className={classes.small}>
+        All contacts are held together. Pay for all of them here; the tray below counts down, and its buttons are for
+        one contact.
+      </p>
       <div className={classes.acts}>
         <Button size="md" loading={pay.isPending} onClick={() => pay.mutate()}>
           Pay {sum} for all
         </Button>
-        <Button variant="outline" color="red" loading={letGo.isPending} onClick={() => letGo.mutate()}>
+        <Button variant="outline" color="buoy" loading={letGo.isPending} onClick={() => letGo.mutate()}>
           Let all go
         </Button>
       </div>

@@ -1,6 +1,7 @@
 /** What was found: the price and its proof, what cannot be met, what holds the price up, and what each spacecraft gets. */
 import { Paper, Table } from '@mantine/core';
 import type { Plan, PlanOutcome } from '@skyberth/shared';
+import { useIsPhone } from '../../lib/use-phone.js';
 import { formatBytes, formatDuration, formatMoney, formatNumber } from '../../ui/format.js';
 import { Figure, Figures } from '../../ui/values.js';
 import classes from './plan.module.css';
@@ -9,11 +10,12 @@ const HOUR_MS = 3_600_000;
 
 export function PlanPrice({ outcome }: { readonly outcome: PlanOutcome }) {
   const { sums, passes, gapPercent, proven, greedyMinor, costMinor, baseCurrency, offered, tookS } = outcome;
+  const isPhone = useIsPhone();
   const fresh = passes.filter((pass) => pass.bookedBefore === null).length;
   const had = passes.length - fresh;
   const saved = greedyMinor === null ? null : greedyMinor - costMinor;
   return (
-    <Figures columns={4}>
+    <Figures columns={isPhone ? 1 : 4}>
       <Figure
         label="New contacts, with VAT"
         size="effect"
@@ -23,20 +25,23 @@ export function PlanPrice({ outcome }: { readonly outcome: PlanOutcome }) {
       <Figure label="Proof" value={proofWords(gapPercent, proven)} note={`from ${formatNumber(offered)} offers`} />
       <Figure
         label="Saved against picking by hand"
-        value={
-          saved === null ? 'it gets stuck' : formatMoney({ amountMinor: Math.max(0, saved), currency: baseCurrency })
-        }
-        note="by taking the cheapest pass that helps, each time"
+        value={savedWords(saved, baseCurrency)}
+        note="that is, taking the cheapest pass that helps, each time"
       />
       <Figure label="Took" value={formatNumber(tookS, 1)} unit="s" />
     </Figures>
   );
 }
 
+function savedWords(savedMinor: number | null, currency: string): string {
+  if (savedMinor === null) return 'By hand it gets stuck';
+  return savedMinor > 0 ? formatMoney({ amountMinor: savedMinor, currency }) : 'Nothing';
+}
+
 function proofWords(gapPercent: number, proven: boolean): string {
   if (!proven) return 'The best that was found in the time';
   if (gapPercent === 0) return 'Proven cheapest';
-  return `At most ${formatNumber(Math.max(0.01, gapPercent), 2)} % above the cheapest`;
+  return `At most ${formatNumber(Math.max(0.01, gapPercent), 2)} % could be saved`;
 }
 
 export function PlanFindings({ outcome }: { readonly outcome: PlanOutcome }) {

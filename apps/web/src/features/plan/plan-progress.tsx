@@ -38,7 +38,7 @@ export function PlanProgressCard({ progress, isStopping, onStop }: PlanProgressC
         {STAGES[stage]}
         <span aria-hidden="true">
           {progress && progress.of > 1 && `, ${progress.done} of ${progress.of} done`}
-          {progress?.gapPercent != null && `, within ${formatNumber(progress.gapPercent, 1)} % of the cheapest`}
+          {progress?.gapPercent != null && `, at most ${formatNumber(progress.gapPercent, 1)} % could still be saved`}
         </span>
       </span>
       <Progress value={BEGINS[stage] + part * STAGE_WIDTH} aria-label="Making the plan" />

@@ -17,6 +17,10 @@ interface PlanTableProps {
   readonly onStrike: (key: string) => void;
 }
 
+/** A station with one antenna often gives it its own name. */
+const placeOf = ({ stationName, antennaName }: PlannedPass): string =>
+  antennaName.startsWith(stationName) ? antennaName : `${stationName}, ${antennaName}`;
+
 export function PlanTable({ passes, keptKeys, struckKeys, canEdit, onKeep, onStrike }: PlanTableProps) {
   return (
     <div className={classes.scroll}>
@@ -42,7 +46,7 @@ export function PlanTable({ passes, keptKeys, struckKeys, canEdit, onKeep, onStr
               </Table.Td>
               <Table.Td>{pass.spacecraftName}</Table.Td>
               <Table.Td>
-                {pass.stationName}, {pass.antennaName}
+                {placeOf(pass)}
                 {pass.need === 'both' && ' (up and down)'}
               </Table.Td>
               <Table.Td ta="right">
@@ -61,22 +65,24 @@ export function PlanTable({ passes, keptKeys, struckKeys, canEdit, onKeep, onStr
               </Table.Td>
               {canEdit && (
                 <Table.Td>
-                  <Checkbox
-                    aria-label={`Keep in ${pass.spacecraftName} at ${pass.aosUtc}`}
-                    disabled={pass.bookedBefore !== null}
-                    checked={keptKeys.includes(pass.key)}
-                    onChange={() => onKeep(pass.key)}
-                  />
+                  {pass.bookedBefore === null && (
+                    <Checkbox
+                      aria-label={`Keep in ${pass.spacecraftName} at ${pass.aosUtc}`}
+                      checked={keptKeys.includes(pass.key)}
+                      onChange={() => onKeep(pass.key)}
+                    />
+                  )}
                 </Table.Td>
               )}
               {canEdit && (
                 <Table.Td>
-                  <Checkbox
-                    aria-label={`Strike out ${pass.spacecraftName} at ${pass.aosUtc}`}
-                    disabled={pass.bookedBefore !== null}
-                    checked={struckKeys.includes(pass.key)}
-                    onChange={() => onStrike(pass.key)}
-                  />
+                  {pass.bookedBefore === null && (
+                    <Checkbox
+                      aria-label={`Strike out ${pass.spacecraftName} at ${pass.aosUtc}`}
+                      checked={struckKeys.includes(pass.key)}
+                      onChange={() => onStrike(pass.key)}
+                    />
+                  )}
                 </Table.Td>
               )}
             </Table.Tr>
