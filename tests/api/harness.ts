@@ -62,7 +62,7 @@ export async function startSkyberth(options: Options = {}): Promise<Skyberth> {
   });
   const clock = new AdjustableClock();
   const app = await createApp(config, { clock, quiet: true });
-  await app.listen(0, '127.0.0.1');
+  await app.listen(config.port, config.host);
   // A busy test leaves connections idle for longer than the usual five seconds, and then uses them again.
   app.getHttpServer().keepAliveTimeout = 60_000;
   const url = `http://127.0.0.1:${(app.getHttpServer().address() as AddressInfo).port}`;
