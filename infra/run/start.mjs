@@ -44,5 +44,6 @@ const signIns = demoSignIns(dataDir);
 if (signIns.length > 0) {
   console.log('\nDemo sign-ins (invented people):');
   for (const one of signIns) console.log(`  ${one.what.padEnd(34)} ${one.email.padEnd(38)} ${one.password}`);
+  console.log('Finance is asked for a code when payouts are let go; npm run demo:code shows the present ones.');
 }
 console.log('\nCtrl-C stops everything.');

@@ -11,6 +11,7 @@ import { buyForThisMinute, reportWhatRuns } from './live.js';
 import { writeToEachOther } from './messages.js';
 import { askForAccount, chargeBack, closeMonths, openMonthlyAccount, payBills } from './money.js';
 import { giveEphemeris } from './own-ephemeris.js';
+import { leaveRunOpen, openPayoutDesk, type PayoutDesk, payOwners } from './payouts.js';
 import { makePlans } from './plans.js';
 import { manTheStations } from './run-sheet.js';
 import { settleIn } from './settle-in.js';
@@ -34,21 +35,26 @@ export interface DemoSignIn {
   readonly what: string;
   readonly email: string;
   readonly password: string;
+  /** Of those who have a second factor: what `npm run demo:code` makes the present code from. */
+  readonly secondFactorSecret?: string;
 }
 
 /** Loads the scenario into an empty data folder; returns who can sign in. */
 export async function loadDemo({ environment, days, say }: DemoSettings): Promise<DemoSignIn[]> {
   const firstDayMs = Math.floor(Date.now() / DAY_MS) * DAY_MS - days * DAY_MS;
   const stage = await Stage.open({ environment, startMs: firstDayMs });
+  let desk: PayoutDesk;
   try {
     const company = await settleIn(stage, say);
     await clearFleet(stage, company);
     await openMonthlyAccount(stage, company);
+    desk = await openPayoutDesk(stage, company);
     const season = new Season(stage, company, new Chance(335));
     season.predictFromMs = Date.now() - PREDICTED_DAYS * DAY_MS;
     for (let day = 0; day < days - 1; day += 1) {
       if (day % 10 === 0) say(`day ${day + 1} of ${days}`);
       await season.day(firstDayMs + day * DAY_MS, day);
+      await payOwners(stage, desk, days - day);
       if (day % DISPUTE_EVERY_DAYS === DISPUTE_EVERY_DAYS - 1)
         await disputeAndDecide(stage, company, Math.floor(day / DISPUTE_EVERY_DAYS));
       if (day % CHARGEBACK_EVERY_DAYS === CHARGEBACK_EVERY_DAYS - 1) {
@@ -75,6 +81,7 @@ export async function loadDemo({ environment, days, say }: DemoSettings): Promis
     await writeToEachOther(stage, company);
     await makeKeys(stage, company);
     await chargeBack(stage, company, null);
+    await leaveRunOpen(stage, desk);
     await askForAccount(stage, company);
     await closeMonths(stage, company);
     await moveSomePasses(stage, company);
@@ -84,15 +91,16 @@ export async function loadDemo({ environment, days, say }: DemoSettings): Promis
   } finally {
     await stage.close();
   }
-  return signIns();
+  return signIns(desk);
 }
 
-function signIns(): DemoSignIn[] {
+function signIns({ first, second }: PayoutDesk): DemoSignIn[] {
   const of = (what: string, email: string) => ({ what, email, password: PASSWORD });
   return [
     ...OPERATORS.map((one) => of(`operator, ${one.name}`, one.people[0]?.email ?? '')),
     ...OWNERS.map((one) => of(`station owner, ${one.name}`, one.people[0]?.email ?? '')),
-    of('finance', STAFF.finance),
+    { ...of('finance', STAFF.finance), secondFactorSecret: first.secret },
+    { ...of('finance, second person', STAFF.secondFinance), secondFactorSecret: second.secret },
     of('admin', STAFF.admin),
   ];
 }

@@ -61,7 +61,7 @@ export async function settleIn(stage: Stage, say: (text: string) => void): Promi
   return { admin, finance, owners, operators, ownerOf };
 }
 
-async function comeByInvitation(stage: Stage, name: string, email: string): Promise<Actor> {
+export async function comeByInvitation(stage: Stage, name: string, email: string): Promise<Actor> {
   const person = actor(name, email);
   await stage.call(null, routes.setPassword, { body: { token: await stage.mailedToken(email), password: PASSWORD } });
   await stage.call(person, routes.signIn, { body: { email, password: PASSWORD } });

@@ -126,4 +126,8 @@ export class Stage {
   }
 }
 
-export const STAFF = { admin: 'ruth@skyberth.example', finance: 'ansel@skyberth.example' } as const;
+export const STAFF = {
+  admin: 'ruth@skyberth.example',
+  finance: 'ansel@skyberth.example',
+  secondFinance: 'noor@skyberth.example',
+} as const;
