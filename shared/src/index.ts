@@ -10,6 +10,7 @@ export * from './contracts/credit.js';
 export * from './contracts/disputes.js';
 export * from './contracts/drift.js';
 export * from './contracts/ephemerides.js';
+export * from './contracts/feeds.js';
 export * from './contracts/files.js';
 export * from './contracts/groups.js';
 export * from './contracts/invoices.js';

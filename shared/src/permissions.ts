@@ -30,6 +30,8 @@ export const PERMISSIONS = {
   'organisation.manage': { operator: MANAGERS, owner: MANAGERS },
   'api-keys.make': { operator: MANAGERS, owner: MANAGERS },
   'api-keys.revoke': { operator: MANAGERS, owner: MANAGERS },
+  'calendar-feeds.make': { operator: ALL, owner: ALL },
+  'calendar-feeds.revoke': { operator: ALL, owner: ALL },
   'members.manage': { operator: MANAGERS, owner: MANAGERS, staff: ['admin'] },
   'spacecraft.read': { operator: ALL },
   'spacecraft.write': { operator: WORKERS },

@@ -8,6 +8,7 @@ import { creditRoutes } from './contracts/credit.js';
 import { disputeRoutes } from './contracts/disputes.js';
 import { driftRoutes } from './contracts/drift.js';
 import { ephemerisRoutes } from './contracts/ephemerides.js';
+import { feedRoutes } from './contracts/feeds.js';
 import { fileRoutes } from './contracts/files.js';
 import { groupRoutes } from './contracts/groups.js';
 import { invoiceRoutes } from './contracts/invoices.js';
@@ -57,5 +58,6 @@ export const routes = {
   ...oversightRoutes,
   ...systemRoutes,
   ...apiKeyRoutes,
+  ...feedRoutes,
 } as const;
 export type RouteName = keyof typeof routes;

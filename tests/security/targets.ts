@@ -44,9 +44,11 @@ export async function makeTargets(skyberth: Skyberth): Promise<Targets> {
   const line = addGroupAndPlace(skyberth, { operator, antennaId: antenna.id, spacecraftId: spacecraft });
   const keyBody = { name: 'Console', scopes: ['bookings.read' as const] };
   const { apiKey } = await must(call(routes.makeApiKey, { body: keyBody, as: operator }));
+  const { feed } = await must(call(routes.makeCalendarFeed, { body: {}, as: operator }));
   return {
     ...line,
     apiKey: apiKey.id,
+    feed: feed.id,
     dispute,
     plan: plan.id,
     spacecraft,

@@ -27,6 +27,7 @@ export interface Targets {
   readonly place: string;
   readonly plan: string;
   readonly apiKey: string;
+  readonly feed: string;
 }
 
 /** Targets that do not exist. */
@@ -47,6 +48,7 @@ export const nowhere = (): Targets => ({
   place: randomUUID(),
   plan: randomUUID(),
   apiKey: randomUUID(),
+  feed: randomUUID(),
 });
 
 const ADDRESS = { line1: 'Quay 1', postalCode: '1', city: 'Porto Novo', country: 'DE' };
@@ -231,6 +233,9 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     listAudit: {},
     makeApiKey: { body: { name: 'Console', scopes: ['bookings.read'] } },
     revokeApiKey: { params: { id: to.apiKey } },
+    makeCalendarFeed: { body: {} },
+    revokeCalendarFeed: { params: { id: to.feed } },
+    readCalendarFeed: { params: { token: 'made-up-and-long-enough' } },
     listPayoutRuns: {},
     getPayoutRun: { params: { id: randomUUID() } },
     preparePayoutRun: { body: { currency: 'XAF' } },

@@ -4,6 +4,7 @@ import { AccountsModule } from './accounts/accounts.module.js';
 import { ApiKeysModule } from './api-keys/api-keys.module.js';
 import { AvailabilityModule } from './availability/availability.module.js';
 import { BookingsModule } from './bookings/bookings.module.js';
+import { CalendarFeedsModule } from './calendar-feeds/calendar-feeds.module.js';
 import { ClearancesModule } from './clearances/clearances.module.js';
 import { CreditModule } from './credit/credit.module.js';
 import { DisputesModule } from './disputes/disputes.module.js';
@@ -48,6 +49,7 @@ export class AppModule {
         StationsModule,
         AvailabilityModule,
         BookingsModule,
+        CalendarFeedsModule,
         StandbyModule,
         LiveModule,
         RunSheetModule,

@@ -2,6 +2,7 @@ export * from './accounts.js';
 export * from './api-keys.js';
 export * from './availability.js';
 export * from './bookings.js';
+export * from './calendar-feeds.js';
 export * from './clearances.js';
 export * from './credit.js';
 export * from './disputes.js';

@@ -1,12 +1,12 @@
 /** Makes the files of a booked contact, for the station's antenna control and for calendars. */
 import { Inject, Injectable } from '@nestjs/common';
 import { icalendar } from '@skyberth/orbit';
-import type { bookingRoutes, Need } from '@skyberth/shared';
+import type { bookingRoutes } from '@skyberth/shared';
 import type { z } from 'zod';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
 import { CONFIG, type Config } from '../platform/config.js';
 import { DomainError } from '../platform/domain-error.js';
-import { MOVING_DISH, TRANSMITTING } from './cautions.js';
+import { CALENDAR_PRODUCT, contactEvent } from './contact-event.js';
 import { MarketRepository } from './market.repository.js';
 import type { BookedContact } from './market.service.js';
 import { MarketInputs } from './market-inputs.js';
@@ -80,28 +80,10 @@ export class ContactFiles {
   private calendar(booking: FiledContact): string {
     const { craft, sale } = this.parties(booking);
     const summary = `${craft.name} over ${sale.name}`;
-    const cautions = needsTransmitter(booking.need) ? [TRANSMITTING, MOVING_DISH] : [MOVING_DISH];
-    return icalendar(
-      [
-        {
-          uid: `contact-${booking.id}@skyberth.example`,
-          stampMs: this.clock.nowMs(),
-          startMs: booking.aosMs,
-          endMs: booking.losMs,
-          summary,
-          description: [
-            `Booking ${booking.number}. AOS and LOS are kept to the second here; the contact page has them exactly.`,
-            ...cautions.map(({ title, text }) => `${title}. ${text}`),
-          ].join('\n'),
-          location: sale.stationName,
-          place: sale.site,
-          url: `${this.config.publicUrl}/bookings/${booking.id}`,
-          status: calendarStatus(booking.state),
-          sequence: Math.floor(booking.changedMs / 1000),
-        },
-      ],
-      { name: summary, productId: '-//Skyberth//Contacts//EN' },
-    );
+    const { stationName, site } = sale;
+    const { publicUrl } = this.config;
+    const event = contactEvent(booking, { summary, stationName, site, publicUrl, stampMs: this.clock.nowMs() });
+    return icalendar([event], { name: summary, productId: CALENDAR_PRODUCT });
   }
 
   private parties(booking: FiledContact) {
@@ -112,14 +94,4 @@ export class ContactFiles {
     if (craft === undefined || antenna === undefined) throw new Error('What was found must be among the answers.');
     return { craft, sale, antenna };
   }
-}
-
-const needsTransmitter = (need: Need): boolean => need !== 'downlink';
-
-const GONE = new Set(['cancelled', 'declined', 'lapsed']);
-const OPEN = new Set(['held', 'awaiting owner']);
-
-function calendarStatus(state: string): 'TENTATIVE' | 'CONFIRMED' | 'CANCELLED' {
-  if (GONE.has(state)) return 'CANCELLED';
-  return OPEN.has(state) ? 'TENTATIVE' : 'CONFIRMED';
 }

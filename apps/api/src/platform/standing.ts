@@ -10,6 +10,7 @@ import { DATABASE } from './database.module.js';
 export const KEPT_WHEN_SUSPENDED: readonly Permission[] = [
   'bookings.report',
   'api-keys.revoke',
+  'calendar-feeds.revoke',
 ];
 
 @Injectable()

@@ -12,6 +12,7 @@ import { PageTitle } from '../../ui/page-title.js';
 import { BOOKING_STATE_BADGES } from '../../ui/state-badge.js';
 import classes from './bookings.module.css';
 import { BookingsList } from './bookings-list.js';
+import { CalendarAddress } from './calendar-address.js';
 import { DEFAULT_LIST_FILTER, type ListFilter, readListFilter, type When, writeListFilter } from './list-filter.js';
 
 const BookingsCalendar = lazy(() => import('./bookings-calendar.js'));
@@ -56,6 +57,7 @@ export function BookingsPage() {
           <BookingsCalendar filter={filter} nowMs={nowMs} onChange={change} />
         </Suspense>
       )}
+      <CalendarAddress />
     </>
   );
 }
