@@ -110,6 +110,30 @@ describe('the list of bookings', () => {
   });
 });
 
+describe('the list as a file', () => {
+  const file = async (query: string, as: Person) => {
+    const path = `${routes.exportBookings.path}${query}`;
+    const answer = await fetch(shop.skyberth.url + path, { headers: { Cookie: as.jar.header(path) } });
+    return { answer, lines: (await answer.text()).trim().split('\r\n') };
+  };
+
+  it('has every booking of the list once, under the same filter, and nothing for a stranger', async () => {
+    const { answer, lines } = await file('', shop.operator);
+    expect(answer.headers.get('content-type')).toContain('text/csv');
+    expect(lines[0]).toMatch(/^berth,state,spacecraft,/);
+    const { items, total } = await must(call(routes.listBookings, { query: { pageSize: 200 }, as: shop.operator }));
+    expect(lines.slice(1).map((text) => Number(text.split(',')[0]))).toEqual(items.map(({ number }) => number));
+    expect(lines.length).toBe(total + 1);
+    const [first] = items;
+    expect(lines[1]).toContain(`,${first?.aosUtc},`);
+    expect(lines[1]?.endsWith(`,EUR,${((first?.toPayMinor ?? 0) / 100).toFixed(2)}`)).toBe(true);
+    const cancelled = await file('?state=cancelled', shop.operator);
+    expect(cancelled.lines.slice(1).every((text) => text.split(',')[1] === 'cancelled')).toBe(true);
+    expect((await file('', await shop.skyberth.people.operator())).lines.length).toBe(1);
+    expect((await file('?state=sold', shop.operator)).answer.status).toBe(400);
+  });
+});
+
 describe('a contact that is paid for', () => {
   it('is confirmed, told to both sides, and shows its track and files to both', async () => {
     const booking = await shop.buy(nextPass());

@@ -166,6 +166,7 @@ export function wishes(to: Targets): Partial<Record<RouteName, Wish>> {
     searchPasses: { body: { spacecraftIds: [to.spacecraft], fromUtc: FROM, toUtc: TO } },
     passDetail: { body: berth },
     listBookings: {},
+    exportBookings: {},
     getBooking: { params: booking },
     bookingGeometry: { params: booking },
     bookingFile: { params: { ...booking, file: 'pointing.csv' } },

@@ -100,6 +100,16 @@ export const CheckoutResult = z.discriminatedUnion('kind', [
 
 export const SavedCard = z.object({ id: z.string(), brand: z.string(), last4: z.string(), expires: z.string() });
 
+const bookingFilter = {
+  fromUtc: UtcTime.optional(),
+  toUtc: UtcTime.optional(),
+  state: z.string().max(200).optional().describe('states separated by commas'),
+  spacecraftId: Id.optional(),
+  antennaId: Id.optional(),
+  number: z.coerce.number().int().min(0).max(999_999_999).optional(),
+  sort: z.enum(['aos', '-aos', 'number', '-number']).default('aos'),
+};
+
 const tag = 'bookings';
 const oneBooking = { tag, params: IdParams, response: Booking } as const;
 export const bookingRoutes = {
@@ -111,16 +121,19 @@ export const bookingRoutes = {
     tag,
     access: 'bookings.read',
     data: 'parties',
-    query: PageQuery.extend({
-      fromUtc: UtcTime.optional(),
-      toUtc: UtcTime.optional(),
-      state: z.string().max(200).optional().describe('states separated by commas'),
-      spacecraftId: Id.optional(),
-      antennaId: Id.optional(),
-      number: z.coerce.number().int().min(0).max(999_999_999).optional(),
-      sort: z.enum(['aos', '-aos', 'number', '-number']).default('aos'),
-    }),
+    query: PageQuery.extend(bookingFilter),
     response: pageOf(BookingSummary),
+  }),
+  exportBookings: defineRoute({
+    name: 'exportBookings',
+    method: 'GET',
+    path: '/api/bookings-list.csv',
+    summary: 'The same list in full, as CSV (RFC 4180)',
+    tag,
+    access: 'bookings.read',
+    data: 'parties',
+    query: z.object(bookingFilter),
+    produces: 'text/csv; charset=utf-8',
   }),
   getBooking: defineRoute({
     ...oneBooking,

@@ -1,4 +1,5 @@
 /** Translates between HTTP and bookings. */
+import { Readable } from 'node:stream';
 import { Controller, Res, StreamableFile } from '@nestjs/common';
 import { type Booking, type ResponseOf, routes } from '@skyberth/shared';
 import type { Response } from 'express';
@@ -16,6 +17,14 @@ export class BookingsController {
   @Handles(routes.listBookings)
   list(@Input() input: HandlerInput<typeof routes.listBookings>): ResponseOf<typeof routes.listBookings> {
     return this.bookings.list(input.caller, input.query);
+  }
+
+  @Handles(routes.exportBookings)
+  export(@Input() input: HandlerInput<typeof routes.exportBookings>): StreamableFile {
+    return new StreamableFile(Readable.from(this.bookings.csvOf(input.caller, input.query), { objectMode: false }), {
+      type: 'text/csv; charset=utf-8',
+      disposition: 'attachment; filename="bookings.csv"',
+    });
   }
 
   @Handles(routes.getBooking)

@@ -12,18 +12,22 @@ import {
 } from '@skyberth/shared';
 import { refundOf } from '../invoices/invoice-amounts.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
+import { line } from '../platform/csv.js';
 import { DATABASE } from '../platform/database.module.js';
 import { DomainError } from '../platform/domain-error.js';
 import { type Db, write } from '../platform/transaction.js';
+import { BOOKING_COLUMNS, bookingCells } from './booking-csv.js';
 import { BookingEnding } from './booking-ending.service.js';
 import { BookingGroupRepository } from './booking-groups.repository.js';
-import { BookingListRepository } from './booking-list.repository.js';
+import { BookingListRepository, type BookingQuery } from './booking-list.repository.js';
 import { BookingSale } from './booking-sale.service.js';
 import { answerDueMs, BookingViews, mayCancel, sideOf, summaryOf } from './booking-views.js';
 import { moneyText } from './booking-words.js';
 import { BookingRepository, type BookingRow } from './bookings.repository.js';
 import { HoldService } from './hold.service.js';
 import { cancelPercent } from './refund-terms.js';
+
+const EXPORT_CHUNK = 500;
 
 @Injectable()
 export class BookingsService {
@@ -40,19 +44,24 @@ export class BookingsService {
   ) {}
 
   list(caller: Principal, query: QueryOf<typeof routes.listBookings>): ResponseOf<typeof routes.listBookings> {
-    const { page, pageSize, sort } = query;
-    const { rows, total } = this.lists.page(caller, {
-      fromMs: query.fromUtc === undefined ? null : Date.parse(query.fromUtc),
-      toMs: query.toUtc === undefined ? null : Date.parse(query.toUtc),
-      states: statesOf(query.state),
-      spacecraftId: query.spacecraftId ?? null,
-      antennaId: query.antennaId ?? null,
-      number: query.number ?? null,
-      sort,
-      page,
-      pageSize,
-    });
+    const { page, pageSize } = query;
+    const { rows, total } = this.lists.page(caller, { ...filterOf(query), page, pageSize });
     return { items: rows.map(({ booking, names }) => summaryOf(booking, names)), total, page, pageSize };
+  }
+
+  /** Lines of the whole list as a file, a page of rows at a time, however long it is. */
+  csvOf(caller: Principal, query: QueryOf<typeof routes.exportBookings>): Generator<string> {
+    // Judged before the first line is sent: afterwards a refusal could only break the file off.
+    return this.csvLines(caller, filterOf(query));
+  }
+
+  private *csvLines(caller: Principal, filter: ReturnType<typeof filterOf>): Generator<string> {
+    yield line(BOOKING_COLUMNS);
+    for (let page = 1; ; page += 1) {
+      const { rows } = this.lists.page(caller, { ...filter, page, pageSize: EXPORT_CHUNK });
+      for (const { booking, names } of rows) yield line(bookingCells(summaryOf(booking, names)));
+      if (rows.length < EXPORT_CHUNK) return;
+    }
   }
 
   get(caller: Principal, bookingId: string): Booking {
@@ -153,4 +162,17 @@ function statesOf(text: string | undefined): BookingState[] {
       ]);
     return state.data;
   });
+}
+
+/** The part of a list's question that is about bookings, and not about pages. */
+function filterOf(query: QueryOf<typeof routes.exportBookings>): Omit<BookingQuery, 'page' | 'pageSize'> {
+  return {
+    fromMs: query.fromUtc === undefined ? null : Date.parse(query.fromUtc),
+    toMs: query.toUtc === undefined ? null : Date.parse(query.toUtc),
+    states: statesOf(query.state),
+    spacecraftId: query.spacecraftId ?? null,
+    antennaId: query.antennaId ?? null,
+    number: query.number ?? null,
+    sort: query.sort,
+  };
 }

@@ -1,13 +1,13 @@
 /** What accounting software takes over: journal, trial balance and VAT summary of a month as CSV (RFC 4180). */
 import { Inject, Injectable } from '@nestjs/common';
 import { invoices, journalEntries, journalPostings, organisations, type SkyberthDatabase } from '@skyberth/drizzle';
-import { currencyExponent, monthSpan } from '@skyberth/money';
+import { monthSpan } from '@skyberth/money';
 import { and, asc, count, eq, gte, lt, sql, sum } from 'drizzle-orm';
+import { type Cell, decimals, line } from '../platform/csv.js';
 import { DATABASE } from '../platform/database.module.js';
 import { LedgerRepository } from './ledger.repository.js';
 import { trialBalance } from './trial-balance.js';
 
-type Cell = string | number | null;
 const JOURNAL_CHUNK = 2_000;
 
 @Injectable()
@@ -112,22 +112,3 @@ export class LedgerFiles {
 
 const sides = (minor: number, currency: string): Cell[] =>
   minor > 0 ? [decimals(minor, currency), ''] : ['', decimals(-minor, currency)];
-
-/** `1234.50`, with as many decimals as the currency has. */
-export function decimals(minor: number, currency: string): string {
-  const exponent = currencyExponent(currency);
-  const digits = String(Math.abs(minor)).padStart(exponent + 1, '0');
-  const whole = digits.slice(0, digits.length - exponent);
-  return `${minor < 0 ? '-' : ''}${whole}${exponent === 0 ? '' : `.${digits.slice(-exponent)}`}`;
-}
-
-/** A text that begins like a formula is kept from being one when a spreadsheet opens the file. */
-export function line(cells: readonly Cell[]): string {
-  const texts = cells.map((cell) => {
-    if (typeof cell === 'number') return String(cell);
-    const text = cell ?? '';
-    const safe = /^[=+@\t\r]|^-(?!\d)/.test(text) ? `'${text}` : text;
-    return /[",\r\n]/.test(safe) ? `"${safe.replaceAll('"', '""')}"` : safe;
-  });
-  return `${texts.join(',')}\r\n`;
-}

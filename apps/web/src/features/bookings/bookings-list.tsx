@@ -13,7 +13,7 @@ import { Pager } from '../../ui/pager.js';
 import { ProblemNotice } from '../../ui/problem-notice.js';
 import { Degrees, Duration, MoneyText } from '../../ui/values.js';
 import classes from './bookings.module.css';
-import { type ListFilter, listQuery, PAGE_SIZE } from './list-filter.js';
+import { exportAddress, type ListFilter, listQuery, PAGE_SIZE } from './list-filter.js';
 
 export interface BookingsViewProps {
   readonly filter: ListFilter;
@@ -66,6 +66,9 @@ export function BookingsList({ filter, nowMs, onChange }: BookingsViewProps) {
         <span role="status">
           {data.total} {data.total === 1 ? 'booking' : 'bookings'}
         </span>
+        <Anchor href={exportAddress(filter, nowMs)} download="bookings.csv">
+          All of them as CSV
+        </Anchor>
         <Pager pages={pages} page={filter.page} onChange={(page) => onChange({ page })} />
       </div>
     </>

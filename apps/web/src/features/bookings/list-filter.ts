@@ -1,5 +1,5 @@
 /** The filter of the bookings page, as the address holds it and as the API takes it. Pure. */
-import { BOOKING_STATES, type BookingState } from '@skyberth/shared';
+import { BOOKING_STATES, type BookingState, routes } from '@skyberth/shared';
 import type { BookingFilter } from '../../lib/booking-queries.js';
 
 export const WHENS = ['coming', 'past', 'all'] as const;
@@ -63,6 +63,13 @@ export function listQuery(filter: ListFilter, nowMs: number): BookingFilter {
     ...(filter.when === 'coming' ? { fromUtc: nowUtc, sort: 'aos' as const } : { sort: '-aos' as const }),
     ...(filter.when === 'past' ? { toUtc: nowUtc } : {}),
   };
+}
+
+/** Where the whole list under this filter is read as a file. */
+export function exportAddress(filter: ListFilter, nowMs: number): string {
+  const { page: _page, pageSize: _size, ...query } = listQuery(filter, nowMs);
+  const words = Object.entries(query).flatMap(([name, value]) => (value === undefined ? [] : [[name, String(value)]]));
+  return `${routes.exportBookings.path}?${new URLSearchParams(words)}`;
 }
 
 /** The six weeks around the shown month, so that the days of its neighbours are filled too. */
