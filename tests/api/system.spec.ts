@@ -101,14 +101,14 @@ describe('home', () => {
     await must(skyberth.call(routes.submitStation, { params: { id: draft.id }, as: owner }));
 
     const forOwner = await must(skyberth.call(routes.home, { as: owner }));
-    expect(forOwner.counts).toEqual({ requests: 1 });
+    expect(forOwner.counts).toEqual({ requests: 1, messages: 0 });
     expect(forOwner.waiting.map((each) => each.kind).sort()).toEqual(['contact', 'report', 'request']);
     const forOperator = await must(skyberth.call(routes.home, { as: operator }));
     expect(forOperator.waiting).toMatchObject([
       { kind: 'contact', path: `/bookings/${confirmed.booking}`, urgent: false },
     ]);
     const forAdmin = await must(skyberth.call(routes.home, { as: admin }));
-    expect(forAdmin.counts).toEqual({ approvals: 1, disputes: 0 });
+    expect(forAdmin.counts).toEqual({ approvals: 1, disputes: 0, messages: 0 });
     expect(forAdmin.waiting.map((each) => each.sentence)).toContainEqual(expect.stringContaining('Second rock'));
     const stranger = await skyberth.people.owner();
     const empty = await must(skyberth.call(routes.home, { as: stranger }));

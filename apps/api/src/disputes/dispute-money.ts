@@ -54,16 +54,16 @@ export class DisputeMoney {
 
   /** Throws `wrong-state` where nothing was or will be charged, or all of it is given back, so that there is nothing to dispute. */
   checkCharged(tx: Db, booking: BookingRow): void {
-    const invoice = this.invoices.ofBooking(booking.id);
-    const credit = this.invoices.creditOfBooking(tx, booking.id);
-    if (invoice && credit && invoice.grossMinor + credit.grossMinor <= 0) {
-      throw new DomainError('wrong-state', `All that was charged for berth ${booking.number} is given back already.`);
+    if (booking.state !== 'reporting' && !this.ledger.has(tx, `sale:${booking.id}`)) {
+      throw new DomainError(
+        'wrong-state',
+        `Nothing was charged for berth ${booking.number}, so there is nothing to give back.`,
+      );
     }
-    if (booking.state === 'reporting' || this.ledger.has(tx, `sale:${booking.id}`)) return;
-    throw new DomainError(
-      'wrong-state',
-      `Nothing was charged for berth ${booking.number}, so there is nothing to give back.`,
-    );
+    // Such as after a lost chargeback. Where there is no invoice yet, nothing can have been credited.
+    const leftMinor = this.invoices.leftMinor(tx, booking.id);
+    if (leftMinor === null || leftMinor > 0) return;
+    throw new DomainError('wrong-state', `All that was charged for berth ${booking.number} is given back already.`);
   }
 
   /**

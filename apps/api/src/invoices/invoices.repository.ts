@@ -2,7 +2,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { bookings, invoices, organisations, type SkyberthDatabase } from '@skyberth/drizzle';
 import type { Principal } from '@skyberth/shared';
-import { and, count, desc, eq, max, type SQL } from 'drizzle-orm';
+import { and, count, desc, eq, max, type SQL, sql } from 'drizzle-orm';
 import { DATABASE } from '../platform/database.module.js';
 import { notFound } from '../platform/domain-error.js';
 import type { Db } from '../platform/transaction.js';
@@ -34,6 +34,16 @@ export class InvoiceRepository {
       .from(invoices)
       .where(and(eq(invoices.bookingId, bookingId), eq(invoices.kind, kind)))
       .get();
+  }
+
+  /** Invoice and credit notes of a booking together, VAT included. */
+  sumOf(tx: Db, bookingId: string): number {
+    const row = tx
+      .select({ minor: sql<number>`coalesce(sum(${invoices.grossMinor}), 0)` })
+      .from(invoices)
+      .where(eq(invoices.bookingId, bookingId))
+      .get();
+    return row?.minor ?? 0;
   }
 
   /** For the mail that carries it; who may read it was decided when the mail was queued. */

@@ -97,6 +97,11 @@ export class InvoiceService implements OnModuleInit {
     return this.repository.ofBooking(bookingId, 'invoice');
   }
 
+  /** What a booking's invoice comes to after all its credit notes, VAT included; null where it has none. */
+  leftMinor(tx: Db, bookingId: string): number | null {
+    return this.repository.ofBooking(bookingId, 'invoice', tx) ? this.repository.sumOf(tx, bookingId) : null;
+  }
+
   creditOfBooking(tx: Db, bookingId: string): InvoiceRow | undefined {
     return this.repository.ofBooking(bookingId, 'credit note', tx);
   }
