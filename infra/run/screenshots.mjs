@@ -22,7 +22,12 @@ const SHOTS = [
   { name: 'bookings', as: 'operator', path: '/bookings', size: DESKTOP },
   { name: 'contact', as: 'operator', path: '/bookings', size: DESKTOP, open: openFirstBooking },
   { name: 'antenna', as: 'station owner', path: '/stations', size: DESKTOP, open: openFirstMask },
+  { name: 'home', as: 'operator', path: '/', size: DESKTOP },
+  { name: 'plan', as: 'operator', path: '/plan', size: DESKTOP, open: openFirstPlan },
+  { name: 'run-sheet', as: 'station owner', path: '/run-sheet', size: DESKTOP },
+  { name: 'payouts', as: 'finance', path: '/payouts', size: DESKTOP },
   { name: 'ledger', as: 'finance', path: '/ledger', size: DESKTOP },
+  { name: 'dispute', as: 'admin', path: '/disputes', size: DESKTOP, open: openBrokenOff },
 ];
 
 async function pickFirst(page) {
@@ -37,6 +42,19 @@ async function pickFirst(page) {
 }
 async function openFirstBooking(page) {
   await page.locator('main table a').first().click();
+  await page.waitForLoadState('networkidle');
+}
+async function openFirstPlan(page) {
+  await page.locator('main a[href^="/plan/"]').first().click();
+  await page.waitForLoadState('networkidle');
+}
+/** The dispute with a gap in it, which shows the most; else the first. */
+async function openBrokenOff(page) {
+  const rows = page.locator('main tbody tr');
+  const brokenOff = rows.filter({ hasText: 'The signal broke off' });
+  const row = (await brokenOff.count()) > 0 ? brokenOff.first() : rows.first();
+  await row.getByRole('link').first().click();
+  await page.getByRole('heading', { name: 'Geometry' }).waitFor();
   await page.waitForLoadState('networkidle');
 }
 async function openFirstMask(page) {

@@ -108,7 +108,7 @@ describe('home', () => {
       { kind: 'contact', path: `/bookings/${confirmed.booking}`, urgent: false },
     ]);
     const forAdmin = await must(skyberth.call(routes.home, { as: admin }));
-    expect(forAdmin.counts).toEqual({ approvals: 1, disputes: 0, messages: 0 });
+    expect(forAdmin.counts).toEqual({ approvals: 1, disputes: 0 });
     expect(forAdmin.waiting.map((each) => each.sentence)).toContainEqual(expect.stringContaining('Second rock'));
     const stranger = await skyberth.people.owner();
     const empty = await must(skyberth.call(routes.home, { as: stranger }));

@@ -47,6 +47,7 @@ export class MessagesService implements OnModuleInit {
     return {
       items: rows.map(({ operatorName, ownerName, aosMs, lastMs, ...row }) => ({
         ...row,
+        newCount: side === 'admin' ? 0 : row.newCount,
         otherName: { operator: ownerName, owner: operatorName, admin: `${operatorName} and ${ownerName}` }[side],
         aosUtc: utc(aosMs),
         lastUtc: utc(lastMs),
@@ -73,7 +74,7 @@ export class MessagesService implements OnModuleInit {
         atUtc: utc(row.atMs),
         text: row.text,
         files: files.get(row.id) ?? [],
-        isNew: row.side !== sideOf(caller) && row.seq > read,
+        isNew: caller.organisationKind !== 'staff' && row.side !== sideOf(caller) && row.seq > read,
       })),
     };
   }
