@@ -7,6 +7,7 @@ import { pick, seen } from './harness/fields.js';
 import { ADMIN_EMAIL, type Harbour, startHarbour } from './harness/harbour.js';
 import * as buying from './harness/operator-desk.js';
 import * as selling from './harness/owner-desk.js';
+import { goToPage } from './harness/pages.js';
 import { pdfText } from './harness/pdf.js';
 import { comeByInvitation, type Newcomer, signIn, signUp } from './harness/people.js';
 import { bookingIdIn, bookingOf, tryToHold } from './harness/records.js';
@@ -143,7 +144,7 @@ describe('from an empty marketplace to a sold contact', () => {
       buying.seeInBookings(page, booking),
     );
     await step('the operator opens the invoice', operator, async () => {
-      await page.getByRole('navigation').getByRole('link', { name: 'Invoices' }).click();
+      await goToPage(page, 'Invoices');
       await page.getByRole('link', { name: booking.invoiceNumber ?? 'no number' }).click();
       await seen(page.getByRole('heading', { level: 1, name: `Invoice ${booking.invoiceNumber}` }));
       await seen(page.getByRole('row', { name: /^Total/ }).getByText(price));
@@ -177,7 +178,7 @@ describe('from an empty marketplace to a sold contact', () => {
     const { number } = await bookingOf(operator.context, harbour.url, id);
     await step('the owner sees the booking', owner, async () => {
       const { page } = owner;
-      await page.getByRole('navigation').getByRole('link', { name: 'Bookings' }).click();
+      await goToPage(page, 'Bookings');
       const row = page.getByRole('row').filter({ hasText: OPERATOR.organisation });
       await seen(row.getByText('Confirmed'));
       await row.getByRole('link', { name: String(number), exact: true }).click();

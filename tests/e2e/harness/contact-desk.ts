@@ -2,6 +2,7 @@
 import type { Booking, Dispute } from '@skyberth/shared';
 import type { Locator, Page } from 'playwright-core';
 import { choose, fill, pick, press, seen } from './fields.js';
+import { goToPage } from './pages.js';
 
 /** `14:07:12`, as forms take the times of a contact and as figures show them. */
 export const clockText = (timeMs: number): string => new Date(timeMs).toISOString().slice(11, 19);
@@ -84,7 +85,7 @@ export async function answerDispute(page: Page, words: string): Promise<void> {
 
 /** From anywhere to the dispute, by the list of those that wait. */
 export async function findDispute(page: Page, { number }: Pick<Dispute, 'number'>): Promise<void> {
-  await page.getByRole('navigation').getByRole('link', { name: 'Disputes' }).click();
+  await goToPage(page, 'Disputes');
   await page.getByRole('link', { name: String(number), exact: true }).click();
   await seen(page.getByRole('heading', { name: 'Your decision' }));
 }

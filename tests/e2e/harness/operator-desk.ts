@@ -2,6 +2,7 @@
 import type { Booking } from '@skyberth/shared';
 import type { Locator, Page } from 'playwright-core';
 import { choose, fill, pick, press, seen, textBox } from './fields.js';
+import { goToPage } from './pages.js';
 
 /** Pastes as a person does, through the clipboard; the page then reads the text by itself. */
 export async function pasteElements(page: Page, text: string): Promise<void> {
@@ -38,7 +39,7 @@ export async function addDownlinkRadio(page: Page, spacecraft: string): Promise<
 
 /** Opens the search and waits for its answer. */
 export async function findTime(page: Page): Promise<void> {
-  await page.getByRole('navigation').getByRole('link', { name: 'Find time' }).click();
+  await goToPage(page, 'Find time');
   await seen(page.getByRole('status').filter({ hasText: /for sale of \d+ pass/ }));
 }
 
@@ -66,7 +67,7 @@ export async function holdPass(page: Page): Promise<string> {
 
 /** What the page shows of a contact that was paid for, in the list and in the calendar. */
 export async function seeInBookings(page: Page, booking: Pick<Booking, 'number' | 'aosUtc' | 'antennaName'>) {
-  await page.getByRole('navigation').getByRole('link', { name: 'Bookings' }).click();
+  await goToPage(page, 'Bookings');
   const row = page
     .getByRole('row')
     .filter({ has: page.getByRole('link', { name: String(booking.number), exact: true }) });
