@@ -37,6 +37,6 @@ import { SignUpService } from './sign-up.service.js';
     SessionsService,
     SignUpService,
   ],
-  exports: [SecondFactorService, OrganisationService],
+  exports: [SecondFactorService, OrganisationService, OrganisationsRepository],
 })
 export class AccountsModule {}

@@ -87,6 +87,17 @@ export class OrganisationsRepository {
       .run();
   }
 
+  /** Who must hear what happens to the organisation and to what it owns. */
+  managerEmails(db: Db, organisationId: string): string[] {
+    return db
+      .select({ email: people.email })
+      .from(memberships)
+      .innerJoin(people, eq(people.id, memberships.personId))
+      .where(and(eq(memberships.organisationId, organisationId), eq(memberships.role, 'manager')))
+      .all()
+      .map((row) => row.email);
+  }
+
   /** Managers who can sign in, this person not counted: an invited one may never come. */
   othersWithRole(tx: Db, organisationId: string, { personId, role }: { personId: string; role: Role }): number {
     const row = tx

@@ -68,19 +68,18 @@ export class DisputeMoney {
 
   /**
    * Charges what is not charged yet, since a reservation on a card would not outlast the dispute, and sets the owner's
-   * earnings of it aside. Answers how much that is.
+   * earnings of it aside.
    */
-  hold(tx: Db, booking: BookingRow, disputeId: string): number {
+  hold(tx: Db, booking: BookingRow, disputeId: string): void {
     const sale = `sale:${booking.id}`;
     if (!this.ledger.has(tx, sale)) {
       this.bookingMoney.settle(tx, booking, { refundPercent: 0, reason: 'charged and set aside for a dispute' });
     }
-    const earned = this.earnedMinor(tx, booking);
+    const earned = lossOf(this.share(tx, booking, 10_000));
     if (earned > 0) {
       const head = this.head(booking, `dispute-reserve:${disputeId}`, 'earnings set aside for a dispute');
       this.ledger.post(tx, reserveEntry(head, { ownerId: booking.ownerId, amountMinor: earned }), booking.id);
     }
-    return earned;
   }
 
   /** What the ruling would book, in words, beyond the one before it. */
@@ -187,11 +186,6 @@ export class DisputeMoney {
       feeMinor: percentOf(this.ledger.creditedMinor(tx, `fee:${booking.id}`, 'marketplace fee'), basisPoints),
       feeVatMinor: percentOf(this.ledger.creditedMinor(tx, `fee:${booking.id}`, 'VAT'), basisPoints),
     };
-  }
-
-  private earnedMinor(tx: Db, booking: BookingRow): number {
-    const whole = this.share(tx, booking, 10_000);
-    return Math.max(0, lossOf(whole));
   }
 
   private head(booking: BookingRow, causeKey: string, reason: string) {

@@ -1,6 +1,6 @@
 /** Mails about a dispute, to both sides. */
 import { Injectable } from '@nestjs/common';
-import { BookingNotices, contactName } from '../bookings/booking-notices.js';
+import { BookingNotices, contactName, type Notice } from '../bookings/booking-notices.js';
 import { pdfOf } from '../bookings/booking-sale.service.js';
 import { moneyText, utcText } from '../bookings/booking-words.js';
 import type { BookingRow } from '../bookings/bookings.repository.js';
@@ -41,13 +41,11 @@ export class DisputeNotices {
     what: { dispute: DisputeRow; side: 'operator' | 'owner'; id: string; text: string },
   ): void {
     const { dispute, side, id, text } = what;
-    const notice = {
+    this.toSide(tx, booking, side === 'operator' ? 'owner' : 'operator', {
       kind: `dispute statement:${id}`,
       subject: `Dispute ${dispute.number}: a new statement`,
       sentences: [`${side === 'operator' ? 'The operator' : 'The station'} says: ${text}`],
-    };
-    if (side === 'operator') this.notices.toStation(tx, booking, notice);
-    else this.notices.toBuyer(tx, booking, notice);
+    });
   }
 
   asked(
@@ -56,13 +54,11 @@ export class DisputeNotices {
     what: { dispute: DisputeRow; side: 'operator' | 'owner'; id: string; text: string },
   ): void {
     const { dispute, side, id, text } = what;
-    const notice = {
+    this.toSide(tx, booking, side, {
       kind: `dispute question:${id}`,
       subject: `Dispute ${dispute.number}: you are asked for more`,
       sentences: [`The marketplace asks: ${text}`],
-    };
-    if (side === 'operator') this.notices.toBuyer(tx, booking, notice);
-    else this.notices.toStation(tx, booking, notice);
+    });
   }
 
   decided(
@@ -117,6 +113,11 @@ export class DisputeNotices {
     };
     this.notices.toBuyer(tx, booking, notice);
     this.notices.toStation(tx, booking, notice);
+  }
+
+  private toSide(tx: Db, booking: BookingRow, side: 'operator' | 'owner', notice: Notice): void {
+    if (side === 'operator') this.notices.toBuyer(tx, booking, notice);
+    else this.notices.toStation(tx, booking, notice);
   }
 
   private name(tx: Db, booking: BookingRow): string {

@@ -83,16 +83,6 @@ export class OversightRepository {
       .all();
   }
 
-  managerEmails(tx: Db, organisationId: string): string[] {
-    return tx
-      .select({ email: people.email })
-      .from(memberships)
-      .innerJoin(people, eq(people.id, memberships.personId))
-      .where(and(eq(memberships.organisationId, organisationId), eq(memberships.role, 'manager')))
-      .all()
-      .map((row) => row.email);
-  }
-
   suspend(tx: Db, row: typeof suspensions.$inferInsert): void {
     tx.insert(suspensions).values(row).run();
   }

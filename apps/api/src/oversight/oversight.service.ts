@@ -2,6 +2,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
 import type { AccountSummary, AccountView, AuditCheck, Principal, QueryOf, ResponseOf, routes } from '@skyberth/shared';
+import { OrganisationsRepository } from '../accounts/organisations.repository.js';
 import { MailService } from '../mail/mail.service.js';
 import { AuditService, auditHash } from '../platform/audit.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
@@ -23,6 +24,7 @@ export class OversightService {
     @Inject(CLOCK) private readonly clock: ClockPort,
     @Inject(CONFIG) private readonly config: Config,
     private readonly repository: OversightRepository,
+    private readonly organisations: OrganisationsRepository,
     private readonly audit: AuditService,
     private readonly mail: MailService,
   ) {}
@@ -101,7 +103,7 @@ export class OversightService {
     const action = `organisation.${what}`;
     this.audit.record(tx, { caller, action, subject: `organisation:${row.id}`, data: { reason } });
     const mail = standingMail(row.name, what, reason, this.config.publicUrl);
-    for (const email of this.repository.managerEmails(tx, row.id)) {
+    for (const email of this.organisations.managerEmails(tx, row.id)) {
       this.mail.queue(tx, { to: email, ...mail, dedupeKey: `${action}:${row.id}:${this.clock.nowMs()}:${email}` });
     }
   }

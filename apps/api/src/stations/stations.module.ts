@@ -1,5 +1,6 @@
 /** Stations and antennas: what an owner describes once, and publishes. */
 import { Module } from '@nestjs/common';
+import { AccountsModule } from '../accounts/accounts.module.js';
 import { MailModule } from '../mail/mail.module.js';
 import { AntennaCatalogue } from './antenna-catalogue.js';
 import { AntennasController } from './antennas.controller.js';
@@ -12,7 +13,7 @@ import { StationsRepository } from './stations.repository.js';
 import { StationsService } from './stations.service.js';
 
 @Module({
-  imports: [MailModule],
+  imports: [AccountsModule, MailModule],
   controllers: [StationsController, AntennasController, MaskHistoryController],
   providers: [
     AntennaCatalogue,

@@ -1,15 +1,6 @@
 /** Stations in the database. */
 import { Inject, Injectable } from '@nestjs/common';
-import {
-  antennas,
-  bookings,
-  memberships,
-  organisations,
-  people,
-  priceCards,
-  type SkyberthDatabase,
-  stations,
-} from '@skyberth/drizzle';
+import { antennas, bookings, organisations, priceCards, type SkyberthDatabase, stations } from '@skyberth/drizzle';
 import { BOOKING_STATE_FACTS, BOOKING_STATES, type StationState } from '@skyberth/shared';
 import { and, asc, count, eq, gt, inArray, type SQL, sql } from 'drizzle-orm';
 import { DATABASE } from '../platform/database.module.js';
@@ -96,17 +87,6 @@ export class StationsRepository {
       .limit(1)
       .get();
     return card !== undefined;
-  }
-
-  /** Who must hear what happens to the station. */
-  managerEmails(db: Db, organisationId: string): string[] {
-    return db
-      .select({ email: people.email })
-      .from(memberships)
-      .innerJoin(people, eq(people.id, memberships.personId))
-      .where(and(eq(memberships.organisationId, organisationId), eq(memberships.role, 'manager')))
-      .all()
-      .map((row) => row.email);
   }
 }
 

@@ -2,6 +2,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { SkyberthDatabase } from '@skyberth/drizzle';
 import type { BodyOf, Principal, QueryOf, ResponseOf, routes, Station } from '@skyberth/shared';
+import { OrganisationsRepository } from '../accounts/organisations.repository.js';
 import { MailService } from '../mail/mail.service.js';
 import { AuditService } from '../platform/audit.service.js';
 import { CLOCK, type ClockPort } from '../platform/clock.js';
@@ -40,6 +41,7 @@ export class StationsService {
     @Inject(CONFIG) private readonly config: Config,
     private readonly stations: StationsRepository,
     private readonly antennas: AntennasRepository,
+    private readonly organisations: OrganisationsRepository,
     private readonly mail: MailService,
     private readonly audit: AuditService,
   ) {}
@@ -141,7 +143,7 @@ export class StationsService {
       this.stations.change(tx, id, { state: to, stateNote: note });
       this.note(tx, caller, `station.${decision}`, id, { note });
       const mail = decisionMail(station.name, decision, note, `${this.config.publicUrl}/stations/${id}`);
-      for (const email of this.stations.managerEmails(tx, station.organisationId)) {
+      for (const email of this.organisations.managerEmails(tx, station.organisationId)) {
         const dedupeKey = `station:${id}:${decision}:${this.clock.nowMs()}:${email}`;
         this.mail.queue(tx, { to: email, ...mail, dedupeKey });
       }
